@@ -1,0 +1,4 @@
+/** The machine, not the request, is at fault: a folder that cannot be written, a full disk. Exit code 3. */
+export class MachineError extends Error {
+  override name = "MachineError";
+}

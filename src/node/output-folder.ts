@@ -1,0 +1,50 @@
+/** Whole files or none: everything is written under temporary names first and only then given its own. */
+
+import { mkdir, rename, rm, writeFile } from "node:fs/promises";
+import { dirname, join } from "node:path";
+import { MachineError } from "./machine-error.js";
+
+export interface OutputFile {
+  /** Name within the folder. */
+  name: string;
+  content: Uint8Array | string;
+}
+
+/**
+ * Writes the files into the folder (made where it does not exist), in the order given, so that the last one, the record, never speaks of a
+ * file that is not there yet.
+ *
+ * @throws MachineError when the machine will not take them; the temporary files are then gone and the old ones as they were
+ */
+export async function writeFiles(folder: string, files: readonly OutputFile[]): Promise<void> {
+  const staged = files.map((file) => ({ ...file, path: join(folder, file.name), temporary: temporaryName(folder, file.name) }));
+  try {
+    await mkdir(folder, { recursive: true });
+    for (const file of staged) {
+      await mkdir(dirname(file.path), { recursive: true });
+      await writeFile(file.temporary, file.content, { flush: true });
+    }
+    for (const file of staged) await rename(file.temporary, file.path);
+  } catch (error) {
+    for (const file of staged) await rm(file.temporary, { force: true }).catch(() => undefined);
+    throw new MachineError(`${folder}: cannot be written (${reason(error)}); choose a folder that can, with -o`);
+  }
+}
+
+// the process number keeps two bakes into one folder out of each other's temporary files
+const temporaryName = (folder: string, name: string) => join(folder, `.${name}.${process.pid}.part`);
+
+function reason(error: unknown): string {
+  const code = (error as NodeJS.ErrnoException).code;
+  const words: Record<string, string> = {
+    EACCES: "no permission",
+    EPERM: "no permission",
+    EROFS: "a read-only file system",
+    ENOSPC: "the disk is full",
+    EDQUOT: "the disk quota is used up",
+    ENOTDIR: "a file stands where a folder should be",
+    EEXIST: "a file stands where a folder should be",
+    EISDIR: "a folder stands where a file should be",
+  };
+  return (code && words[code]) || (code ?? String(error));
+}

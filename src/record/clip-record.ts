@@ -1,0 +1,64 @@
+/** What takes.json holds: the memory of a bake, for people, version control and engines. */
+
+import type { Mat3 } from "../math/mat3.js";
+import type { Quat } from "../math/quat.js";
+import type { Vec3 } from "../math/vec3.js";
+
+/** A moment of the motion; rotation turns the model from as modelled, angular velocity is in the world frame, rad/s. */
+export interface MotionState {
+  centerOfMass: Vec3;
+  rotation: Quat;
+  velocity: Vec3;
+  angularVelocity: Vec3;
+}
+
+export interface PropRecord {
+  /** The model's path as the throw file writes it, or the shape as JSON. */
+  source: string;
+  sha256: string;
+  mass: number;
+  volume: number;
+  /** m, the model's scene frame. */
+  centerOfMass: Vec3;
+  /** kg m², about the centre of mass, axes of the model's scene frame. */
+  inertia: Mat3;
+  principal: { moments: Vec3; axes: Quat };
+  reach: number;
+  warnings: string[];
+}
+
+export interface ClipRecord {
+  name: string;
+  throw: string;
+  take: number;
+  prop: string;
+  file: string;
+  /** s */
+  duration: number;
+  /** About the angular momentum, 0 or more. */
+  turns: number;
+  /** Of the turning, about long, middle and short. */
+  share: Vec3;
+  apex: { time: number; rise: number };
+  release: MotionState;
+  arrival: MotionState;
+  /** From what the throw file asks at arrival, m and rad; null where it asks nothing. */
+  miss: { position: number | null; angle: number | null };
+  tolerance: number;
+  error: number;
+  keys: { translation: number; rotation: number };
+  bytes: number;
+  candidate: number;
+  draws: Record<string, unknown>;
+  flight: { start: number; time: number };
+  /** Null where no earlier take was made in the same run. */
+  nearest: { take: number; distance: number } | null;
+}
+
+export interface TakesRecord {
+  format: 1;
+  tossbake: string;
+  throwFile: { name: string; sha256: string };
+  props: Record<string, PropRecord>;
+  clips: ClipRecord[];
+}
