@@ -1,0 +1,52 @@
+import { type Accessor, type GLTF, Logger, WebIO } from "@gltf-transform/core";
+import { type GltfJson, type Model, ModelError } from "./model.js";
+
+/** Elements read at most: many accessors may stand on the same bytes, so the file's size alone is no bound. */
+const GREATEST_TOTAL = 20_000_000;
+
+/**
+ * Content of the accessors with the given indices, decoded by glTF-Transform (strides, sparse values, normalised
+ * integers). Only what describes them is handed over: its reader recurses over nodes and needs to know extensions.
+ */
+export async function decodeAccessors(
+  model: Model,
+  indices: Iterable<number>,
+): Promise<Map<number, Accessor>> {
+  const { accessors = [], bufferViews = [], buffers = [] } = model.json;
+  const wanted = [...new Set(indices)];
+  const total = wanted.reduce((sum, index) => sum + accessors[index].count, 0);
+  if (total > GREATEST_TOTAL)
+    throw new ModelError(
+      model.name,
+      `its meshes state ${total} vertices and indices`,
+      `at most ${GREATEST_TOTAL} are read`,
+    );
+  const uri = (i: number): string => `${i}.bin`;
+  const json: GltfJson = {
+    asset: { version: "2.0" },
+    accessors: wanted.map((index) => withOwnOffsets(accessors[index])),
+    bufferViews,
+    buffers: buffers.map(({ byteLength }, i) => ({ byteLength, uri: uri(i) })),
+  };
+  // glTF-Transform types its bytes more narrowly than the platform's readers do.
+  const resources = Object.fromEntries(
+    model.buffers.map((bytes, i) => [uri(i), bytes as Uint8Array<ArrayBuffer>]),
+  );
+  const io = new WebIO().setLogger(new Logger(Logger.Verbosity.SILENT));
+  const decoded = (await io.readJSON({ json, resources })).getRoot().listAccessors();
+  return new Map(wanted.map((index, i) => [index, decoded[i]]));
+}
+
+/** glTF-Transform gives a sparse part without an offset that of its accessor; the specification's default is 0. */
+function withOwnOffsets(accessor: GLTF.IAccessor): GLTF.IAccessor {
+  const { sparse } = accessor;
+  if (!sparse) return accessor;
+  return {
+    ...accessor,
+    sparse: {
+      ...sparse,
+      indices: { ...sparse.indices, byteOffset: sparse.indices.byteOffset ?? 0 },
+      values: { ...sparse.values, byteOffset: sparse.values.byteOffset ?? 0 },
+    },
+  };
+}

@@ -1,0 +1,75 @@
+import type { Accessor, GLTF } from "@gltf-transform/core";
+import { add as addMatrices, scale as scaleMatrix } from "../math/mat3.js";
+import { addScaled, scale, type Vec3 } from "../math/vec3.js";
+import type { GltfJson } from "./model.js";
+import { compose, type Frame, matrixFrame, sceneFrames, treeRoots } from "./scene.js";
+
+/** Indices of the accessors that place a skinned primitive; none where it is not skinned. */
+export function skinAccessors(json: GltfJson, node: number, primitive: GLTF.IMeshPrimitive): number[] {
+  const skin = skinOf(json, node);
+  if (!skin) return [];
+  return [
+    ...influences(primitive).flat(),
+    ...(skin.inverseBindMatrices === undefined ? [] : [skin.inverseBindMatrices]),
+  ];
+}
+
+/**
+ * What places the vertices of skinned primitives: for a node and a primitive, the frame that takes a vertex into the scene,
+ * the sum of its joints' frames, each after its inverse bind matrix, by weight (glTF 2.0, 3.7.3). Undefined where the
+ * node has no skin or the primitive no joints.
+ */
+export function skinFrames(
+  json: GltfJson,
+  accessors: Map<number, Accessor>,
+): (node: number, primitive: GLTF.IMeshPrimitive) => ((vertex: number) => Frame) | undefined {
+  if (!json.skins?.length) return () => undefined;
+  const frames = sceneFrames(json, treeRoots(json));
+  const jointsOf = new Map<GLTF.ISkin, Frame[]>();
+  return (node, primitive) => {
+    const skin = skinOf(json, node);
+    const sets = influences(primitive).map((pair) => pair.map((index) => accessors.get(index)!));
+    if (!skin || sets.length === 0) return undefined;
+    let joints = jointsOf.get(skin);
+    if (!joints) {
+      const inverse = accessors.get(skin.inverseBindMatrices ?? -1);
+      joints = skin.joints.map((joint, i) => {
+        const frame = frames.get(joint)!;
+        return inverse ? compose(frame, matrixFrame(inverse.getElement(i, []))) : frame;
+      });
+      jointsOf.set(skin, joints);
+    }
+    return (vertex) => blend(joints, sets, vertex);
+  };
+}
+
+function blend(joints: Frame[], sets: Accessor[][], vertex: number): Frame {
+  let linear = scaleMatrix(joints[0].linear, 0);
+  let origin: Vec3 = [0, 0, 0];
+  let total = 0;
+  for (const [numbers, weights] of sets) {
+    const weight = weights.getElement(vertex, []);
+    numbers.getElement(vertex, []).forEach((number, i) => {
+      const joint = joints[number];
+      if (!joint || !weight[i]) return;
+      total += weight[i];
+      linear = addMatrices(linear, scaleMatrix(joint.linear, weight[i]));
+      origin = addScaled(origin, joint.origin, weight[i]);
+    });
+  }
+  // Weights rounded to integers do not quite add up to 1.
+  return { linear: scaleMatrix(linear, 1 / total), origin: scale(origin, 1 / total) };
+}
+
+const skinOf = (json: GltfJson, node: number): GLTF.ISkin | undefined => {
+  const { skin } = json.nodes![node];
+  return skin === undefined ? undefined : json.skins![skin];
+};
+
+/** Pairs of accessor indices: joint numbers and weights. */
+function influences({ attributes }: GLTF.IMeshPrimitive): [number, number][] {
+  const pairs: [number, number][] = [];
+  for (let i = 0; attributes[`JOINTS_${i}`] !== undefined && attributes[`WEIGHTS_${i}`] !== undefined; i++)
+    pairs.push([attributes[`JOINTS_${i}`], attributes[`WEIGHTS_${i}`]]);
+  return pairs;
+}

@@ -1,0 +1,173 @@
+import type { Accessor, GLTF } from "@gltf-transform/core";
+import { determinant } from "../math/mat3.js";
+import type { Vec3 } from "../math/vec3.js";
+import { decodeAccessors } from "./accessors.js";
+import { type GltfJson, type Model, ModelError } from "./model.js";
+import { applyFrame, type Frame, sceneFrames } from "./scene.js";
+import { skinAccessors, skinFrames } from "./skin.js";
+import { hasTriangles, triangleList } from "./triangles.js";
+
+export { nodeFrame } from "./scene.js";
+
+/** One primitive of a mesh where one node shows it. */
+export interface Surface {
+  /** Name of the node; "" where it has none. */
+  nodeName: string;
+  /** Name of the material; "" where it has none. */
+  materialName: string;
+  /** Three numbers a vertex, metres, scene frame; only vertices that a triangle uses. */
+  positions: Float64Array;
+  /** Three vertex numbers a triangle, counter-clockwise seen from outside, mirrored nodes included. */
+  triangles: Uint32Array;
+}
+
+/** Corners of triangles over all instances: a mesh may be shown by any number of nodes. */
+const GREATEST_CORNERS = 15_000_000;
+
+interface Instance {
+  node: number;
+  primitive: GLTF.IMeshPrimitive;
+  where: string;
+  /** Of the mesh's morph targets, in the rest pose. */
+  weights: number[];
+}
+
+/**
+ * All triangles of a model's default scene in its rest pose. A skinned mesh stands where its joints put it, whatever its
+ * own node says (glTF 2.0, 3.7.3.3). Points and lines are passed over with a warning. Throws ModelError for indices
+ * beyond the vertices, positions that are no finite numbers, and more triangles than are read.
+ */
+export async function readSurfaces(model: Model): Promise<{ surfaces: Surface[]; warnings: string[] }> {
+  const { json } = model;
+  const frames = sceneFrames(json);
+  const warnings: string[] = [];
+  const instances = listInstances(json, [...frames.keys()], warnings);
+  checkSize(model, instances);
+  const accessors = await decodeAccessors(
+    model,
+    instances.flatMap(({ node, primitive }) => [
+      primitive.attributes.POSITION,
+      ...(primitive.indices === undefined ? [] : [primitive.indices]),
+      ...(primitive.targets ?? []).flatMap(({ POSITION }) => (POSITION === undefined ? [] : [POSITION])),
+      ...skinAccessors(json, node, primitive),
+    ]),
+  );
+  const skinned = skinFrames(json, accessors);
+  const surfaces = instances.flatMap((instance) => {
+    const { node, primitive } = instance;
+    const frame = frames.get(node)!;
+    const surface = readSurface(model, instance, accessors, skinned(node, primitive) ?? (() => frame));
+    return surface.triangles.length > 0 ? [surface] : [];
+  });
+  return { surfaces, warnings };
+}
+
+function listInstances(json: GltfJson, nodes: number[], warnings: string[]): Instance[] {
+  const instances: Instance[] = [];
+  for (const node of nodes) {
+    const { mesh: index, name, weights, extensions } = json.nodes![node];
+    if (index === undefined) continue;
+    const mesh = json.meshes![index];
+    if (extensions?.EXT_mesh_gpu_instancing)
+      warnings.push(`the node "${name ?? node}" has instances (EXT_mesh_gpu_instancing): read as one`);
+    mesh.primitives.forEach((primitive, p) => {
+      const where = `meshes[${index}].primitives[${p}]`;
+      if (!hasTriangles(primitive.mode ?? 4)) warnings.push(`${where} is points or lines: passed over`);
+      else if (primitive.attributes.POSITION === undefined)
+        warnings.push(`${where} has no positions: passed over`);
+      else instances.push({ node, primitive, where, weights: weights ?? mesh.weights ?? [] });
+    });
+  }
+  return instances;
+}
+
+function checkSize(model: Model, instances: Instance[]): void {
+  const { accessors } = model.json;
+  let corners = 0;
+  for (const { primitive } of instances) {
+    const count = accessors![primitive.indices ?? primitive.attributes.POSITION].count;
+    corners += primitive.mode === undefined || primitive.mode === 4 ? count : 3 * count;
+  }
+  if (corners > GREATEST_CORNERS)
+    throw new ModelError(
+      model.name,
+      `its scene shows about ${Math.round(corners / 3)} triangles`,
+      `at most ${GREATEST_CORNERS / 3} are read: use a simpler model`,
+    );
+}
+
+function readSurface(
+  model: Model,
+  { node, primitive, where, weights }: Instance,
+  accessors: Map<number, Accessor>,
+  frameOf: (vertex: number) => Frame,
+): Surface {
+  const { json } = model;
+  const positions = accessors.get(primitive.attributes.POSITION)!;
+  const indices = primitive.indices === undefined ? undefined : accessors.get(primitive.indices)!.getArray()!;
+  const list = triangleList(primitive.mode ?? 4, indices, positions.getCount());
+  const { triangles, vertices } = compact(list, positions.getCount(), (found) => {
+    throw new ModelError(
+      model.name,
+      `${where} uses vertex ${found}`,
+      `it has ${positions.getCount()} vertices`,
+    );
+  });
+  const targets = (primitive.targets ?? []).flatMap(({ POSITION }, t) =>
+    weights[t] && POSITION !== undefined ? [{ weight: weights[t], moves: accessors.get(POSITION)! }] : [],
+  );
+  const scenePositions = new Float64Array(vertices.length * 3);
+  const element: number[] = [];
+  vertices.forEach((vertex, i) => {
+    positions.getElement(vertex, element);
+    let point: Vec3 = [element[0], element[1], element[2]];
+    for (const { weight, moves } of targets) {
+      moves.getElement(vertex, element);
+      point = [
+        point[0] + weight * element[0],
+        point[1] + weight * element[1],
+        point[2] + weight * element[2],
+      ];
+    }
+    const placed = applyFrame(frameOf(vertex), point);
+    if (!placed.every(Number.isFinite))
+      throw new ModelError(
+        model.name,
+        `the position of vertex ${vertex} of ${where} is ${placed}`,
+        "it must be finite",
+      );
+    scenePositions.set(placed, 3 * i);
+  });
+  if (vertices.length > 0 && determinant(frameOf(vertices[0]).linear) < 0) turnRound(triangles);
+  return {
+    nodeName: json.nodes![node].name ?? "",
+    materialName: primitive.material === undefined ? "" : (json.materials![primitive.material].name ?? ""),
+    positions: scenePositions,
+    triangles,
+  };
+}
+
+/** Renumbers triangles so that only vertices they use are left, in the order of their first use. */
+function compact(
+  list: Uint32Array,
+  vertexCount: number,
+  refuse: (vertex: number) => never,
+): { triangles: Uint32Array; vertices: Uint32Array } {
+  const numbers = new Map<number, number>();
+  const triangles = list.map((vertex) => {
+    const known = numbers.get(vertex);
+    if (known !== undefined) return known;
+    if (vertex >= vertexCount) refuse(vertex);
+    numbers.set(vertex, numbers.size);
+    return numbers.size - 1;
+  });
+  return { triangles, vertices: Uint32Array.from(numbers.keys()) };
+}
+
+function turnRound(triangles: Uint32Array): void {
+  for (let i = 0; i < triangles.length; i += 3) {
+    const second = triangles[i + 1];
+    triangles[i + 1] = triangles[i + 2];
+    triangles[i + 2] = second;
+  }
+}

@@ -1,0 +1,39 @@
+/** Primitive modes that have triangles (glTF 2.0, 3.7.2.1). */
+const TRIANGLES = 4;
+const STRIP = 5;
+const FAN = 6;
+
+/** Whether a primitive of that mode has triangles: points and lines have none. */
+export const hasTriangles = (mode: number): boolean => mode >= TRIANGLES;
+
+/**
+ * Vertex numbers, three a triangle, of a primitive: a list, strip or fan, through `indices` or straight through
+ * `vertexCount` vertices. Triangles that name a vertex twice (as strips do to hang together) are left out, as is an
+ * unfinished last one.
+ */
+export function triangleList(
+  mode: number,
+  indices: ArrayLike<number> | undefined,
+  vertexCount: number,
+): Uint32Array {
+  const length = indices ? indices.length : vertexCount;
+  const count = mode === TRIANGLES ? Math.floor(length / 3) : Math.max(0, length - 2);
+  const list = new Uint32Array(count * 3);
+  const vertex = (i: number): number => (indices ? indices[i] : i);
+  let used = 0;
+  for (let i = 0; i < count; i++) {
+    // Orders of corners as the specification states them.
+    const odd = i & 1;
+    const [a, b, c] =
+      mode === STRIP
+        ? [vertex(i), vertex(i + 1 + odd), vertex(i + 2 - odd)]
+        : mode === FAN
+          ? [vertex(i + 1), vertex(i + 2), vertex(0)]
+          : [vertex(3 * i), vertex(3 * i + 1), vertex(3 * i + 2)];
+    if (a === b || b === c || c === a) continue;
+    list[used++] = a;
+    list[used++] = b;
+    list[used++] = c;
+  }
+  return list.slice(0, used);
+}
