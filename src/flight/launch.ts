@@ -19,6 +19,9 @@ export interface Launch {
   duration: number;
 }
 
+/** Relative rounding allowed to the moments of a flat body, whose greatest is the sum of the others. */
+const TRIANGLE_SLACK = 1e-6;
+
 /** Throws a RangeError naming the member of `launch` that no body and no flight can have. */
 export function checkLaunch(launch: Launch): void {
   for (const key of ["centerOfMass", "velocity", "gravity", "orientation", "spin", "moments"] as const)
@@ -28,6 +31,11 @@ export function checkLaunch(launch: Launch): void {
     throw new RangeError(`launch.duration is ${launch.duration}: it must be a time of 0 s or more`);
   if (!launch.moments.every((moment) => moment > 0))
     throw new RangeError(`launch.moments is [${launch.moments.join(", ")}]: each must be greater than 0`);
+  const [least, middle, greatest] = [...launch.moments].sort((a, b) => a - b);
+  if (greatest > (least + middle) * (1 + TRIANGLE_SLACK))
+    throw new RangeError(
+      `launch.moments is [${launch.moments.join(", ")}]: no body's greatest moment exceeds the sum of the others`,
+    );
   if (launch.orientation.every((component) => component === 0))
     throw new RangeError(
       "launch.orientation is [0, 0, 0, 0]: it must be a quaternion of a length other than 0",

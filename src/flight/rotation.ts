@@ -1,7 +1,8 @@
 import { pow } from "../math/elementary.js";
 import { normalize, type Quat, rotate } from "../math/quat.js";
-import { length, scale, type Vec3 } from "../math/vec3.js";
+import { length, normalize as normalizeVector, scale, type Vec3 } from "../math/vec3.js";
 import { momentRatios } from "./rotation-bounds.js";
+import { type LongSpin, spinInvariants } from "./spin-invariants.js";
 
 /** The torque-free turning of a rigid body as a continuous function of time. */
 export interface Rotation {
@@ -29,9 +30,9 @@ const TAIL = 1.1e-16;
  *
  * Both equations are quadratic, so every step's Taylor coefficients come by Cauchy products, and the step's length from
  * the last of them (Jorba & Zou, Experimental Mathematics 14, 99, 2005); the polynomial is the dense output. At the end of
- * a step the angular momentum is put back to what the launch gave: the spin is rescaled to |L|, which leaves the ratio
- * of energy to L² alone, and the orientation is turned by the smallest rotation that lays the body's momentum along L.
- * The spin evolves without the orientation, so that one exactly about a principal axis stays exactly there.
+ * a step the motion is put back to what the launch fixed: the spin onto its polhode, that is to |L| and the energy, and
+ * the orientation by the smallest rotation that lays the body's momentum along L. The spin evolves without the
+ * orientation, so that one exactly about a principal axis stays exactly there.
  */
 export function rotation(
   orientation: Quat,
@@ -46,17 +47,19 @@ export function rotation(
   const steps = new Steps();
 
   const q = Float64Array.from(orientation);
-  const w = Float64Array.from(spin);
+  const state = { high: Float64Array.from(spin), low: new Float64Array(3) };
+  const holdInvariants = spinInvariants(spin, moments);
   for (let start = 0; ; ) {
     const step = steps.add(start);
-    expand(steps, step, q, w, ratios);
+    expand(steps, step, q, state.high, ratios);
     const longest = stepLength(steps, step, greatestRate);
     const end = Math.min(start + longest, duration);
     steps.close(step, end - start);
     if (end === duration) break;
     steps.turnInto(step, 1, q, 0);
-    steps.spinInto(step, 1, w, 0);
-    holdMomentum(q, w, moments, angularMomentum);
+    steps.endSpin(step, state);
+    holdInvariants(state);
+    alignMomentum(q, state.high, moments, angularMomentum);
     start = end;
   }
 
@@ -134,22 +137,19 @@ function stepLength(steps: Steps, step: number, rate: number): number {
     for (let a = 0; a < 3; a++) {
       const last = Math.abs(steps.spins[spin + 3 * n + a]);
       const size = Math.max(Math.abs(steps.spins[spin + a]), Math.abs(steps.spins[spin + 3 + a]) / rate);
-      if (last > 0) tail = Math.max(tail, last / size);
+      if (last > 0 && size > 0) tail = Math.max(tail, last / size);
     }
     if (tail > 0) longest = Math.min(longest, pow(TAIL / tail, 1 / n));
   }
   return longest;
 }
 
-/** Puts |I ω| and the direction of R I ω back to those of the angular momentum; the rotation needed is of rounding size. */
-function holdMomentum(q: Float64Array, w: Float64Array, moments: Vec3, momentum: Vec3): void {
+/** Turns q so that the body's momentum R I ω points along the one in the world; the angle is of rounding size. */
+function alignMomentum(q: Float64Array, w: Float64Array, moments: Vec3, momentum: Vec3): void {
   const size = length(momentum);
   if (size === 0) return;
-  const body: Vec3 = [moments[0] * w[0], moments[1] * w[1], moments[2] * w[2]];
-  const factor = size / length(body);
-  for (let a = 0; a < 3; a++) w[a] *= factor;
-
-  const [x, y, z] = scale(rotate([q[0], q[1], q[2], q[3]], body), factor / size);
+  const body = rotate([q[0], q[1], q[2], q[3]], [moments[0] * w[0], moments[1] * w[1], moments[2] * w[2]]);
+  const [x, y, z] = normalizeVector(body);
   const target = scale(momentum, 1 / size);
   // half the vector of the rotation from the one onto the other
   const hx = 0.5 * (y * target[2] - z * target[1]);
@@ -231,6 +231,18 @@ class Steps {
     out[offset + 1] = y / size;
     out[offset + 2] = z / size;
     out[offset + 3] = w / size;
+  }
+
+  /** Writes the spin at a step's end with the digits that rounding to a double would lose (Knuth's exact sum). */
+  endSpin(step: number, { high, low }: LongSpin): void {
+    for (let a = 0; a < 3; a++) {
+      let gain = low[a];
+      for (let n = DEGREE; n > 0; n--) gain += this.spins[step * SPIN + 3 * n + a];
+      const sum = high[a] + gain;
+      const part = sum - high[a];
+      low[a] = high[a] - (sum - part) + (gain - part);
+      high[a] = sum;
+    }
   }
 
   spinInto(step: number, u: number, out: Float64Array, offset: number): void {
