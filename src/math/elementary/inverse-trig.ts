@@ -5,9 +5,9 @@ export function asin(x: number): number {
   const a = Math.abs(x);
   if (!(a <= 1)) return Number.NaN;
   if (a < 0.5) return a < TINY ? x : x + x * arcsineSeries(x * x);
-  const [s, c, r] = rootOfHalfComplement(a);
   // asin(a) = π/2 − 2 asin(√((1 − a)/2))
-  const angle = HALF_PI - (2 * (s + (c + s * r)) - HALF_PI_LOW);
+  const [s, rest] = halfComplement(a);
+  const angle = difference(HALF_PI, HALF_PI_LOW, 2 * s, 2 * rest);
   return x < 0 ? -angle : angle;
 }
 
@@ -15,10 +15,9 @@ export function asin(x: number): number {
 export function acos(x: number): number {
   const a = Math.abs(x);
   if (!(a <= 1)) return Number.NaN;
-  if (a < 0.5) return HALF_PI - (x - (HALF_PI_LOW - x * arcsineSeries(x * x)));
-  const [s, c, r] = rootOfHalfComplement(a);
-  const half = s + (c + s * r);
-  return x > 0 ? 2 * half : Math.PI - 2 * (half - HALF_PI_LOW);
+  if (a < 0.5) return difference(HALF_PI, HALF_PI_LOW, x, x * arcsineSeries(x * x));
+  const [s, rest] = halfComplement(a);
+  return x > 0 ? 2 * (s + rest) : difference(Math.PI, PI_LOW, 2 * s, 2 * rest);
 }
 
 /** Inverse tangent in radians, −π/2 to π/2; error below 1 ulp. */
@@ -34,7 +33,8 @@ export function atan2(y: number, x: number): number {
 
 const TINY = 7.450580596923828e-9; // 2^-27
 const HALF_PI = Math.PI / 2;
-const HALF_PI_LOW = 6.123233995736766e-17;
+const HALF_PI_LOW = 6.123233995736766e-17; // what the double misses
+const PI_LOW = 2 * HALF_PI_LOW;
 
 function angleInUpperHalf(y: number, x: number): number {
   const left = x < 0 || Object.is(x, -0);
@@ -62,7 +62,7 @@ function angleInUpperHalf(y: number, x: number): number {
  */
 function arctangent(x: number, y: number, offset: number, sign: number): number {
   if (Number.isNaN(x)) return x;
-  const low = offset === 0 ? 0 : 2 * HALF_PI_LOW;
+  const low = offset === 0 ? 0 : PI_LOW;
   let base = 0;
   let baseLow = 0;
   let t = x;
@@ -129,11 +129,18 @@ function arcsineSeries(z: number): number {
   return p / q;
 }
 
-/** s + c = √((1 − a)/2) to twice a double's precision, and the arcsine series there. */
-function rootOfHalfComplement(a: number): [number, number, number] {
+/** asin(√((1 − a)/2)) for a ≥ 1/2, as a double and what is missing from it. */
+function halfComplement(a: number): [number, number] {
   const z = (1 - a) * 0.5;
+  if (z === 0) return [0, 0];
   const s = Math.sqrt(z);
   const square = s * s;
-  const c = s === 0 ? 0 : (z - square - productError(s, s, square)) / (2 * s);
-  return [s, c, arcsineSeries(z)];
+  const rootError = (z - square - productError(s, s, square)) / (2 * s);
+  return [s, rootError + s * arcsineSeries(z)];
+}
+
+/** (a + aLow) − (b + bLow) */
+function difference(a: number, aLow: number, b: number, bLow: number): number {
+  const d = a - b;
+  return d + (sumError(a, -b, d) + aLow - bLow);
 }
