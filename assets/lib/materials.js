@@ -1,8 +1,9 @@
 /** How each material looks: linear base colour, metallic and roughness factors. Values from memory, by eye. */
 export const MATERIALS = {
-  ash: { baseColor: [0.62, 0.4, 0.2, 1], metallic: 0, roughness: 0.6 },
+  ash: { baseColor: [0.64, 0.43, 0.23, 1], metallic: 0, roughness: 0.6 },
+  beeswax: { baseColor: [0.85, 0.68, 0.36, 1], metallic: 0, roughness: 0.5 },
   brass: { baseColor: [0.79, 0.56, 0.2, 1], metallic: 1, roughness: 0.32 },
-  deal: { baseColor: [0.52, 0.34, 0.17, 1], metallic: 0, roughness: 0.8 },
+  deal: { baseColor: [0.34, 0.2, 0.09, 1], metallic: 0, roughness: 0.8 },
   enamel: { baseColor: [0.02, 0.13, 0.3, 1], metallic: 0, roughness: 0.18 },
   glass: { baseColor: [1, 0.78, 0.42, 0.45], metallic: 0, roughness: 0.06, alphaMode: "BLEND" },
   hemp: { baseColor: [0.5, 0.38, 0.2, 1], metallic: 0, roughness: 0.95 },

@@ -1,6 +1,7 @@
 /**
- * Normals from the shape itself: faces that meet at less than the crease angle share a smooth normal, others
- * keep a sharp edge. A face weighs by its area, so that a narrow bevel reads as a rounded edge of a flat face.
+ * Normals from the shape itself: an edge whose faces meet at less than the crease angle is smooth, others are
+ * sharp. Round a point, the faces between sharp edges share one normal; a face weighs by its area, so that a
+ * narrow bevel reads as the rounded edge of a flat face.
  */
 import { Vector3 } from "three";
 
@@ -15,32 +16,31 @@ const NORMAL_STEPS = 1e5;
 export function shade({ points, triangles }, creaseDegrees) {
   // Whole micrometres: the last digit of a sine is not the same in every engine, the file must be.
   const rounded = points.map((point) => roundTo(point, MICROMETRES));
-  const faces = triangles.map((corners) => faceNormal(corners.map((i) => rounded[i])));
-  const around = facesByPoint(triangles, points.length);
+  const faces = triangles.map((corners) => measure(corners.map((i) => rounded[i])));
+  const facesAt = rounded.map(() => []);
+  triangles.forEach((corners, face) => {
+    for (const point of corners) facesAt[point].push(face);
+  });
   const leastCosine = Math.cos((creaseDegrees * Math.PI) / 180);
+  const isSmooth = (a, b) => faces[a].unit.dot(faces[b].unit) >= leastCosine;
 
   const positions = [];
   const normals = [];
-  const indices = [];
-  const known = new Map();
-  triangles.forEach((corners, face) => {
-    for (const point of corners) {
+  const indexOf = new Map();
+  facesAt.forEach((around, point) => {
+    for (const fan of fans(around, point, triangles, isSmooth)) {
       const sum = new Vector3();
-      for (const other of around[point]) {
-        if (faces[other].unit.dot(faces[face].unit) >= leastCosine) {
-          sum.addScaledVector(faces[other].unit, faces[other].area);
-        }
+      for (const face of fan) {
+        sum.addScaledVector(faces[face].unit, faces[face].area);
+        indexOf.set(`${face} ${point}`, positions.length / 3);
       }
-      const normal = roundTo(sum.normalize().toArray(), NORMAL_STEPS);
-      const key = `${rounded[point]},${normal}`;
-      if (!known.has(key)) {
-        known.set(key, known.size);
-        positions.push(...rounded[point]);
-        normals.push(...normal);
-      }
-      indices.push(known.get(key));
+      positions.push(...rounded[point]);
+      normals.push(...roundTo(sum.normalize().toArray(), NORMAL_STEPS));
     }
   });
+  const indices = triangles.flatMap((corners, face) =>
+    corners.map((point) => indexOf.get(`${face} ${point}`)),
+  );
   return {
     positions: new Float32Array(positions),
     normals: new Float32Array(normals),
@@ -48,15 +48,28 @@ export function shade({ points, triangles }, creaseDegrees) {
   };
 }
 
-function facesByPoint(triangles, count) {
-  const around = Array.from({ length: count }, () => []);
-  triangles.forEach((corners, face) => {
-    for (const point of corners) around[point].push(face);
-  });
-  return around;
+/** The faces round a point in groups that smooth edges hold together. */
+function fans(around, point, triangles, isSmooth) {
+  const left = new Set(around);
+  const groups = [];
+  for (const first of around) {
+    if (!left.delete(first)) continue;
+    const group = [first];
+    for (const face of group) {
+      for (const other of left) {
+        const shareEdge = triangles[face].some((p) => p !== point && triangles[other].includes(p));
+        if (shareEdge && isSmooth(face, other)) {
+          left.delete(other);
+          group.push(other);
+        }
+      }
+    }
+    groups.push(group);
+  }
+  return groups;
 }
 
-function faceNormal(corners) {
+function measure(corners) {
   const [a, b, c] = corners.map((p) => new Vector3(...p));
   const unit = b.sub(a).cross(c.sub(a));
   const area = unit.length() / 2;

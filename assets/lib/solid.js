@@ -64,7 +64,7 @@ function addCap(solid, start, ring, isLast, caps) {
  * A profile turned about +Y: pairs [radius, height]. A radius of 0 at an end is a pole; `closed` turns a loop
  * (a hoop, a cup with a wall).
  */
-export function lathe(profile, { segments = 24, closed = false } = {}) {
+export function lathe(profile, { segments = 20, closed = false } = {}) {
   const rings = profile.map(([radius, y]) =>
     radius === 0
       ? [[0, y, 0]]
@@ -95,6 +95,16 @@ export function sweep(curve, sectionAt, { steps = 32, closed = false } = {}) {
     );
   }
   return skin(rings, { closed });
+}
+
+/** A superellipse across +Y: half width along x, half thickness along z; squareness 2 is an ellipse. */
+export function oval([y, halfWidth, halfThickness = halfWidth, squareness = 2], count = 20) {
+  const bow = (x) => Math.sign(x) * Math.abs(x) ** (2 / squareness);
+  return around(count, (angle) => [
+    halfWidth * bow(Math.cos(angle)),
+    y,
+    halfThickness * bow(Math.sin(angle)),
+  ]);
 }
 
 /** The outline of a round wire. */

@@ -1,4 +1,4 @@
-import { around, skin } from "../lib/solid.js";
+import { oval, skin } from "../lib/solid.js";
 
 /**
  * A skiff's oar, 2.1 m: ash shaft and blade with a painted tip, and a leather collar where it lies in the
@@ -50,14 +50,14 @@ export function oar() {
   return {
     name: "oar",
     parts: [
-      { name: "oar_loom", material: "ash", solids: [skin(handleToBlade.map(section))] },
-      { name: "oar_tip", material: "painted_ash", solids: [skin(tip.map(section))] },
+      { name: "oar_loom", material: "ash", solids: [skin(handleToBlade.map((s) => oval(s)))] },
+      { name: "oar_tip", material: "painted_ash", solids: [skin(tip.map((s) => oval(s)))] },
       {
         name: "oar_collar",
         material: "leather",
         solids: [
           skin(
-            collar.map(([y, r]) => section([y, r, r, 2])),
+            collar.map(([y, r]) => oval([y, r])),
             { closed: true },
           ),
         ],
@@ -69,10 +69,4 @@ export function oar() {
       tip: { at: [0, 2.034, 0] },
     },
   };
-}
-
-/** A superellipse across y. */
-function section([y, halfWidth, halfThickness, squareness]) {
-  const bow = (x) => Math.sign(x) * Math.abs(x) ** (2 / squareness);
-  return around(20, (angle) => [halfWidth * bow(Math.cos(angle)), y, halfThickness * bow(Math.sin(angle))]);
 }

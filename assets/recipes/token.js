@@ -2,33 +2,45 @@ import { around, extrude, lathe, move } from "../lib/solid.js";
 
 const FLOOR = 0.0011; // half thickness inside the rim
 const RELIEF = 0.0006;
-/** Counter-clockwise: foot, belly, cap and ring of a lantern. */
+/** The pieces of a lantern, counter-clockwise: foot, two bars, flame, roof, ring. */
 const LANTERN = [
-  [-0.0052, -0.0112],
-  [0.0052, -0.0112],
-  [0.0052, -0.0088],
-  [0.0038, -0.0076],
-  [0.0056, -0.0042],
-  [0.0058, -0.001],
-  [0.0044, 0.003],
-  [0.0054, 0.0042],
-  [0.002, 0.0082],
-  [0.0028, 0.0102],
-  [0.0016, 0.0128],
-  [-0.0016, 0.0128],
-  [-0.0028, 0.0102],
-  [-0.002, 0.0082],
-  [-0.0054, 0.0042],
-  [-0.0044, 0.003],
-  [-0.0058, -0.001],
-  [-0.0056, -0.0042],
-  [-0.0038, -0.0076],
-  [-0.0052, -0.0088],
+  [
+    [-0.0068, -0.0115],
+    [0.0068, -0.0115],
+    [0.0056, -0.0088],
+    [-0.0056, -0.0088],
+  ],
+  ...[-0.0048, 0.0048].map((u) => [
+    [u - 0.0006, -0.0085],
+    [u + 0.0006, -0.0085],
+    [u + 0.0006, 0.0022],
+    [u - 0.0006, 0.0022],
+  ]),
+  [
+    [-0.0009, -0.0072],
+    [0.0009, -0.0072],
+    [0.0021, -0.0056],
+    [0.0022, -0.004],
+    [0.0012, -0.0018],
+    [0.0002, 0.0004],
+    [-0.001, -0.0016],
+    [-0.0022, -0.0038],
+    [-0.0021, -0.0056],
+  ],
+  [
+    [-0.0066, 0.0025],
+    [0.0066, 0.0025],
+    [0.0058, 0.0046],
+    [0.0018, 0.0076],
+    [-0.0018, 0.0076],
+    [-0.0058, 0.0046],
+  ],
+  bow([0, 0.0098], 0.0032, 0.0021),
 ];
 
 /**
- * A brass token, 44 mm across. Heads (+y) is an enamelled field with a brass lantern and three sparks, tails
- * three waves and a moon; both reliefs sit off the axis, so its balance does too. The origin is the middle of its rim's edge.
+ * A brass token, 44 mm across. Heads (+y) is an enamelled field with a brass lantern and a spark, tails three
+ * waves and a moon; both reliefs sit off the axis, so its balance does too. The origin is the middle of its rim's edge.
  */
 export function token() {
   const rim = 0.022;
@@ -45,10 +57,10 @@ export function token() {
       [0.0178, FLOOR],
       [0, FLOOR],
     ],
-    { segments: 40 },
+    { segments: 36 },
   );
   const field = 0.0003; // thickness of the enamel
-  const tails = [...[-0.0075, -0.002, 0.0035].map((v) => wave(v)), crescent([0.006, 0.0108], 0.0034)].map(
+  const tails = [...[-0.0075, -0.002, 0.0035].map((v) => wave(v)), crescent([0.0075, 0.0098], 0.0042)].map(
     (outline) => move(standing(outline, FLOOR, RELIEF), { turn: [180, 0, 0] }),
   );
   const toRim = (solid) => move(solid, { at: [0, 0, -rim] });
@@ -60,12 +72,14 @@ export function token() {
         material: "brass",
         solids: [
           disc,
-          ...[
-            LANTERN.map(([u, v]) => [u - 0.0035, v - 0.001]),
-            dot([0.0068, 0.0035], 0.0016, 10),
-            dot([0.0105, -0.001], 0.0012, 10),
-            dot([0.006, -0.0035], 0.0009, 8),
-          ].map((outline) => standing(outline, FLOOR + field, RELIEF - field)),
+          ...LANTERN.map((outline) =>
+            standing(
+              outline.map(([u, v]) => [u - 0.003, v]),
+              FLOOR + field,
+              RELIEF - field,
+            ),
+          ),
+          standing(dot([0.009, 0.003], 0.0018, 12), FLOOR + field, RELIEF - field),
           ...tails,
         ].map(toRim),
         crease: 30,
@@ -73,7 +87,7 @@ export function token() {
       {
         name: "token_field",
         material: "enamel",
-        solids: [toRim(standing(dot([0, 0], 0.0176, 40), FLOOR, field))],
+        solids: [toRim(standing(dot([0, 0], 0.0176, 36), FLOOR, field))],
         crease: 30,
       },
     ],
@@ -95,6 +109,17 @@ function standing(outline, y, height) {
 
 function dot([u, v], radius, count = 16) {
   return around(count, (angle) => [u + radius * Math.cos(angle), v + radius * Math.sin(angle)]);
+}
+
+/** A ring that is open below, counter-clockwise. */
+function bow([u, v], outer, inner) {
+  const steps = 12;
+  const arc = (radius) =>
+    Array.from({ length: steps + 1 }, (_, i) => {
+      const angle = Math.PI * (-0.4 + (1.8 * i) / steps);
+      return [u + radius * Math.cos(angle), v + radius * Math.sin(angle)];
+    });
+  return [...arc(outer), ...arc(inner).reverse()];
 }
 
 /** Horns towards -u. */
@@ -121,11 +146,11 @@ function crescent([u, v], radius) {
 
 /** A band with two crests, across the face at v. */
 function wave(v) {
-  const steps = 16;
+  const steps = 12;
   const line = (offset) =>
     Array.from({ length: steps + 1 }, (_, i) => {
       const u = -0.0125 + (0.025 * i) / steps;
-      return [u, v + offset + 0.0015 * Math.sin((4 * Math.PI * i) / steps + 0.2)];
+      return [u, v + offset + 0.0014 * Math.sin((4 * Math.PI * i) / steps + 0.2)];
     });
   return [...line(-0.0011), ...line(0.0011).reverse()];
 }
