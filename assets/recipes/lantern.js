@@ -15,7 +15,7 @@ export function lantern() {
     name: "lantern",
     parts: [
       { name: "lantern_tin", material: "tin", solids: [foot(), roof(), ...ears()].map(hung), crease: 48 },
-      { name: "lantern_wires", material: "steel", solids: [...guards(), handle()].map(hung), crease: 60 },
+      { name: "lantern_wires", material: "steel", solids: [...guards(), handle()].map(hung), crease: 75 },
       { name: "lantern_grip", material: "ash", solids: [hung(woodenGrip())] },
       { name: "lantern_candle", material: "beeswax", solids: [hung(candle())] },
       { name: "lantern_globe", material: "glass", solids: [hung(globe())] },
@@ -34,20 +34,15 @@ function foot() {
     [0.052, 0],
     [0.055, 0.003],
     [0.055, 0.024],
-    [0.051, 0.03],
+    [0.051, 0.0295],
     [0.036, 0.034],
     [0.032, 0.04],
     [0, 0.04],
   ];
-  // Hidden, so drawn with fewer steps.
-  const inner = [
-    [0, SHEET],
-    [0.0515, SHEET],
-    [0.055 - SHEET, 0.0236],
-    [0.032 - SHEET, 0.0345],
-    [0.032 - SHEET, 0.04 - SHEET],
-    [0, 0.04 - SHEET],
-  ];
+  const inner = outer.map(([r, y], i) => [
+    Math.max(0, r - (r && SHEET)),
+    y + (i < 2 ? SHEET : i > 5 ? -SHEET : 0),
+  ]);
   return hollow(lathe(outer, ROUND), lathe(inner, ROUND));
 }
 
@@ -55,7 +50,6 @@ function globe() {
   const outer = [
     [0, 0.04],
     [0.026, 0.04],
-    [0.0275, 0.042],
     [0.035, 0.052],
     [0.0425, 0.068],
     [0.0448, 0.085],
@@ -68,9 +62,8 @@ function globe() {
   const wall = 0.0022;
   const inner = outer.map(([r, y], i) => [
     Math.max(0, r - (r && wall)),
-    i < 2 ? 0.04 + wall : i > 8 ? 0.1455 - wall : y,
+    i < 2 ? 0.04 + wall : i > 7 ? 0.1455 - wall : y,
   ]);
-  inner.splice(2, 1);
   return hollow(lathe(outer, ROUND), lathe(inner, ROUND));
 }
 
@@ -105,7 +98,7 @@ function ears() {
         ],
         { segments: 8 },
       ),
-      { turn: [0, 0, 90], at: [side * 0.0518, 0.149, 0] },
+      { turn: [0, 0, 90], at: [side * 0.0511, 0.149, 0] },
     ),
   );
 }
@@ -126,7 +119,7 @@ function guards() {
 
 function handle() {
   const side = [
-    [0.057, 0.149],
+    [0.0562, 0.149],
     [0.0595, 0.17],
     [0.0585, 0.215],
     [0.049, 0.262],
