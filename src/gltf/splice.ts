@@ -1,0 +1,153 @@
+import type { GLTF } from "@gltf-transform/core";
+import { decompose } from "./decompose.js";
+import { joinGlb } from "./glb.js";
+import { type ClipChannel, checkClipNames, GENERATOR, type Graft } from "./graft.js";
+import { imageType } from "./image-type.js";
+import { JsonEdit } from "./json-edit.js";
+import { type Model, ModelError } from "./model.js";
+import { SamplerPack } from "./sampler-pack.js";
+import { matrixFrame, sceneRoots } from "./scene.js";
+import { bytesDataUri, isDataUri } from "./uri.js";
+
+export type { ClipChannel, Graft, NewClip, NewNode } from "./graft.js";
+
+/**
+ * The model with new nodes and clips, as a GLB that needs no other file. They are added at the ends of the model's lists,
+ * their keys in one buffer view behind its bytes; of what was there, only this changes: the default scene's roots, the
+ * generator, the size of buffer 0, where buffers and images outside the GLB are to be found, and the `matrix` of a node that
+ * is animated (which may have none). All else stays to the letter and to the byte.
+ * Throws ModelError where a clip's name is taken, or an animated node cannot be told apart into translation, rotation
+ * and scale, or an external image is of an unknown kind.
+ */
+export function spliceGlb(model: Model, graft: Graft): Uint8Array {
+  const { json } = model;
+  checkClipNames(
+    model.name,
+    (json.animations ?? []).map(({ name }) => name),
+    graft.clips,
+  );
+  const edit = new JsonEdit(model.text);
+  edit.set(["asset"], "generator", GENERATOR);
+  addNodes(model, graft, edit);
+  splitMatrices(model, graft, edit);
+
+  const firstNode = json.nodes?.length ?? 0;
+  const firstView = json.bufferViews?.length ?? 0;
+  const nodeOf = (target: ClipChannel["target"]): number =>
+    "added" in target ? firstNode + target.added : target.node;
+  const pack = new SamplerPack(firstView, json.accessors?.length ?? 0);
+  const animations = graft.clips.map((clip) => pack.animation(clip, nodeOf));
+  edit.append("animations", animations);
+  edit.append("accessors", pack.accessors);
+
+  const binary = new Binary(model.buffers[0] ?? new Uint8Array());
+  const views: GLTF.IBufferView[] = [];
+  if (pack.byteLength > 0) {
+    const byteOffset = binary.append(pack.byteLength, (bytes, at) => pack.write(bytes, at));
+    views.push({ buffer: 0, byteOffset, byteLength: pack.byteLength });
+  }
+  for (const [i, image] of model.images) {
+    const mimeType = json.images![i].mimeType ?? imageType(image);
+    if (!mimeType)
+      throw new ModelError(
+        model.name,
+        `images[${i}] is of an unknown kind`,
+        "PNG, JPEG, WebP, AVIF and KTX2 are known",
+      );
+    const byteOffset = binary.append(image.length, (bytes, at) => bytes.set(image, at));
+    const bufferView = firstView + views.length;
+    views.push({ buffer: 0, byteOffset, byteLength: image.length });
+    edit.replace(["images", i], "uri", { bufferView, ...(!json.images![i].mimeType && { mimeType }) });
+  }
+  edit.append("bufferViews", views);
+  embedBuffers(model, binary.byteLength, edit);
+  return joinGlb({
+    json: new TextEncoder().encode(edit.result()),
+    ...(binary.byteLength > 0 && { binary: binary.bytes() }),
+    ...(model.otherChunks && { others: model.otherChunks }),
+  });
+}
+
+function addNodes({ json }: Model, { nodes }: Graft, edit: JsonEdit): void {
+  if (nodes.length === 0) return;
+  const first = json.nodes?.length ?? 0;
+  const roots = sceneRoots(json);
+  edit.append(
+    "nodes",
+    nodes.map(({ name, translation, rotation, scale, children = [], holdsScene }) => {
+      const all = [...children.map((child) => first + child), ...(holdsScene ? roots : [])];
+      return { name, translation, rotation, scale, children: all.length > 0 ? all : undefined };
+    }),
+  );
+  const scene = json.scene ?? 0;
+  if (json.scene === undefined) edit.set([], "scene", scene);
+  if (!json.scenes?.length) {
+    edit.append("scenes", [{ nodes: [first] }]);
+    return;
+  }
+  edit.set(["scenes", scene], "nodes", [first]);
+  if (!nodes.some(({ holdsScene }) => holdsScene)) return;
+  // Another scene may share roots with the default one; they are no roots any more.
+  const moved = new Set(roots);
+  json.scenes.forEach(({ nodes: others = [] }, s) => {
+    if (s !== scene && others.some((node) => moved.has(node)))
+      edit.set(["scenes", s], "nodes", [...new Set(others.map((node) => (moved.has(node) ? first : node)))]);
+  });
+}
+
+/** An animated node must not have a matrix (glTF 2.0, 3.5.2). */
+function splitMatrices({ json, name }: Model, { clips }: Graft, edit: JsonEdit): void {
+  const targets = clips.flatMap(({ channels }) =>
+    channels.flatMap(({ target }) => ("node" in target ? [target.node] : [])),
+  );
+  for (const target of new Set(targets)) {
+    const { matrix } = json.nodes![target];
+    if (!matrix) continue;
+    const parts = decompose(matrixFrame(matrix));
+    if (!parts)
+      throw new ModelError(
+        name,
+        `the matrix of node ${target} is sheared or flat`,
+        "a node that is animated cannot be",
+      );
+    edit.replace(["nodes", target], "matrix", parts);
+  }
+}
+
+/** Buffer 0 is the GLB's binary chunk, with our bytes behind its own; other external ones are written out in the JSON. */
+function embedBuffers({ json, buffers }: Model, byteLength: number, edit: JsonEdit): void {
+  if (buffers.length === 0) {
+    if (byteLength > 0) edit.append("buffers", [{ byteLength }]);
+    return;
+  }
+  json.buffers!.forEach(({ uri }, i) => {
+    if (i === 0) {
+      edit.set(["buffers", 0], "byteLength", byteLength);
+      if (uri !== undefined) edit.remove(["buffers", 0], "uri");
+    } else if (uri !== undefined && !isDataUri(uri))
+      edit.set(["buffers", i], "uri", bytesDataUri(buffers[i]));
+  });
+}
+
+/** Bytes that grow by pieces, each starting at a multiple of four. */
+class Binary {
+  readonly #pieces: { at: number; write: (bytes: Uint8Array, at: number) => void }[] = [];
+  byteLength = 0;
+
+  constructor(start: Uint8Array) {
+    this.append(start.length, (bytes, at) => bytes.set(start, at));
+  }
+
+  append(length: number, write: (bytes: Uint8Array, at: number) => void): number {
+    const at = this.byteLength + (-this.byteLength & 3);
+    this.#pieces.push({ at, write });
+    this.byteLength = at + length;
+    return at;
+  }
+
+  bytes(): Uint8Array {
+    const bytes = new Uint8Array(this.byteLength);
+    for (const { at, write } of this.#pieces) write(bytes, at);
+    return bytes;
+  }
+}
