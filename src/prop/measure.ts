@@ -10,10 +10,10 @@ import { extremePoints } from "./extremes.js";
 import { vertex } from "./inside.js";
 import type { MassProperties } from "./mass.js";
 import { massOfParts, type Substance } from "./mass-of-parts.js";
-import { checkShape, type Shape } from "./shape.js";
+import { shapeModel } from "./shape.js";
 import { shapeReach, shapeSize } from "./shape-extent.js";
+import { checkShape, type Shape } from "./shape-kind.js";
 import { shapeMass } from "./shape-mass.js";
-import { shapeModel } from "./shape-model.js";
 
 export interface Measured {
   /** None for a mesh that is not a solid. */

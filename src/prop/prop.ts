@@ -7,7 +7,7 @@ import type { Density } from "./density.js";
 import { combine, type MassProperties, pointMass, scaleDensity, scaleLengths } from "./mass.js";
 import { measureModel, measureShape } from "./measure.js";
 import { type AxisNames, axisNames, type Principal, principalAxes } from "./principal.js";
-import type { Shape } from "./shape.js";
+import type { Shape } from "./shape-kind.js";
 import { statedInertia } from "./stated-inertia.js";
 
 /** A place of the prop, and axes there. */

@@ -1,5 +1,5 @@
 import { length, type Vec3 } from "../math/vec3.js";
-import type { Shape } from "./shape.js";
+import type { Shape } from "./shape-kind.js";
 
 /** Bounding box of a shape, m. */
 export function shapeSize(shape: Shape): Vec3 {

@@ -1,6 +1,6 @@
 import { type Vec3, ZERO } from "../math/vec3.js";
 import type { MassProperties } from "./mass.js";
-import type { Shape } from "./shape.js";
+import type { Shape } from "./shape-kind.js";
 
 /**
  * Mass properties of a shape of the given density (kg/m³), in closed form, about the centre of mass, axes of the shape.

@@ -1,6 +1,6 @@
 import { cos, hypot, sin } from "../math/elementary.js";
 import type { Vec3 } from "../math/vec3.js";
-import type { Shape } from "./shape.js";
+import type { Shape } from "./shape-kind.js";
 
 /** A closed mesh, counter-clockwise from outside; vertices are split where normals or UVs are. */
 export interface ShapeMesh {
