@@ -1,5 +1,14 @@
 import type { Accessor, Document, Node } from "@gltf-transform/core";
-import { type ClipChannel, checkClipNames, GENERATOR, type Graft, type NewNode } from "./graft.js";
+import {
+  type ClipChannel,
+  checkClipNames,
+  contentKey,
+  GENERATOR,
+  type Graft,
+  type NewNode,
+  outputType,
+  type SamplerType,
+} from "./graft.js";
 
 /**
  * A glTF-Transform transform that does to a document what `spliceGlb` does to a file: `await document.transform(throwClips(graft))`.
