@@ -1,0 +1,37 @@
+import type { Flight } from "../flight/flight.js";
+import { length } from "../math/vec3.js";
+import type { Body } from "./sampled-flight.js";
+
+/** Distance between neighbouring float32 numbers, as a part of the number (at most). */
+const FLOAT32 = 1 / 0x80_00_00;
+
+/**
+ * The finest tolerance, m, that float32 keys can hold on this flight: four units in the last place of the greatest
+ * coordinate that a point of the prop takes, and five times `endShift`.
+ *
+ * One unit is what rounding a rotation key may move a point by (1.2e-7 rad), 0.87 what rounding a translation key may;
+ * the other two leave the search some room.
+ */
+export const leastTolerance = (flight: Flight, body: Body): number =>
+  4 * FLOAT32 * greatestCoordinate(flight, body) + 5 * endShift(flight, body);
+
+/** m: how far any point can get in the time by which the flight's duration differs from its float32 value. */
+export function endShift(flight: Flight, body: Body): number {
+  const { duration, greatestRate } = flight;
+  // The speed of the centre of mass is a convex function of time: greatest at an end.
+  const speed = Math.max(length(flight.velocity(0)), length(flight.velocity(duration)));
+  return (speed + body.reach * greatestRate) * Math.abs(Math.fround(duration) - duration);
+}
+
+/** Greatest coordinate, m, of any point of the prop or of the model's origin during the flight. */
+export function greatestCoordinate(flight: Flight, body: Body): number {
+  const { velocity, gravity } = flight.launch;
+  let greatest = 0;
+  for (let axis = 0; axis < 3; axis++) {
+    const turning = -velocity[axis] / gravity[axis];
+    for (const t of [0, flight.duration, turning])
+      if (t >= 0 && t <= flight.duration)
+        greatest = Math.max(greatest, Math.abs(flight.centerOfMass(t)[axis]));
+  }
+  return greatest + Math.max(body.reach, length(body.centerOfMass));
+}
