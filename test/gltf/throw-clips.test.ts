@@ -49,7 +49,7 @@ describe("throwClips", () => {
     expect(clipsOf(written)).toHaveLength(2);
     expect(scenesOf(written)).toEqual(scenesOf(spliced));
     expect(scenesOf(written)).toEqual([[["spanner", ["solid", "post"]]], [["spanner", ["solid", "post"]]]]);
-    expect(written.getRoot().getAsset().generator).toBe("tossbake");
+    expect((await io.writeJSON(document)).json.asset.generator).toBe("tossbake");
     expect(written.getRoot().listAccessors()).toHaveLength(spliced.getRoot().listAccessors().length);
   });
 
