@@ -21,10 +21,14 @@ export async function decodeAccessors(
       `its meshes state ${total} vertices and indices`,
       `at most ${GREATEST_TOTAL} are read`,
     );
+  const sparse = wanted.filter((index) => accessors[index].sparse);
   const uri = (i: number): string => `${i}.bin`;
   const json: GltfJson = {
     asset: { version: "2.0" },
-    accessors: wanted.map((index) => withOwnOffsets(accessors[index])),
+    accessors: [
+      ...wanted.map((index) => withOwnOffsets(accessors[index])),
+      ...sparse.map((index) => sparseNumbers(accessors[index])),
+    ],
     bufferViews,
     buffers: buffers.map(({ byteLength }, i) => ({ byteLength, uri: uri(i) })),
   };
@@ -34,6 +38,16 @@ export async function decodeAccessors(
   );
   const io = new WebIO().setLogger(new Logger(Logger.Verbosity.SILENT));
   const decoded = (await io.readJSON({ json, resources })).getRoot().listAccessors();
+  sparse.forEach((index, i) => {
+    const { count } = accessors[index];
+    const [greatest] = decoded[wanted.length + i].getMax([]);
+    if (greatest >= count)
+      throw new ModelError(
+        model.name,
+        `accessors[${index}].sparse changes element ${greatest}`,
+        `it has ${count}`,
+      );
+  });
   return new Map(wanted.map((index, i) => [index, decoded[i]]));
 }
 
@@ -50,3 +64,10 @@ function withOwnOffsets(accessor: GLTF.IAccessor): GLTF.IAccessor {
     },
   };
 }
+
+/** The numbers of the elements that a sparse accessor changes, as an accessor of their own. */
+const sparseNumbers = ({ sparse }: GLTF.IAccessor): GLTF.IAccessor => ({
+  ...sparse!.indices,
+  count: sparse!.count,
+  type: "SCALAR",
+});

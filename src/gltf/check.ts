@@ -36,16 +36,15 @@ export function checkJson(model: string, json: JsonObject): asserts json is Json
   checkNodes(json, check);
   checkMeshes(json, check);
   checkAnimations(json, check);
+  checkImages(json, check);
+}
+
+function checkImages(json: JsonObject, check: Checker): void {
+  const views = check.objects(json, "bufferViews").length;
   check.objects(json, "images").forEach((image, i) => {
-    const where = `images[${i}]`;
-    if (image.uri !== undefined) check.string(image.uri, `${where}.uri`);
-    else
-      check.index(
-        image.bufferView,
-        `${where}.bufferView`,
-        check.objects(json, "bufferViews").length,
-        "bufferViews",
-      );
+    if (image.uri !== undefined) check.string(image.uri, `images[${i}].uri`);
+    else check.index(image.bufferView, `images[${i}].bufferView`, views, "bufferViews");
+    if (image.mimeType !== undefined) check.string(image.mimeType, `images[${i}].mimeType`);
   });
 }
 

@@ -23,6 +23,7 @@ export interface Surface {
 
 /** Corners of triangles over all instances: a mesh may be shown by any number of nodes. */
 const GREATEST_CORNERS = 15_000_000;
+const GREATEST_INSTANCES = 100_000;
 
 interface Instance {
   node: number;
@@ -40,9 +41,8 @@ interface Instance {
 export async function readSurfaces(model: Model): Promise<{ surfaces: Surface[]; warnings: string[] }> {
   const { json } = model;
   const frames = sceneFrames(json);
-  const warnings: string[] = [];
-  const instances = listInstances(json, [...frames.keys()], warnings);
-  checkSize(model, instances);
+  const warnings = new Set<string>();
+  const instances = listInstances(model, [...frames.keys()], warnings);
   const accessors = await decodeAccessors(
     model,
     instances.flatMap(({ node, primitive }) => [
@@ -59,41 +59,53 @@ export async function readSurfaces(model: Model): Promise<{ surfaces: Surface[];
     const surface = readSurface(model, instance, accessors, skinned(node, primitive) ?? (() => frame));
     return surface.triangles.length > 0 ? [surface] : [];
   });
-  return { surfaces, warnings };
+  return { surfaces, warnings: [...warnings] };
 }
 
-function listInstances(json: GltfJson, nodes: number[], warnings: string[]): Instance[] {
+/** The primitives with triangles that the nodes show; counted as it goes, for a few bytes can name billions. */
+function listInstances(model: Model, nodes: number[], warnings: Set<string>): Instance[] {
+  const { json } = model;
   const instances: Instance[] = [];
+  const shownBy = new Map<number, Omit<Instance, "node" | "weights">[]>();
+  let corners = 0;
   for (const node of nodes) {
-    const { mesh: index, name, weights, extensions } = json.nodes![node];
-    if (index === undefined) continue;
-    const mesh = json.meshes![index];
+    const { mesh, name, weights, extensions } = json.nodes![node];
+    if (mesh === undefined) continue;
     if (extensions?.EXT_mesh_gpu_instancing)
-      warnings.push(`the node "${name ?? node}" has instances (EXT_mesh_gpu_instancing): read as one`);
-    mesh.primitives.forEach((primitive, p) => {
-      const where = `meshes[${index}].primitives[${p}]`;
-      if (!hasTriangles(primitive.mode ?? 4)) warnings.push(`${where} is points or lines: passed over`);
-      else if (primitive.attributes.POSITION === undefined)
-        warnings.push(`${where} has no positions: passed over`);
-      else instances.push({ node, primitive, where, weights: weights ?? mesh.weights ?? [] });
-    });
+      warnings.add(`the node "${name ?? node}" has instances (EXT_mesh_gpu_instancing): read as one`);
+    let primitives = shownBy.get(mesh);
+    if (!primitives) {
+      primitives = solidPrimitives(json, mesh, warnings);
+      shownBy.set(mesh, primitives);
+    }
+    for (const { primitive, where } of primitives) {
+      const { count } = json.accessors![primitive.indices ?? primitive.attributes.POSITION];
+      corners += (primitive.mode ?? 4) === 4 ? count : 3 * count;
+      instances.push({ node, primitive, where, weights: weights ?? json.meshes![mesh].weights ?? [] });
+      if (corners > GREATEST_CORNERS || instances.length > GREATEST_INSTANCES)
+        throw new ModelError(
+          model.name,
+          "its scene shows too much",
+          `at most ${GREATEST_CORNERS / 3} triangles in ${GREATEST_INSTANCES} pieces are read: use a simpler model`,
+        );
+    }
   }
   return instances;
 }
 
-function checkSize(model: Model, instances: Instance[]): void {
-  const { accessors } = model.json;
-  let corners = 0;
-  for (const { primitive } of instances) {
-    const count = accessors![primitive.indices ?? primitive.attributes.POSITION].count;
-    corners += primitive.mode === undefined || primitive.mode === 4 ? count : 3 * count;
-  }
-  if (corners > GREATEST_CORNERS)
-    throw new ModelError(
-      model.name,
-      `its scene shows about ${Math.round(corners / 3)} triangles`,
-      `at most ${GREATEST_CORNERS / 3} are read: use a simpler model`,
-    );
+function solidPrimitives(
+  json: GltfJson,
+  mesh: number,
+  warnings: Set<string>,
+): Omit<Instance, "node" | "weights">[] {
+  return json.meshes![mesh].primitives.flatMap((primitive, p) => {
+    const where = `meshes[${mesh}].primitives[${p}]`;
+    if (!hasTriangles(primitive.mode ?? 4)) warnings.add(`${where} is points or lines: passed over`);
+    else if (primitive.attributes.POSITION === undefined)
+      warnings.add(`${where} has no positions: passed over`);
+    else return [{ primitive, where }];
+    return [];
+  });
 }
 
 function readSurface(

@@ -1,7 +1,11 @@
 import { readFileSync } from "node:fs";
+import { Box3 } from "three";
+import { GLTFLoader } from "three/examples/jsm/loaders/GLTFLoader.js";
 import { describe, expect, it } from "vitest";
 import { readModel } from "../../src/gltf/read.js";
-import { readSurfaces, type Surface } from "../../src/gltf/surfaces.js";
+import { nodeFrame, readSurfaces, type Surface } from "../../src/gltf/surfaces.js";
+
+import { tetrahedron } from "./models.js";
 
 const folder = new URL("../data/props/", import.meta.url);
 const surfacesOf = async (file: string) =>
@@ -47,3 +51,183 @@ describe("surfaces of the reference props", () => {
     expect(warnings).toEqual([]);
   });
 });
+
+describe("where a prop stands", () => {
+  const files = [
+    "box_offpivot",
+    "club",
+    "hierarchy_shear",
+    "mirrored",
+    "two_instances",
+    "quantised_i16",
+    "uv_seams",
+  ];
+  // three keeps the skin's matrices in float32.
+  const cases: [string, number][] = [
+    ...files.map((file): [string, number] => [file, 1e-14]),
+    ["skin_bind_pose", 1e-6],
+  ];
+  it.each(cases)("%s is where three shows it", async (file, tolerance) => {
+    const { surfaces } = await surfacesOf(`${file}.glb`);
+    const bytes = new Uint8Array(readFileSync(new URL(`${file}.glb`, folder)));
+    const { scene } = await new GLTFLoader().parseAsync(bytes.buffer, "");
+    const box = new Box3().setFromObject(scene, true);
+    const all = surfaces.flatMap(({ positions }) => [...positions]);
+    for (const axis of [0, 1, 2]) {
+      const along = all.filter((_, i) => i % 3 === axis);
+      expect(Math.abs(Math.min(...along) - box.min.getComponent(axis))).toBeLessThan(tolerance);
+      expect(Math.abs(Math.max(...along) - box.max.getComponent(axis))).toBeLessThan(tolerance);
+    }
+  });
+});
+
+describe("kinds of primitives", () => {
+  // biome-ignore lint/suspicious/noExplicitAny: JSON changed freely
+  const read = async (change: (json: any) => void) => readSurfaces(await readModel("m", tetrahedron(change)));
+  // A tetrahedron on three edges at right angles holds a sixth of their product.
+  const HELD = (0.5 * 0.75 * 1) / 6;
+
+  it("a fan has the triangles 1 2 0, 2 3 0, … (glTF 2.0, 3.7.2.1)", async () => {
+    const { surfaces } = await read((json) => {
+      json.meshes[0].primitives = [{ attributes: { POSITION: 0 }, mode: 6 }];
+    });
+    expect(corners(surfaces[0])).toEqual([
+      [0.5, 0, 0],
+      [0, 0.75, 0],
+      [0, 0, 0],
+      [0, 0.75, 0],
+      [0, 0, 1],
+      [0, 0, 0],
+    ]);
+  });
+
+  it("a strip turns every other triangle round (glTF 2.0, 3.7.2.1)", async () => {
+    const { surfaces } = await read((json) => {
+      json.meshes[0].primitives = [{ attributes: { POSITION: 0 }, mode: 5 }];
+    });
+    expect(corners(surfaces[0])).toEqual([
+      [0, 0, 0],
+      [0.5, 0, 0],
+      [0, 0.75, 0],
+      [0.5, 0, 0],
+      [0, 0, 1],
+      [0, 0.75, 0],
+    ]);
+  });
+
+  it("points and lines are passed over, and said", async () => {
+    const { surfaces, warnings } = await read((json) => {
+      json.meshes[0].primitives.push(
+        { attributes: { POSITION: 0 }, mode: 0 },
+        { attributes: { POSITION: 0 }, mode: 3 },
+      );
+      json.nodes.push({ mesh: 0 });
+      json.scenes[0].nodes = [0, 1];
+    });
+    expect(surfaces).toHaveLength(2);
+    expect(warnings).toEqual([
+      "meshes[0].primitives[1] is points or lines: passed over",
+      "meshes[0].primitives[2] is points or lines: passed over",
+    ]);
+  });
+
+  it("a morph target counts by its weight, the node's before the mesh's", async () => {
+    const grown = (json: { meshes: { primitives: { targets?: object[] }[]; weights?: number[] }[] }) => {
+      json.meshes[0].primitives[0].targets = [{ POSITION: 0 }];
+      json.meshes[0].weights = [1];
+    };
+    // Each vertex moved by itself: twice the size, eight times the volume; at weight 2, 27 times.
+    expect(volume((await read(grown)).surfaces)).toBeCloseTo(8 * HELD, 14);
+    const heavier = await read((json) => {
+      grown(json);
+      json.nodes[0].weights = [2];
+    });
+    expect(volume(heavier.surfaces)).toBeCloseTo(27 * HELD, 14);
+  });
+
+  it("a scene without nodes' names and materials has empty ones, and only the default scene counts", async () => {
+    const { surfaces } = await read((json) => {
+      json.materials = [{ name: "steel" }, {}];
+      json.nodes = [{ mesh: 0 }, { name: "handle", mesh: 1 }, { name: "elsewhere", mesh: 0 }];
+      json.meshes.push(structuredClone(json.meshes[0]));
+      json.meshes[1].primitives[0].material = 0;
+      json.scenes = [{ nodes: [2] }, { nodes: [0, 1] }];
+      json.scene = 1;
+    });
+    expect(surfaces.map(({ nodeName, materialName }) => [nodeName, materialName])).toEqual([
+      ["", ""],
+      ["handle", "steel"],
+    ]);
+  });
+
+  it("vertices that no triangle uses are left out", async () => {
+    const { surfaces } = await read((json) => {
+      json.accessors[1].count = 3;
+    });
+    expect(surfaces[0].positions).toHaveLength(9);
+  });
+
+  it("a sparse part without an offset starts at its view's start, whatever the accessor's offset", async () => {
+    const { surfaces } = await read((json) => {
+      json.accessors[0] = {
+        bufferView: 2,
+        byteOffset: 12,
+        componentType: 5126,
+        count: 3,
+        type: "VEC3",
+        sparse: { count: 1, indices: { bufferView: 1, componentType: 5123 }, values: { bufferView: 0 } },
+      };
+      json.bufferViews.push({ buffer: 0, byteLength: 48 });
+      json.meshes[0].primitives[0] = { attributes: { POSITION: 0 } };
+    });
+    // Vertex 0 (the first number in the view of indices) becomes the first vertex of the tetrahedron: the origin.
+    expect([...surfaces[0].positions]).toEqual([0, 0, 0, 0, 0.75, 0, 0, 0, 1]);
+  });
+});
+
+describe("nodeFrame", () => {
+  // biome-ignore lint/suspicious/noExplicitAny: JSON changed freely
+  const model = (change: (json: any) => void) => readModel("m", tetrahedron(change));
+
+  it("is the node's place and axes in the scene, without its scale", async () => {
+    const found = nodeFrame(
+      await model((json) => {
+        // A quarter turn about y, twice the size, at (1, 2, 3); in it a socket 1 along z, a quarter turn about x.
+        json.nodes = [
+          {
+            children: [1],
+            translation: [1, 2, 3],
+            rotation: [0, Math.SQRT1_2, 0, Math.SQRT1_2],
+            scale: [2, 2, 2],
+          },
+          { name: "socket", translation: [0, 0, 1], rotation: [Math.SQRT1_2, 0, 0, Math.SQRT1_2] },
+        ];
+      }),
+      "socket",
+    )!;
+    // By hand: z of the outer node points along the scene's x; the product of the two quarter turns is (½, ½, -½, ½).
+    [3, 2, 3].forEach((value, i) => {
+      expect(found.position[i]).toBeCloseTo(value, 14);
+    });
+    [0.5, 0.5, -0.5, 0.5].forEach((value, i) => {
+      expect(found.rotation[i]).toBeCloseTo(value, 14);
+    });
+  });
+
+  it("knows only the default scene, and refuses what is ambiguous or flat", async () => {
+    expect(nodeFrame(await model(() => {}), "nobody")).toBeUndefined();
+    const twice = await model((json) => {
+      json.nodes[0].children = [1];
+      json.nodes.push({ name: "solid" });
+    });
+    expect(() => nodeFrame(twice, "solid")).toThrow('2 nodes are named "solid"');
+    const flat = await model((json) => {
+      json.nodes[0].scale = [0, 1, 1];
+    });
+    expect(() => nodeFrame(flat, "solid")).toThrow("scaled to nothing");
+  });
+});
+
+function corners({ positions, triangles }: Surface): number[][] {
+  return [...triangles].map((i) => [...positions.subarray(3 * i, 3 * i + 3)]);
+}
