@@ -2,7 +2,18 @@
 
 import { atan2, cos, sin } from "./elementary.js";
 import type { Mat3 } from "./mat3.js";
-import { add, cross, dot, length, normalize as normalizeVector, perpendicular, scale, type Vec3 } from "./vec3.js";
+import {
+  add,
+  addScaled,
+  cross,
+  dot,
+  length,
+  normalize as normalizeVector,
+  perpendicular,
+  scale,
+  subtract,
+  type Vec3,
+} from "./vec3.js";
 
 export type Quat = readonly [number, number, number, number];
 
@@ -48,13 +59,13 @@ export function fromAxisAngle(axis: Vec3, angle: number): Quat {
 export function between(from: Vec3, to: Vec3): Quat {
   const a = normalizeVector(from);
   const b = normalizeVector(to);
-  const w = 1 + dot(a, b);
-  if (w < 1e-14) {
-    const p = perpendicular(a);
-    return [p[0], p[1], p[2], 0];
-  }
   const c = cross(a, b);
-  return normalize([c[0], c[1], c[2], w]);
+  // The cross product of nearly opposite directions is short and points a little along them: squared up again.
+  const square = addScaled(c, a, -dot(c, a));
+  const axis = length(square) === 0 ? perpendicular(a) : normalizeVector(square);
+  const sine = length(subtract(b, a)) / 2;
+  const cosine = length(add(a, b)) / 2;
+  return normalize([axis[0] * sine, axis[1] * sine, axis[2] * sine, cosine]);
 }
 
 /** The angle in radians (0 to π) of the rotation between two orientations; accurate for small angles too. */

@@ -31,8 +31,8 @@ export const cross = (a: Vec3, b: Vec3): Vec3 => [
 export function length(a: Vec3): number {
   const greatest = Math.max(Math.abs(a[0]), Math.abs(a[1]), Math.abs(a[2]));
   if (greatest === 0 || !Number.isFinite(greatest)) return greatest;
-  if (greatest > 1e-100 && greatest < 1e100) return Math.sqrt(dot(a, a));
-  const s = scale(a, 1 / greatest);
+  if (isModerate(greatest)) return Math.sqrt(dot(a, a));
+  const s = divide(a, greatest);
   return greatest * Math.sqrt(dot(s, s));
 }
 
@@ -40,8 +40,11 @@ export const distance = (a: Vec3, b: Vec3): number => length(subtract(a, b));
 
 /** The unit vector along `a`; the zero vector stays zero. */
 export function normalize(a: Vec3): Vec3 {
-  const l = length(a);
-  return l === 0 ? ZERO : [a[0] / l, a[1] / l, a[2] / l];
+  const greatest = Math.max(Math.abs(a[0]), Math.abs(a[1]), Math.abs(a[2]));
+  if (greatest === 0) return ZERO;
+  // The length of a tiny vector has too few digits to divide by.
+  const s = isModerate(greatest) ? a : divide(a, greatest);
+  return divide(s, length(s));
 }
 
 /** A unit vector at right angles to `a` (any one, but always the same for the same `a`). */
@@ -52,3 +55,8 @@ export function perpendicular(a: Vec3): Vec3 {
   const other: Vec3 = x <= y && x <= z ? [1, 0, 0] : y <= z ? [0, 1, 0] : [0, 0, 1];
   return normalize(cross(a, other));
 }
+
+const divide = (a: Vec3, d: number): Vec3 => [a[0] / d, a[1] / d, a[2] / d];
+
+/** Whether squares neither overflow nor lose digits. */
+const isModerate = (x: number): boolean => x > 1e-100 && x < 1e100;
