@@ -1,7 +1,7 @@
 /** The orientation in which directions of the prop lie along directions of the world. */
 
+import { type Mat3, multiply, transpose } from "../math/mat3.js";
 import { between, fromMatrix, type Quat } from "../math/quat.js";
-import { multiply, transpose, type Mat3 } from "../math/mat3.js";
 import { addScaled, cross, dot, length, normalize, perpendicular, type Vec3 } from "../math/vec3.js";
 import { UP } from "./world-directions.js";
 

@@ -59,7 +59,10 @@ function newton(g: (x: readonly number[]) => number[], guess: readonly number[])
   for (let round = 0; round < NEWTON_ROUNDS; round++) {
     const value = g(x);
     const residual = value.map((v, i) => v - x[i]);
-    const correction = solveLinear(jacobian(g, x, value), residual.map((r) => -r));
+    const correction = solveLinear(
+      jacobian(g, x, value),
+      residual.map((r) => -r),
+    );
     if (!correction) return undefined;
     const size = Math.max(...correction.map((c, i) => Math.abs(c) / (1 + Math.abs(x[i]))));
     if (!Number.isFinite(size) || (round === 0 && size > GREATEST_CORRECTION)) return undefined;
@@ -73,7 +76,11 @@ function newton(g: (x: readonly number[]) => number[], guess: readonly number[])
 }
 
 /** Of g(x) − x, by forward differences. */
-function jacobian(g: (x: readonly number[]) => number[], x: readonly number[], value: readonly number[]): number[][] {
+function jacobian(
+  g: (x: readonly number[]) => number[],
+  x: readonly number[],
+  value: readonly number[],
+): number[][] {
   const columns = x.map((v, j) => {
     const h = 1e-7 * (1 + Math.abs(v));
     const moved = x.map((w, i) => (i === j ? w + h : w));

@@ -24,13 +24,14 @@ export interface LaunchWish {
   /** Release and arrival point from the centre of mass, model's frame, m. */
   releaseOffset: Vec3;
   arrivalOffset: Vec3;
-  /** Orientation at release; `usesTravel` where it depends on the centre of mass's velocity then. */
+  /** Orientation at release. */
   pose: (course: ThrowCourse) => Quat;
-  usesTravel: boolean;
   /** Level direction of the throw is measured along this (any length). */
   ahead?: Vec3;
   /** Angular velocity at release in the principal frame, rad/s. */
-  spin: (rotation: Quat, duration: number) => Vec3;
+  spin: (pose: Quat, duration: number, course: ThrowCourse) => Vec3;
+  /** Whether pose or spin depend on the centre of mass's velocity at release. */
+  usesTravel: boolean;
 }
 
 export interface AimedLaunch {
@@ -80,12 +81,14 @@ function evaluate(
 ): AimedLaunch {
   const duration = guess.duration ?? solveArc(wish.arc).duration;
   const travel = guess.travel ?? solveArc(wish.arc).velocity;
-  const pose = wish.pose({ ahead: wish.ahead, travel });
+  const course = { ahead: wish.ahead, travel };
+  const pose = wish.pose(course);
   const orientation = multiply(pose, body.axes);
-  const spin = wish.spin(pose, duration);
+  const spin = wish.spin(pose, duration, course);
   const atRelease = rotate(pose, scale(wish.releaseOffset, lambda));
   const from = subtract(wish.arc.from, atRelease);
-  const velocity = wish.arc.velocity && subtract(wish.arc.velocity, cross(rotate(orientation, spin), atRelease));
+  const velocity =
+    wish.arc.velocity && subtract(wish.arc.velocity, cross(rotate(orientation, spin), atRelease));
   const at = { centerOfMass: from, orientation, spin, moments: body.moments };
   let to = wish.arc.to;
   if (to && lambda > 0 && isOff(wish.arrivalOffset)) {

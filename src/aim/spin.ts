@@ -1,10 +1,9 @@
 /** The angular velocity at release that a wished spin stands for. */
 
-import { cos, sin } from "../math/elementary.js";
+import { cosDegrees, sinDegrees } from "../math/degrees.js";
 import { addScaled, cross, dot, length, normalize, perpendicular, scale, type Vec3 } from "../math/vec3.js";
 
 const TURN = 2 * Math.PI;
-const DEGREE = Math.PI / 180;
 
 export interface SpinWish {
   /** Unit vector in the principal frame (x, y, z = long, middle, short): the axis a clean spin would turn about. */
@@ -35,7 +34,7 @@ export function spinAtRelease(wish: SpinWish, moments: Vec3): Vec3 {
 /** Wobble where none is stated: a clean spin about the middle axis of a body with three unlike moments exists on paper only. */
 export function defaultWobble(axis: Vec3, moments: Vec3): number {
   const unlike = moments[1] > moments[0] * 1.01 && moments[2] > moments[1] * 1.01;
-  const alongMiddle = Math.abs(axis[1]) >= cos(DEGREE) * length(axis);
+  const alongMiddle = Math.abs(axis[1]) >= cosDegrees(1) * length(axis);
   return unlike && alongMiddle ? 3 : 0;
 }
 
@@ -55,9 +54,8 @@ function tilt(clean: Vec3, wish: SpinWish): Vec3 {
   const square = addScaled(reference, clean, -dot(reference, clean));
   const towards = length(square) > 1e-9 ? normalize(square) : perpendicular(clean);
   const beside = cross(clean, towards);
-  const phase = wish.phase * DEGREE;
-  const side = addScaled(scale(towards, cos(phase)), beside, sin(phase));
-  return normalize(addScaled(scale(clean, cos(wish.wobble * DEGREE)), side, sin(wish.wobble * DEGREE)));
+  const side = addScaled(scale(towards, cosDegrees(wish.phase)), beside, sinDegrees(wish.phase));
+  return normalize(addScaled(scale(clean, cosDegrees(wish.wobble)), side, sinDegrees(wish.wobble)));
 }
 
 const timesDiagonal = (v: Vec3, d: Vec3): Vec3 => [v[0] * d[0], v[1] * d[1], v[2] * d[2]];

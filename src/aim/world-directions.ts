@@ -39,7 +39,11 @@ export function worldDirection(direction: string | Vec3, course: ThrowCourse): V
     case "left":
       return cross(UP, aheadOf(course, direction));
     default:
-      throw new RequestError([], `no direction of the world is called "${direction}"`, `one of ${WORLD_WORDS.join(", ")}`);
+      throw new RequestError(
+        [],
+        `no direction of the world is called "${direction}"`,
+        `one of ${WORLD_WORDS.join(", ")}`,
+      );
   }
 }
 

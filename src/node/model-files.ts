@@ -2,7 +2,7 @@
 
 import { readFile, realpath, stat } from "node:fs/promises";
 import { basename, dirname, resolve, sep } from "node:path";
-import { ModelError, type Model } from "../gltf/model.js";
+import { type Model, ModelError } from "../gltf/model.js";
 import { readModel } from "../gltf/read.js";
 import { sha256 } from "../record/hash.js";
 
@@ -31,7 +31,11 @@ export async function readModelFile(path: string, shownAs: string): Promise<Mode
     const named = resolve(folder, uri);
     const real = await realpath(named).catch(() => named);
     if (!real.startsWith(folder + sep))
-      throw new ModelError(shownAs, `names the file "${uri}" outside its own folder`, "put the file beside the model");
+      throw new ModelError(
+        shownAs,
+        `names the file "${uri}" outside its own folder`,
+        "put the file beside the model",
+      );
     const content = await readGuarded(real, `${shownAs}: ${basename(uri)}`);
     parts.push(content);
     paths.push(real);
@@ -51,7 +55,15 @@ async function readGuarded(path: string, shownAs: string): Promise<Uint8Array> {
     if (error instanceof ModelError) throw error;
     const code = (error as NodeJS.ErrnoException).code;
     if (code === "ENOENT" || code === "ENOTDIR")
-      throw new ModelError(shownAs, "does not exist", "check the path: it is relative to the file that names it");
-    throw new ModelError(shownAs, `cannot be read (${code ?? String(error)})`, "check the file's permissions");
+      throw new ModelError(
+        shownAs,
+        "does not exist",
+        "check the path: it is relative to the file that names it",
+      );
+    throw new ModelError(
+      shownAs,
+      `cannot be read (${code ?? String(error)})`,
+      "check the file's permissions",
+    );
   }
 }

@@ -17,7 +17,11 @@ export interface OutputFile {
  * @throws MachineError when the machine will not take them; the temporary files are then gone and the old ones as they were
  */
 export async function writeFiles(folder: string, files: readonly OutputFile[]): Promise<void> {
-  const staged = files.map((file) => ({ ...file, path: join(folder, file.name), temporary: temporaryName(folder, file.name) }));
+  const staged = files.map((file) => ({
+    ...file,
+    path: join(folder, file.name),
+    temporary: temporaryName(folder, file.name),
+  }));
   try {
     await mkdir(folder, { recursive: true });
     for (const file of staged) {
@@ -27,7 +31,9 @@ export async function writeFiles(folder: string, files: readonly OutputFile[]): 
     for (const file of staged) await rename(file.temporary, file.path);
   } catch (error) {
     for (const file of staged) await rm(file.temporary, { force: true }).catch(() => undefined);
-    throw new MachineError(`${folder}: cannot be written (${reason(error)}); choose a folder that can, with -o`);
+    throw new MachineError(
+      `${folder}: cannot be written (${reason(error)}); choose a folder that can, with -o`,
+    );
   }
 }
 

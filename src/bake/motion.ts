@@ -1,0 +1,29 @@
+/** What takes.json, extras and the engine are told of a flight: states and cues, in the host's coordinates. */
+
+import type { Flight } from "../flight/flight.js";
+import { conjugate, multiply, type Quat } from "../math/quat.js";
+import { length } from "../math/vec3.js";
+import type { Prop } from "../prop/prop.js";
+import type { MotionState } from "../record/clip-record.js";
+import type { Conversion } from "./host.js";
+
+/** The model's orientation at a time: turns it from as modelled. */
+export const modelRotation = (flight: Flight, prop: Prop, t: number): Quat =>
+  multiply(flight.orientation(t), conjugate(prop.principal.axes));
+
+export function motionState(flight: Flight, prop: Prop, t: number, host: Conversion): MotionState {
+  return {
+    centerOfMass: host.vector(flight.centerOfMass(t)),
+    rotation: host.rotation(modelRotation(flight, prop, t)),
+    velocity: host.vector(flight.velocity(t)),
+    angularVelocity: host.angular(flight.angularVelocity(t)),
+  };
+}
+
+/** Seconds at which the body has made its 1st, 2nd, … whole turn about its angular momentum: it turns there at the constant 2E/|L|. */
+export function turnTimes(flight: Flight): number[] {
+  const momentum = length(flight.angularMomentum);
+  if (momentum === 0) return [];
+  const turn = (2 * Math.PI * momentum) / (2 * flight.energy);
+  return Array.from({ length: Math.floor(flight.duration / turn) }, (_, i) => (i + 1) * turn);
+}

@@ -1,0 +1,58 @@
+/** The props of a throw file, read and weighed. */
+
+import type { Model } from "../gltf/model.js";
+import { RequestError } from "../math/request-error.js";
+import { type Prop, weigh } from "../prop/prop.js";
+import { shapeModel } from "../prop/shape.js";
+import { textSha256 } from "../record/hash.js";
+import { throwFileError } from "../throwfile/errors.js";
+import type { PropEntry, ThrowFile } from "../throwfile/types.js";
+
+export interface LoadedProp {
+  prop: Prop;
+  model: Model;
+  /** As the record names it: the model's path, or the shape as JSON. */
+  source: string;
+  sha256: string;
+}
+
+/** Hands over a model by the path that the throw file gives it. */
+export type ModelSource = (path: string) => Promise<{ model: Model; sha256: string }>;
+
+/**
+ * Reads and weighs the props that are named, in the file's order.
+ *
+ * @throws ModelError, or ThrowFileError for a prop whose keys do not fit its model
+ */
+export async function loadProps(
+  file: ThrowFile,
+  names: ReadonlySet<string>,
+  source: ModelSource,
+): Promise<Map<string, LoadedProp>> {
+  const loaded = new Map<string, LoadedProp>();
+  for (const [name, entry] of file.props) {
+    if (!names.has(name)) continue;
+    try {
+      loaded.set(name, await loadProp(entry, source));
+    } catch (error) {
+      if (!(error instanceof RequestError)) throw error;
+      throw throwFileError(file, new RequestError(["props", name, ...error.path], error.fault, error.remedy));
+    }
+  }
+  return loaded;
+}
+
+async function loadProp(entry: PropEntry, source: ModelSource): Promise<LoadedProp> {
+  if (entry.shape) {
+    const text = JSON.stringify(entry.shape);
+    const model = shapeModel(entry.name, entry.shape);
+    return {
+      prop: await weigh(entry.name, entry.shape, entry),
+      model,
+      source: text,
+      sha256: await textSha256(text),
+    };
+  }
+  const { model, sha256 } = await source(entry.model as string);
+  return { prop: await weigh(entry.name, model, entry), model, source: entry.model as string, sha256 };
+}

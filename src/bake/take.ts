@@ -1,0 +1,70 @@
+/** One take: the first of its candidates that has a flight, flown and cut into keys. */
+
+import { type AimedLaunch, solveLaunch } from "../aim/launch.js";
+import { defaultTolerance } from "../clip/default-tolerance.js";
+import { linearTrack } from "../clip/linear.js";
+import type { Track } from "../clip/track.js";
+import { candidateOrder } from "../draw/candidate-order.js";
+import { drawThrow } from "../draw/draw-throw.js";
+import type { DrawnThrow } from "../draw/drawn-throw.js";
+import { type Flight, fly } from "../flight/flight.js";
+import { RequestError } from "../math/request-error.js";
+import type { Prop } from "../prop/prop.js";
+import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
+import { hostFrame } from "./host.js";
+import { launchWish, mayWobble } from "./wish.js";
+
+export interface Take {
+  number: number;
+  /** Which of the take's candidates it is. */
+  candidate: number;
+  drawn: DrawnThrow;
+  aimed: AimedLaunch;
+  flight: Flight;
+}
+
+/**
+ * Solves a take; nothing of any other take is needed.
+ *
+ * @throws RequestError, path from the throw inwards, where no candidate has a flight: the first one's reason
+ */
+export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number: number): Take {
+  const wobblesByDefault = mayWobble(entry, prop);
+  const stream = { seed: file.seed, throwName: entry.name, take: number, wobblesByDefault };
+  const host = hostFrame(file.host).toWorld;
+  let first: RequestError | undefined;
+  let tried = 0;
+  for (const candidate of candidateOrder(entry, stream)) {
+    const drawn = drawThrow(entry, { ...stream, candidate });
+    try {
+      const aimed = solveLaunch(launchWish(drawn, prop, file.gravity, host), prop.principal);
+      return { number, candidate, drawn, aimed, flight: fly(aimed.launch) };
+    } catch (error) {
+      if (!(error instanceof RequestError)) throw error;
+      first ??= error;
+      tried++;
+      // nothing was left to chance, so nothing else can come of it
+      if (Object.keys(drawn.draws).length === 0) break;
+    }
+  }
+  const reason = first as RequestError;
+  if (tried === 1) throw reason;
+  throw new RequestError(
+    reason.path,
+    `take ${number}: none of ${tried} draws has a flight; the first: ${reason.fault}`,
+    reason.remedy,
+  );
+}
+
+/**
+ * The take's keys within the throw file's tolerance.
+ *
+ * @throws RequestError where the tolerance cannot be held; its path starts at the top of the file
+ */
+export function cutTake(file: ThrowFile, prop: Prop, take: Take): Track {
+  const body = { centerOfMass: prop.centerOfMass, axes: prop.principal.axes, reach: prop.reach };
+  return linearTrack(take.flight, body, toleranceOf(file, prop));
+}
+
+export const toleranceOf = (file: ThrowFile, prop: Prop): number =>
+  file.bake.tolerance ?? defaultTolerance(prop.reach);

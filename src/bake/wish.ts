@@ -1,0 +1,161 @@
+/** A drawn throw in the words of the solver: host numbers become glTF's, names become directions, angles become poses. */
+
+import { facingRotation } from "../aim/facing.js";
+import type { LaunchWish } from "../aim/launch.js";
+import { defaultWobble, spinAtRelease } from "../aim/spin.js";
+import { type ThrowCourse, UP, WORLD_WORDS, worldDirection } from "../aim/world-directions.js";
+import type { DrawnFacing, DrawnThrow } from "../draw/drawn-throw.js";
+import { cosDegrees, sinDegrees } from "../math/degrees.js";
+import {
+  conjugate,
+  fromAxisAngle,
+  IDENTITY,
+  multiply,
+  normalize,
+  type Quat,
+  rotateBack,
+} from "../math/quat.js";
+import { RequestError } from "../math/request-error.js";
+import { normalize as normalizeVector, subtract, type Vec3, ZERO } from "../math/vec3.js";
+import { propDirection } from "../prop/directions.js";
+import type { Prop } from "../prop/prop.js";
+import type { ThrowEntry } from "../throwfile/types.js";
+import type { Conversion } from "./host.js";
+
+/**
+ * @param gravity m/s², where the throw states none of its own
+ * @param host from the throw file's numbers to glTF's
+ */
+export function launchWish(drawn: DrawnThrow, prop: Prop, gravity: number, host: Conversion): LaunchWish {
+  const { release, arrive, arc } = drawn;
+  const releasePoint = pointOf(prop, release.point);
+  const from = release.at ? host.vector(release.at) : releasePoint;
+  const to = arrive.at && host.vector(arrive.at);
+  const velocity = release.velocity && host.vector(release.velocity);
+  const strength = drawn.gravity === undefined ? gravity : drawn.gravity;
+  const pose = poseOf(drawn, prop, host);
+  return {
+    arc: {
+      from,
+      to,
+      velocity,
+      gravity:
+        strength === "free"
+          ? { free: UP }
+          : [0, drawn.gravity === undefined ? -strength : -host.length(strength), 0],
+      after: arrive.after,
+      apex: arc.apex === undefined ? undefined : host.length(arc.apex),
+      through: arc.through && host.vector(arc.through),
+      speed: arc.speed === undefined ? undefined : host.length(arc.speed),
+      elevation: arc.elevation,
+      heading: arc.heading,
+      branch: arc.branch,
+    },
+    releaseOffset: subtract(releasePoint, prop.centerOfMass),
+    arrivalOffset: subtract(pointOf(prop, arrive.point ?? release.point), prop.centerOfMass),
+    pose,
+    usesTravel: namesFlight(release.facing) || drawn.spin?.axis === "flight",
+    ahead: to ? subtract(to, from) : arc.heading === undefined ? velocity : headingDirection(arc.heading),
+    spin: spinOf(drawn, prop, host),
+  };
+}
+
+const headingDirection = (heading: number): Vec3 => [sinDegrees(heading), 0, cosDegrees(heading)];
+
+const pointOf = (prop: Prop, name: string): Vec3 =>
+  name === "centerOfMass" ? prop.centerOfMass : prop.points[name].position;
+
+const namesFlight = (facing: DrawnFacing | undefined): boolean =>
+  Array.isArray(facing) && facing.some(([, world]) => world === "flight");
+
+function poseOf(drawn: DrawnThrow, prop: Prop, host: Conversion): LaunchWish["pose"] {
+  const { facing, scatter } = drawn.release;
+  const unscattered = facingOf(facing, prop, host);
+  if (!scatter) return unscattered;
+  const scattering = fromAxisAngle(scatter.axis, (scatter.angle * Math.PI) / 180);
+  return (course) => multiply(scattering, unscattered(course));
+}
+
+function facingOf(
+  facing: DrawnFacing | undefined,
+  prop: Prop,
+  host: Conversion,
+): (course: ThrowCourse) => Quat {
+  if (facing === undefined) return () => IDENTITY;
+  if ("orientation" in facing) return () => facing.orientation;
+  if ("rotation" in facing) {
+    const wanted = host.rotation(normalize(facing.rotation));
+    const rotation = facing.point ? multiply(wanted, conjugate(prop.points[facing.point].rotation)) : wanted;
+    return () => rotation;
+  }
+  return (course) => {
+    const pairs = facing.map(([own, world], i) =>
+      within(["release", "facing", i], () => ({
+        prop: propDirection(prop, own),
+        world: worldDirection(typeof world === "string" ? world : host.vector(world), course),
+      })),
+    );
+    return facingRotation(pairs[0], pairs[1]);
+  };
+}
+
+function spinOf(drawn: DrawnThrow, prop: Prop, host: Conversion): LaunchWish["spin"] {
+  const { angularVelocity } = drawn.release;
+  const { axes, moments } = prop.principal;
+  if (angularVelocity) {
+    const world = host.angular(angularVelocity);
+    return (pose) => rotateBack(multiply(pose, axes), world);
+  }
+  const { spin } = drawn;
+  // without an arrival pose to be met, a checked throw file states the axis, and turns or rate
+  if (!spin) return () => ZERO;
+  return (pose, duration, course) => {
+    const axis = rotateBack(
+      axes,
+      within(["spin", "axis"], () => spinAxis(spin.axis as string | Vec3, prop, pose, course)),
+    );
+    return spinAtRelease(
+      {
+        axis: normalizeVector(axis),
+        turnsPerSecond: spin.rate ?? (spin.turns as number) / duration,
+        wobble: spin.wobble ?? defaultWobble(axis, moments),
+        phase: spin.phase,
+      },
+      moments,
+    );
+  };
+}
+
+/**
+ * Whether a spin of this throw that states no wobble may have one: so it is for an axis near the middle one of a body with three unlike
+ * moments, and for an axis that only the draws or the pose decide.
+ */
+export function mayWobble(entry: ThrowEntry, prop: Prop): boolean {
+  const { axes, moments } = prop.principal;
+  const axis = entry.spin?.axis;
+  if (defaultWobble([0, 1, 0], moments) === 0) return false;
+  const isPlain = Array.isArray(axis)
+    ? axis.every((component) => typeof component === "number")
+    : typeof axis === "string";
+  if (!isPlain || axis === "any" || isWorldWord(axis as string | Vec3)) return true;
+  return defaultWobble(rotateBack(axes, propDirection(prop, axis as string | Vec3)), moments) > 0;
+}
+
+/** In the model's frame. */
+function spinAxis(axis: string | Vec3, prop: Prop, pose: Quat, course: ThrowCourse): Vec3 {
+  return isWorldWord(axis) ? rotateBack(pose, worldDirection(axis, course)) : propDirection(prop, axis);
+}
+
+const isWorldWord = (axis: string | Vec3): axis is string =>
+  typeof axis === "string" && (WORLD_WORDS as readonly string[]).includes(axis);
+
+/** Puts the key that was being answered in front of an error's path. */
+function within<T>(path: readonly (string | number)[], answer: () => T): T {
+  try {
+    return answer();
+  } catch (error) {
+    if (error instanceof RequestError)
+      throw new RequestError([...path, ...error.path], error.fault, error.remedy);
+    throw error;
+  }
+}

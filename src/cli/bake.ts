@@ -1,0 +1,93 @@
+import { Command } from "commander";
+import { bake } from "../bake/bake.js";
+import { mergeRecord } from "../node/kept-record.js";
+import { writeFiles } from "../node/output-folder.js";
+import { openThrowFile } from "../node/throw-file.js";
+import type { ClipRecord, TakesRecord } from "../record/clip-record.js";
+import { formatRecord } from "../record/format.js";
+import { ExitCode } from "./exit-code.js";
+import { progress } from "./progress.js";
+import { span, table } from "./table.js";
+
+interface Options {
+  output: string;
+  only?: string[];
+  dryRun?: boolean;
+  json?: boolean;
+}
+
+/** A take that is further from its mark than this, in m or rad, has missed it. */
+const MISS_METRES = 1e-4;
+const MISS_RADIANS = (0.01 * Math.PI) / 180;
+
+export const bakeCommand = (answer: (code: number) => void) =>
+  new Command("bake")
+    .description("solve every throw of a throw file and write its clips and takes.json")
+    .argument("<throwfile>", "what is thrown and how (YAML or JSON)")
+    .requiredOption("-o, --output <dir>", "folder for the clips")
+    .option("--only <name...>", "these throws alone; the others' clips and records stay as they are")
+    .option("--dry-run", "solve and print, but write nothing")
+    .option("--json", "print the record instead of the table")
+    .addHelpText("after", "\nExample:\n  tossbake bake quay.throws.yaml -o out")
+    .action(async (path: string, options: Options) => {
+      const { file, text, models } = await openThrowFile(path);
+      const shown = progress();
+      const baked = await bake(file, text, models, { only: options.only, onTake: shown.update }).finally(
+        shown.end,
+      );
+      if (!options.dryRun) {
+        const record = await mergeRecord(options.output, baked.record, file);
+        await writeFiles(options.output, [
+          ...baked.files,
+          { name: "takes.json", content: formatRecord(record) },
+        ]);
+      }
+      process.stdout.write(options.json ? formatRecord(baked.record) : report(baked.record, options));
+      if (baked.record.clips.some(missed)) answer(ExitCode.checkFailed);
+    });
+
+const missed = ({ miss }: ClipRecord) =>
+  (miss.position ?? 0) > MISS_METRES || (miss.angle ?? 0) > MISS_RADIANS;
+
+function report(record: TakesRecord, options: Options): string {
+  const names = [...new Set(record.clips.map((clip) => clip.throw))];
+  const rows = names.map((name) => {
+    const clips = record.clips.filter((clip) => clip.throw === name);
+    return [
+      name,
+      clips[0].prop,
+      String(clips.length),
+      span(
+        clips.map((clip) => clip.duration),
+        2,
+      ),
+      span(
+        clips.map((clip) => clip.turns),
+        2,
+      ),
+      span(
+        clips.map((clip) => clip.keys.translation + clip.keys.rotation),
+        0,
+      ),
+      span(
+        clips.map((clip) => clip.bytes),
+        0,
+      ),
+      Math.max(...clips.map((clip) => clip.error * 1000)).toFixed(3),
+      clips[0].file,
+    ];
+  });
+  const warnings = Object.entries(record.props).flatMap(([name, prop]) =>
+    prop.warnings.map((text) => `${name}: ${text}\n`),
+  );
+  const misses = record.clips
+    .filter(missed)
+    .map(
+      (clip) => `${clip.name} misses its mark by ${((clip.miss.position ?? 0) * 1000).toPrecision(3)} mm\n`,
+    );
+  const head = ["throw", "prop", "takes", "time s", "turns", "keys", "bytes/clip", "error mm", "file"];
+  const end = options.dryRun
+    ? "nothing written (--dry-run)"
+    : `written to ${options.output}, with takes.json`;
+  return `${table(head, rows)}\n\n${[...warnings, ...misses].join("")}${record.clips.length} takes of ${names.length} throws ${end}\n`;
+}

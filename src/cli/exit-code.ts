@@ -1,0 +1,11 @@
+/** What the process answers its caller with. */
+export const ExitCode = {
+  done: 0,
+  /** Done, but a check failed. */
+  checkFailed: 1,
+  /** Usage, throw file or model. */
+  wrongRequest: 2,
+  /** A folder that cannot be written, a full disk. */
+  machine: 3,
+  interrupted: 130,
+} as const;

@@ -1,0 +1,31 @@
+/** The library: the whole line as one function, and each of its steps. Runs in browsers and on Node. */
+
+export { type Bake, type BakedFile, type BakeOptions, bake } from "./bake/bake.js";
+export type { ModelSource } from "./bake/props.js";
+export { defaultTolerance } from "./clip/default-tolerance.js";
+export { type Body, linearTrack } from "./clip/linear.js";
+export { playTrack } from "./clip/play-track.js";
+export { type Channel, type Track, trackBytes } from "./clip/track.js";
+export { type Arc, type ArcRequest, arcPosition, arcVelocity, solveArc } from "./flight/arc.js";
+export { type Flight, fly } from "./flight/flight.js";
+export type { Launch } from "./flight/launch.js";
+export { axisShares, turnsAboutMomentum } from "./flight/turns.js";
+export { type Model, ModelError, type ResolveResource } from "./gltf/model.js";
+export { readModel } from "./gltf/read.js";
+export { type ClipChannel, type Graft, type NewClip, type NewNode, spliceGlb } from "./gltf/splice.js";
+export { throwClips } from "./gltf/throw-clips.js";
+export type { Mat3 } from "./math/mat3.js";
+export type { Quat } from "./math/quat.js";
+export { RequestError } from "./math/request-error.js";
+export type { Vec3 } from "./math/vec3.js";
+export { propDirection } from "./prop/directions.js";
+export { type Kind, kindOf } from "./prop/kind.js";
+export { type Prop, type PropOptions, weigh } from "./prop/prop.js";
+export { type Shape, shapeModel } from "./prop/shape.js";
+export type { ClipRecord, MotionState, PropRecord, TakesRecord } from "./record/clip-record.js";
+export { formatRecord } from "./record/format.js";
+export { VERSION } from "./record/version.js";
+export { ThrowFileError } from "./throwfile/errors.js";
+export { parseThrowFile } from "./throwfile/parse.js";
+export { throwFileSchema } from "./throwfile/schema.js";
+export type { ThrowFile } from "./throwfile/types.js";
