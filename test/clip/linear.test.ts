@@ -167,6 +167,18 @@ describe("the keys", () => {
     );
   });
 
+  it("are the same when the flight's quaternions jump from q to -q, which is the same rotation", () => {
+    const flight = thrown({ spin: [1, 6, 9] });
+    const jumping: Flight = {
+      ...flight,
+      orientationInto(t, out, offset = 0) {
+        flight.orientationInto(t, out, offset);
+        if (out[offset + 3] < 0) for (let i = offset; i < offset + 4; i++) out[i] = -out[i];
+      },
+    };
+    expect(linearTrack(jumping, offCenter, 0.001)).toEqual(linearTrack(flight, offCenter, 0.001));
+  });
+
   it("begin and end in the true poses, to float32", () => {
     // A duration that float32 cannot hold.
     const flight = thrown({ spin: [1, 6, 9], duration: 0.7 });
