@@ -14,23 +14,23 @@ export interface ShapeMesh {
   indices: number[];
 }
 
-/** Edges round an axis. */
-const AROUND = 32;
-/** Edges from pole to pole of a ball, and round the tube of a ring. */
-const ALONG = 16;
-
-/** The mesh of a shape: corners lie on the ideal surface, so that a round one is a little smaller. */
-export function shapeMesh(shape: Shape): ShapeMesh {
+/**
+ * The mesh of a shape: corners lie on the ideal surface, so that a round one is a little smaller.
+ *
+ * @param around edges round an axis, a multiple of 8; half as many from pole to pole and round the tube of a ring
+ */
+export function shapeMesh(shape: Shape, around = 32): ShapeMesh {
+  const along = around / 2;
+  const turned = (...profiles: Profile[]) => lathe(profiles, around);
   if ("box" in shape) return boxMesh(shape.box);
-  if ("sphere" in shape)
-    return stretch(lathe([ball(1, 0, 0, ALONG)]), [shape.sphere, shape.sphere, shape.sphere]);
-  if ("ellipsoid" in shape) return stretch(lathe([ball(1, 0, 0, ALONG)]), shape.ellipsoid);
-  if ("ring" in shape) return lathe([tubeRound(shape.ring.radius, shape.ring.thickness / 2)]);
-  if ("tube" in shape) return lathe(tubeProfile(shape.tube.outer, shape.tube.inner, shape.tube.length));
-  if ("cylinder" in shape) return lathe(cylinderProfile(shape.cylinder.radius, shape.cylinder.length));
-  if ("disc" in shape) return lathe(cylinderProfile(shape.disc.radius, shape.disc.thickness));
-  if ("cone" in shape) return lathe(coneProfile(shape.cone.radius, shape.cone.length));
-  return lathe([capsuleProfile(shape.capsule.radius, shape.capsule.length)]);
+  if ("sphere" in shape) return turned(ball(shape.sphere, 0, 0, along, along));
+  if ("ellipsoid" in shape) return stretch(turned(ball(1, 0, 0, along, along)), shape.ellipsoid);
+  if ("ring" in shape) return turned(tubeRound(shape.ring.radius, shape.ring.thickness / 2, along));
+  if ("tube" in shape) return turned(...tubeProfile(shape.tube.outer, shape.tube.inner, shape.tube.length));
+  if ("cylinder" in shape) return turned(...cylinderProfile(shape.cylinder.radius, shape.cylinder.length));
+  if ("disc" in shape) return turned(...cylinderProfile(shape.disc.radius, shape.disc.thickness));
+  if ("cone" in shape) return turned(...coneProfile(shape.cone.radius, shape.cone.length));
+  return turned(capsuleProfile(shape.capsule.radius, shape.capsule.length, along));
 }
 
 /** A point of a profile: radius, height, and the normal's share of both. */
@@ -67,24 +67,24 @@ const coneProfile = (radius: number, length: number): Profile[] => [
   line([radius, -length / 2], [0, length / 2]),
 ];
 
-const capsuleProfile = (radius: number, length: number): Profile => {
+const capsuleProfile = (radius: number, length: number, along: number): Profile => {
   const half = length / 2 - radius;
-  const lower = ball(radius, -half, 0, ALONG / 2);
-  const upper = ball(radius, half, ALONG / 2, ALONG);
+  const lower = ball(radius, -half, 0, along / 2, along);
+  const upper = ball(radius, half, along / 2, along, along);
   return half > 0 ? [...lower, ...upper] : [...lower, ...upper.slice(1)];
 };
 
-/** The steps `first` to `last` of a half circle of `ALONG` steps from the lower to the upper pole. */
-function ball(radius: number, height: number, first: number, last: number): Profile {
+/** The steps `first` to `last` of a half circle of `along` steps from the lower to the upper pole. */
+function ball(radius: number, height: number, first: number, last: number, along: number): Profile {
   return Array.from({ length: last - first + 1 }, (_, i) => {
-    const [outwards, upwards] = onCircle(first + i - ALONG / 2, 2 * ALONG);
+    const [outwards, upwards] = onCircle(first + i - along / 2, 2 * along);
     return [radius * outwards, height + radius * upwards, outwards, upwards];
   });
 }
 
-function tubeRound(radius: number, thickness: number): Profile {
-  return Array.from({ length: ALONG + 1 }, (_, i) => {
-    const [outwards, upwards] = onCircle(i - ALONG / 2, ALONG);
+function tubeRound(radius: number, thickness: number, along: number): Profile {
+  return Array.from({ length: along + 1 }, (_, i) => {
+    const [outwards, upwards] = onCircle(i - along / 2, along);
     return [radius + thickness * outwards, thickness * upwards, outwards, upwards];
   });
 }
@@ -111,7 +111,7 @@ function onCircle(step: number, steps: number): readonly [number, number] {
 }
 
 /** Profiles turned round +Y; each has a band of the texture of its own. */
-function lathe(profiles: readonly Profile[]): ShapeMesh {
+function lathe(profiles: readonly Profile[], around: number): ShapeMesh {
   const mesh: ShapeMesh = { positions: [], normals: [], uvs: [], indices: [] };
   profiles.forEach((profile, band) => {
     const lengths = [0];
@@ -121,19 +121,19 @@ function lathe(profiles: readonly Profile[]): ShapeMesh {
       );
     const base = mesh.positions.length / 3;
     profile.forEach(([radius, height, outwards, upwards], row) => {
-      for (let column = 0; column <= AROUND; column++) {
-        const [c, s] = onCircle(column, AROUND);
+      for (let column = 0; column <= around; column++) {
+        const [c, s] = onCircle(column, around);
         // From above, +Z turns towards +X: counter-clockwise, as +Y points to the viewer.
         mesh.positions.push(radius * s, height, radius * c);
         mesh.normals.push(outwards * s, upwards, outwards * c);
         const v = (band + lengths[row] / lengths[profile.length - 1]) / profiles.length;
-        mesh.uvs.push(column / AROUND, 1 - v);
+        mesh.uvs.push(column / around, 1 - v);
       }
     });
     for (let row = 0; row + 1 < profile.length; row++)
-      for (let column = 0; column < AROUND; column++) {
-        const a = base + row * (AROUND + 1) + column;
-        const above = a + AROUND + 1;
+      for (let column = 0; column < around; column++) {
+        const a = base + row * (around + 1) + column;
+        const above = a + around + 1;
         // Where the profile ends on the axis, one of the two triangles has no area.
         if (profile[row][0] > 0) mesh.indices.push(a, a + 1, above);
         if (profile[row + 1][0] > 0) mesh.indices.push(a + 1, above + 1, above);
