@@ -2,7 +2,7 @@ import { ACCESSOR_TYPES, COMPONENT_BYTES, elementBytes, UNSIGNED } from "./acces
 import type { Checker, JsonObject } from "./checker.js";
 
 /** Bytes that an accessor without a view may stand for: those are zeros made from nothing. */
-const GREATEST_FROM_NOTHING = 1 << 26;
+const GREATEST_FROM_NOTHING = 1 << 24;
 
 /** Checks that buffer views lie within their buffers and accessors within their views, before anything is allocated. */
 export function checkAccessors(json: JsonObject, check: Checker): void {

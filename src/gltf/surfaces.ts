@@ -21,7 +21,7 @@ export interface Surface {
   triangles: Uint32Array;
 }
 
-/** Corners of triangles over all instances: a mesh may be shown by any number of nodes. */
+/** Corners of triangles over all instances and morph targets: a mesh may be shown by any number of nodes. */
 const GREATEST_CORNERS = 15_000_000;
 const GREATEST_INSTANCES = 100_000;
 
@@ -80,7 +80,7 @@ function listInstances(model: Model, nodes: number[], warnings: Set<string>): In
     }
     for (const { primitive, where } of primitives) {
       const { count } = json.accessors![primitive.indices ?? primitive.attributes.POSITION];
-      corners += (primitive.mode ?? 4) === 4 ? count : 3 * count;
+      corners += ((primitive.mode ?? 4) === 4 ? count : 3 * count) * (1 + (primitive.targets?.length ?? 0));
       instances.push({ node, primitive, where, weights: weights ?? json.meshes![mesh].weights ?? [] });
       if (corners > GREATEST_CORNERS || instances.length > GREATEST_INSTANCES)
         throw new ModelError(
@@ -141,15 +141,18 @@ function readSurface(
         point[2] + weight * element[2],
       ];
     }
-    const placed = applyFrame(frameOf(vertex), point);
-    if (!placed.every(Number.isFinite))
-      throw new ModelError(
-        model.name,
-        `the position of vertex ${vertex} of ${where} is ${placed}`,
-        "it must be finite",
-      );
-    scenePositions.set(placed, 3 * i);
+    const [x, y, z] = applyFrame(frameOf(vertex), point);
+    scenePositions[3 * i] = x;
+    scenePositions[3 * i + 1] = y;
+    scenePositions[3 * i + 2] = z;
   });
+  const infinite = scenePositions.findIndex((value) => !Number.isFinite(value));
+  if (infinite >= 0)
+    throw new ModelError(
+      model.name,
+      `${where} has a position that is ${scenePositions[infinite]} (vertex ${vertices[Math.floor(infinite / 3)]})`,
+      "it must be finite",
+    );
   if (vertices.length > 0 && determinant(frameOf(vertices[0]).linear) < 0) turnRound(triangles);
   return {
     nodeName: json.nodes![node].name ?? "",
@@ -165,15 +168,21 @@ function compact(
   vertexCount: number,
   refuse: (vertex: number) => never,
 ): { triangles: Uint32Array; vertices: Uint32Array } {
+  // Many primitives may share one long list of vertices: a table of all of them is for those that use a good part.
+  const table = vertexCount <= 8 * list.length ? new Int32Array(vertexCount).fill(-1) : undefined;
   const numbers = new Map<number, number>();
+  const vertices = new Uint32Array(list.length);
+  let count = 0;
   const triangles = list.map((vertex) => {
-    const known = numbers.get(vertex);
-    if (known !== undefined) return known;
     if (vertex >= vertexCount) refuse(vertex);
-    numbers.set(vertex, numbers.size);
-    return numbers.size - 1;
+    const known = table ? table[vertex] : (numbers.get(vertex) ?? -1);
+    if (known >= 0) return known;
+    if (table) table[vertex] = count;
+    else numbers.set(vertex, count);
+    vertices[count] = vertex;
+    return count++;
   });
-  return { triangles, vertices: Uint32Array.from(numbers.keys()) };
+  return { triangles, vertices: vertices.slice(0, count) };
 }
 
 function turnRound(triangles: Uint32Array): void {

@@ -28,7 +28,7 @@ describe("files that must be refused", () => {
     ["declared_4gb.glb", "the header states 4294967295 bytes and the file has 760"],
     ["index_out_of_range.glb", "meshes[0].primitives[0] uses vertex 9; it has 4 vertices"],
     ["missing_buffer.gltf", 'the file "nowhere.bin" (buffers[0].uri) cannot be read: no such file'],
-    ["nan_positions.glb", "the position of vertex 2 of meshes[0].primitives[0] is NaN"],
+    ["nan_positions.glb", "meshes[0].primitives[0] has a position that is NaN (vertex 2)"],
     ["node_cycle.glb", "node 1 is its own ancestor"],
     ["not_gltf.glb", "its JSON is not UTF-8"],
     ["path_traversal.gltf", 'buffers[0].uri "../../outside.bin" leads to a parent folder'],
