@@ -1,5 +1,6 @@
 import type { Model } from "../gltf/model.js";
 import { nodeFrame } from "../gltf/surfaces.js";
+import { nearestName } from "../math/nearest-name.js";
 import { IDENTITY, type Quat } from "../math/quat.js";
 import { RequestError } from "../math/request-error.js";
 import { scale as scaleVector, type Vec3 } from "../math/vec3.js";
@@ -130,20 +131,17 @@ function namedPoints(
       throw new RequestError(
         ["points", name, "node"],
         `there is no node "${point.node}"`,
-        "json" in source
-          ? `the model has ${nodeNames(source) || "no named nodes"}`
-          : "a shape has no nodes: give a place [x, y, z]",
+        "json" in source ? nodeHint(source, point.node) : "a shape has no nodes: give a place [x, y, z]",
       );
     return [name, { position: scaleVector(frame.position, scale), rotation: frame.rotation }];
   });
   return Object.fromEntries(found);
 }
 
-const nodeNames = (model: Model) =>
-  (model.json.nodes ?? [])
-    .flatMap((node) => (node.name ? [`"${node.name}"`] : []))
-    .slice(0, 20)
-    .join(", ");
+function nodeHint({ json }: Model, wanted: string): string {
+  const names = (json.nodes ?? []).flatMap((node) => (node.name ? [node.name] : []));
+  return names.length > 0 ? `nearest is "${nearestName(wanted, names)}"` : "the model has no named nodes";
+}
 
 function reachWarnings(reach: number): string[] {
   if (reach >= USUAL_REACH[0] && reach <= USUAL_REACH[1]) return [];
