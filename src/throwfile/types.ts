@@ -5,6 +5,7 @@
  */
 
 import type { Vec3 } from "../math/vec3.js";
+import type { Shape } from "../prop/shape.js";
 
 /** One of these, evenly; or take n gets the n-th, round and round. Never empty. */
 export type Choice<T> = { readonly pick: readonly T[] } | { readonly each: readonly T[] };
@@ -69,24 +70,6 @@ export type Facing =
   | "release"
   /** At arrival on a floor only: flat on a stable face. */
   | "rest";
-
-/** A primitive, axis +Y, centred; metres. */
-export type Shape =
-  /** Whole edges. */
-  | { readonly box: Vec3 }
-  | { readonly sphere: number }
-  /** Half axes. */
-  | { readonly ellipsoid: Vec3 }
-  | { readonly cylinder: { readonly radius: number; readonly length: number } }
-  /** Base at -Y. */
-  | { readonly cone: { readonly radius: number; readonly length: number } }
-  /** Length over all. */
-  | { readonly capsule: { readonly radius: number; readonly length: number } }
-  /** Radius to the middle of the tube; thickness: the tube's diameter. */
-  | { readonly ring: { readonly radius: number; readonly thickness: number } }
-  | { readonly disc: { readonly radius: number; readonly thickness: number } }
-  /** Radii. */
-  | { readonly tube: { readonly outer: number; readonly inner: number; readonly length: number } };
 
 /** `props.NAME`, in the model's frame; not touched by `host`. */
 export interface PropEntry {

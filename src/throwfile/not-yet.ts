@@ -1,0 +1,61 @@
+/**
+ * Keys that the grammar has and the program cannot do yet. They are checked like all others, then refused by name. Work
+ * that makes one possible takes its line out.
+ */
+
+import { pathText, shown } from "./errors.js";
+import { type Node, plain } from "./tree.js";
+import type { KeyPath } from "./types.js";
+
+interface NotYet {
+  /** Keys with dots between, `*` for any name. */
+  readonly key: string;
+  /** What is missing. */
+  readonly missing: string;
+  /** The one value that works already. */
+  readonly save?: unknown;
+}
+
+export const NOT_YET: readonly NotYet[] = [
+  { key: "throws.*.arrive.facing", missing: "no spin is solved for an orientation at arrival" },
+  { key: "throws.*.arrive.scatter", missing: "no spin is solved for an orientation at arrival" },
+  { key: "throws.*.arrive.floor", missing: "no first touch of a floor is found" },
+  { key: "throws.*.limits", missing: "no take is held to limits" },
+  { key: "throws.*.hold", missing: "no clip stands still before or after its flight" },
+  { key: "chains", missing: "throws are not joined" },
+  { key: "bake.keys", missing: "no other keys are written", save: "linear" },
+  { key: "bake.layout", missing: "no other nodes are written", save: "one-node" },
+  { key: "bake.files", missing: "clips are not spread over files in another way", save: "per-throw" },
+  { key: "bake.container", missing: "no .gltf is written", save: "glb" },
+  { key: "bake.mesh", missing: "the mesh is always written", save: true },
+  { key: "bake.pack", missing: "numbers are not packed", save: "float" },
+  { key: "props.*.node", missing: "a model is weighed and animated whole" },
+  { key: "props.*.solid", missing: "what is solid cannot be chosen", save: "auto" },
+  { key: "props.*.wall", missing: "the thickness of walls cannot be chosen" },
+];
+
+export function checkNotYet(
+  root: Node,
+  tell: (path: KeyPath, fault: string, remedy: string) => void,
+  table: readonly NotYet[] = NOT_YET,
+): void {
+  for (const { key, missing, save } of table)
+    for (const [path, node] of matches(root, key.split("."))) {
+      if (node.kind === "value" && (node.value === undefined || (save !== undefined && node.value === save)))
+        continue;
+      const found = node.kind === "value" ? ` (found ${shown(plain(node))})` : "";
+      const right = save === undefined ? "leave this key out" : `leave this key out, or write ${shown(save)}`;
+      tell(path, `${pathText(path.slice(-1))} is not there yet: ${missing}${found}`, right);
+    }
+}
+
+function matches(root: Node, keys: readonly string[]): [KeyPath, Node][] {
+  let found: [KeyPath, Node][] = [[[], root]];
+  for (const key of keys)
+    found = found.flatMap(([path, node]): [KeyPath, Node][] => {
+      if (node.kind !== "map") return [];
+      const names = key === "*" ? [...node.entries.keys()] : node.entries.has(key) ? [key] : [];
+      return names.map((name) => [[...path, name], node.entries.get(name)!.node]);
+    });
+  return found;
+}
