@@ -16,8 +16,8 @@ export function longestSegments(
     let good = from;
     let bad = last + 1;
     let to = Math.min(from + length, last);
-    // An eighth of the last length at first, then twice as far each time.
-    for (let hop = Math.max(1, length >> 3); ; hop *= 2) {
+    // A sixteenth of the last length at first, then twice as far each time.
+    for (let hop = Math.max(1, length >> 4); ; hop *= 2) {
       if (fits(from, to)) good = to;
       else bad = to;
       const up = bad > last;

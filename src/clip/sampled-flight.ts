@@ -130,7 +130,10 @@ function rotationInto(
   const y = out[offset + 1];
   const z = out[offset + 2];
   const w = out[offset + 3];
-  const [bx, by, bz, bw] = fromModel;
+  const bx = fromModel[0];
+  const by = fromModel[1];
+  const bz = fromModel[2];
+  const bw = fromModel[3];
   const mx = w * bx + x * bw + y * bz - z * by;
   const my = w * by - x * bz + y * bw + z * bx;
   const mz = w * bz + x * by - y * bx + z * bw;

@@ -33,7 +33,11 @@ function recorded(flight: Flight): Document {
     ["translation", accessor(translations, "VEC3")],
     ["rotation", accessor(rotations, "VEC4")],
   ] as const) {
-    const sampler = document.createAnimationSampler().setInput(input).setOutput(output);
+    const sampler = document
+      .createAnimationSampler()
+      .setInterpolation("LINEAR")
+      .setInput(input)
+      .setOutput(output);
     const channel = document
       .createAnimationChannel()
       .setTargetNode(node)
