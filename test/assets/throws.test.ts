@@ -1,0 +1,155 @@
+import { readFile } from "node:fs/promises";
+import { fileURLToPath } from "node:url";
+import { beforeAll, describe, expect, it } from "vitest";
+import { loadProps } from "../../src/bake/props.js";
+import { solveTake, type Take } from "../../src/bake/take.js";
+import { axisShares } from "../../src/flight/turns.js";
+import { readModel } from "../../src/gltf/read.js";
+import { conjugate, multiply, type Quat, rotate } from "../../src/math/quat.js";
+import { dot, length, type Vec3 } from "../../src/math/vec3.js";
+import type { Prop } from "../../src/prop/prop.js";
+import { parseThrowFile } from "../../src/throwfile/parse.js";
+import { type ThrowFile, takeNumbers } from "../../src/throwfile/types.js";
+
+const ASSETS = new URL("../../assets/", import.meta.url);
+const NAME = "quay.throws.yaml";
+
+let file: ThrowFile;
+const props = new Map<string, Prop>();
+const takes = new Map<string, Take[]>();
+
+beforeAll(async () => {
+  file = parseThrowFile(NAME, await readFile(fileURLToPath(new URL(NAME, ASSETS)), "utf8"));
+  const loaded = await loadProps(file, new Set(file.props.keys()), async (path) => {
+    const bytes = await readFile(fileURLToPath(new URL(path, ASSETS)));
+    return { model: await readModel(path, new Uint8Array(bytes)), sha256: "" };
+  });
+  for (const [name, { prop }] of loaded) props.set(name, prop);
+  for (const entry of file.throws.values()) {
+    const prop = props.get(entry.prop)!;
+    takes.set(
+      entry.name,
+      takeNumbers(entry.takes).map((number) => solveTake(file, entry, prop, number)),
+    );
+  }
+});
+
+const takesOf = (name: string) => takes.get(name)!;
+
+/** Turns the model from as modelled. */
+function pose(name: string, { flight }: Take, time: number): Quat {
+  const prop = props.get(file.throws.get(name)!.prop)!;
+  return multiply(flight.orientation(time), conjugate(prop.principal.axes));
+}
+
+/** Where a direction of the model points at an end of the flight. */
+const pointing = (name: string, take: Take, direction: Vec3, time: number) =>
+  rotate(pose(name, take, time), direction);
+
+const mean = (values: number[]) => values.reduce((sum, value) => sum + value, 0) / values.length;
+
+it("every throw gets all its takes", () => {
+  expect(file.throws.size).toBeGreaterThanOrEqual(10);
+  for (const list of takes.values()) expect(list.length).toBeGreaterThanOrEqual(8);
+});
+
+it("every prop weighs what such a thing weighs, without a warning", () => {
+  // kg, from memory: such a spanner 0.3–0.5, an ash oar of 2.1 m 2–3, a rope quoit 0.2–0.3, a hand lantern 0.3–0.6, a
+  // marlinspike 0.3–0.7, a small crate 2–3 and its 4 of tea; a coin of the token's size and 3 mm 0.03–0.04.
+  const kilograms: Record<string, [number, number]> = {
+    spanner: [0.3, 0.5],
+    oar: [2, 3],
+    quoit: [0.2, 0.3],
+    token: [0.03, 0.04],
+    lantern: [0.3, 0.6],
+    marlinspike: [0.3, 0.7],
+    "tea-crate": [6, 7],
+  };
+  expect([...props.keys()].sort()).toEqual(Object.keys(kilograms).sort());
+  for (const [name, [least, most]] of Object.entries(kilograms)) {
+    const { mass, warnings } = props.get(name)!;
+    expect(warnings, name).toEqual([]);
+    expect(mass, name).toBeGreaterThan(least);
+    expect(mass, name).toBeLessThan(most);
+  }
+});
+
+it("everything flies as a hand can throw it", () => {
+  // From memory: a relaxed throw leaves the hand at 3 to 12 m/s and flies for half a second to two; what slips off an edge is slower.
+  for (const [name, list] of takes) {
+    for (const { flight } of list) {
+      expect(length(flight.velocity(0)), name).toBeGreaterThan(name === "crate-slips" ? 0.5 : 2.7);
+      expect(length(flight.velocity(0)), name).toBeLessThan(12);
+      expect(flight.duration, name).toBeGreaterThan(0.4);
+      expect(flight.duration, name).toBeLessThan(1.8);
+    }
+  }
+});
+
+describe("what the comments of the throw file claim", () => {
+  it("the spanner about its short axis turns about that alone, and lies as it lay when it is caught", () => {
+    const name = "spanner-hand-to-hand";
+    for (const take of takesOf(name)) {
+      expect(axisShares(take.flight)[2]).toBeGreaterThan(0.999);
+      const [start, end] = [0, take.flight.duration].map((time) => pointing(name, take, [0, 0, 1], time));
+      expect(dot(start, end)).toBeGreaterThan(0.999);
+    }
+  });
+
+  it("the spanner about its middle axis turns over: its flat side faces the other way at some time", () => {
+    for (const { flight } of takesOf("spanner-tumble")) {
+      const middleSpin = Array.from({ length: 200 }, (_, i) => flight.spin((flight.duration * i) / 199)[1]);
+      expect(Math.max(...middleSpin)).toBeGreaterThan(0);
+      expect(Math.min(...middleSpin)).toBeLessThan(0);
+    }
+  });
+
+  it("the spike's point stays where it was aimed while it drills, and is in front after a turn and a half", () => {
+    for (const take of takesOf("spike-to-mast")) {
+      const [start, end] = [0, take.flight.duration].map((time) =>
+        pointing("spike-to-mast", take, [0, 1, 0], time),
+      );
+      expect(dot(start, end)).toBeGreaterThan(Math.cos((10 * Math.PI) / 180));
+    }
+    for (const take of takesOf("spike-end-over-end")) {
+      const end = pointing("spike-end-over-end", take, [0, 1, 0], take.flight.duration);
+      expect(end[2]).toBeGreaterThan(0.99);
+    }
+  });
+
+  it("the oar's blade stays in the plane of the turn one way, and rolls over the other", () => {
+    const greatestTilt = (name: string, blade: Vec3) =>
+      takesOf(name).map((take) =>
+        Math.max(
+          ...Array.from({ length: 100 }, (_, i) => {
+            const now = pointing(name, take, blade, (take.flight.duration * i) / 99);
+            return (Math.acos(Math.min(1, dot(now, pointing(name, take, blade, 0)))) * 180) / Math.PI;
+          }),
+        ),
+      );
+    // The direction along the axis of the turn: the blade's normal is z, its width x.
+    for (const degrees of greatestTilt("oar-end-over-end", [0, 0, 1])) expect(degrees).toBeLessThan(25);
+    for (const degrees of greatestTilt("oar-blade-rolls", [1, 0, 0])) expect(degrees).toBeGreaterThan(90);
+  });
+
+  it("the token leaves the thumb heads up and tails up by turns", () => {
+    takesOf("token-flip").forEach((take, i) => {
+      // scattered by up to 4 degrees
+      expect(pointing("token-flip", take, [0, 1, 0], 0)[1] * (i % 2 ? -1 : 1)).toBeGreaterThan(0.99);
+    });
+  });
+
+  it("of the lantern's two arcs the one under the awning takes twice as long", () => {
+    const durations = takesOf("lantern-to-deck").map(({ flight }) => flight.duration);
+    const [low, high] = [0, 1].map((odd) => mean(durations.filter((_, i) => i % 2 === odd)));
+    expect(high / low).toBeGreaterThan(2);
+  });
+
+  it("the drifting lantern needs a quarter to a third of the Earth's gravity", () => {
+    for (const { flight } of takesOf("lantern-drifts")) {
+      const share = length(flight.launch.gravity) / 9.80665; // standard gravity, CGPM 1901
+      expect(share).toBeGreaterThan(0.2);
+      expect(share).toBeLessThan(0.37);
+    }
+  });
+});
