@@ -28,7 +28,8 @@ import {
 } from "./reference.js";
 
 // Expected numbers come from test/math/reference.ts (whole-number arithmetic of 60 digits and more, other methods), which is
-// itself held to printed digits below.
+// itself held to printed digits below. The promise is 1 ulp (tan: 2); the bounds here are a little above the greatest errors
+// measured over 20,000 arguments each, so that a lost correction shows.
 
 const random = seedrandom("elementary");
 const between = (lo: number, hi: number): number => lo + (hi - lo) * random();
@@ -90,7 +91,7 @@ describe("the reference", () => {
   });
 });
 
-describe("sine, cosine and tangent stay below 1, 1 and 2 ulp", () => {
+describe("sine, cosine and tangent keep their last digit", () => {
   const multiples = list(600, (i) => {
     const n = i < 200 ? i + 1 : Math.floor(2 ** between(1, 40));
     return nudge(n * (Math.PI / 2), Math.floor(between(-2, 3)));
@@ -115,10 +116,10 @@ describe("sine, cosine and tangent stay below 1, 1 and 2 ulp", () => {
         const bits = bitsFor(x);
         return [sineCosine(x, bits).sine, bits];
       }).ulp,
-    ).toBeLessThan(1);
+    ).toBeLessThan(0.8);
   });
   it("cos", () => {
-    expect(worst(args, cos, (x) => [sineCosine(x, 200).cosine, 200]).ulp).toBeLessThan(1);
+    expect(worst(args, cos, (x) => [sineCosine(x, 200).cosine, 200]).ulp).toBeLessThan(0.8);
   });
   it("tan", () => {
     expect(
@@ -127,11 +128,11 @@ describe("sine, cosine and tangent stay below 1, 1 and 2 ulp", () => {
         const { sine, cosine } = sineCosine(x, bits);
         return [(sine << BigInt(bits)) / cosine, bits];
       }).ulp,
-    ).toBeLessThan(2);
+    ).toBeLessThan(1.9);
   });
 });
 
-describe("inverse functions stay below 1 ulp", () => {
+describe("inverse functions keep their last digit", () => {
   const args = [
     ...list(1500, () => between(-1, 1)),
     ...list(200, () => spread(-60, 0)),
@@ -151,7 +152,7 @@ describe("inverse functions stay below 1 ulp", () => {
   };
 
   it("acos", () => {
-    expect(worst(args, acos, (x) => [angleOf(x, 300), 300]).ulp).toBeLessThan(1);
+    expect(worst(args, acos, (x) => [angleOf(x, 300), 300]).ulp).toBeLessThan(0.65);
   });
   it("asin", () => {
     expect(
@@ -163,7 +164,7 @@ describe("inverse functions stay below 1 ulp", () => {
           v === one ? pi(bits) / 2n : arctangent(v, squareRoot(one - ((v * v) >> BigInt(bits)), bits), bits);
         return [x < 0 ? -angle : angle, bits];
       }).ulp,
-    ).toBeLessThan(1);
+    ).toBeLessThan(0.7);
   });
 
   const arctangentOf = (y: number, x: number): [bigint, number] => {
@@ -183,7 +184,7 @@ describe("inverse functions stay below 1 ulp", () => {
       ...around(0.4375, 0.6875, 1.1875, 2.4375, 1),
       Number.MAX_VALUE,
     ];
-    expect(worst(all, atan, (x) => arctangentOf(x, 1)).ulp).toBeLessThan(1);
+    expect(worst(all, atan, (x) => arctangentOf(x, 1)).ulp).toBeLessThan(0.75);
   });
   it("atan2, all four quadrants", () => {
     const all: [number, number][] = [
@@ -201,11 +202,11 @@ describe("inverse functions stay below 1 ulp", () => {
         ([y, x]) => atan2(y, x),
         ([y, x]) => arctangentOf(y, x),
       ).ulp,
-    ).toBeLessThan(1);
+    ).toBeLessThan(0.75);
   });
 });
 
-describe("exponential and logarithm stay below 1 ulp, powers too", () => {
+describe("exponential, logarithm and powers keep their last digit", () => {
   it("exp, down to subnormal results", () => {
     const args = [
       ...list(800, () => between(-2, 2)),
@@ -215,7 +216,7 @@ describe("exponential and logarithm stay below 1 ulp, powers too", () => {
       ...around(Math.LN2 / 2, -Math.LN2 / 2, 1, -1),
       709.782712893384,
     ];
-    expect(worst(args, exp, (x) => [exponential(fixed(x, 1400), 1400), 1400]).ulp).toBeLessThan(1);
+    expect(worst(args, exp, (x) => [exponential(fixed(x, 1400), 1400), 1400]).ulp).toBeLessThan(0.7);
   });
   it("log, near 1 and of subnormals too", () => {
     const args = [
@@ -227,7 +228,7 @@ describe("exponential and logarithm stay below 1 ulp, powers too", () => {
       Number.MAX_VALUE,
       Number.MIN_VALUE,
     ];
-    expect(worst(args, log, (x) => [logarithm(x, 300), 300]).ulp).toBeLessThan(1);
+    expect(worst(args, log, (x) => [logarithm(x, 300), 300]).ulp).toBeLessThan(0.85);
   });
   it("pow, up to the ends of a double's range", () => {
     const args: [number, number][] = [
@@ -259,7 +260,7 @@ describe("exponential and logarithm stay below 1 ulp, powers too", () => {
           return [exponential(e >= 0 ? product << BigInt(e) : product >> BigInt(-e), 1500), 1500];
         },
       ).ulp,
-    ).toBeLessThan(1);
+    ).toBeLessThan(0.7);
   });
   it("whole powers that a double can hold are exact", () => {
     // exact in integer arithmetic
@@ -269,7 +270,7 @@ describe("exponential and logarithm stay below 1 ulp, powers too", () => {
   });
 });
 
-describe("cube roots and lengths stay below 1 ulp", () => {
+describe("cube roots and lengths are all but perfectly rounded", () => {
   it("cbrt", () => {
     const args = [
       ...list(1500, () => between(-30, 30)),
@@ -283,7 +284,7 @@ describe("cube roots and lengths stay below 1 ulp", () => {
         const root = wholeRoot(fixed(Math.abs(x), 2400), 3n);
         return [x < 0 ? -root : root, 800];
       }).ulp,
-    ).toBeLessThan(1);
+    ).toBeLessThan(0.501);
   });
   it("hypot, where squares would leave the range too", () => {
     const args: [number, number][] = [
@@ -304,7 +305,7 @@ describe("cube roots and lengths stay below 1 ulp", () => {
           return [wholeRoot((a * a + b * b) << 400n, 2n), 1300];
         },
       ).ulp,
-    ).toBeLessThan(1);
+    ).toBeLessThan(0.501);
     // 2² + 3² + 6² = 7² and 1² + 2² + 4² + 10² = 11²: exact
     expect(hypot(2, -3, 6)).toBe(7);
     expect(hypot(1, 2, 4, 10)).toBe(11);
