@@ -29,8 +29,6 @@ export class Faults {
           this.tell([...here, key], "unknown key", () =>
             unknownKey(key, issue.message.split(" "), homes(schema, key)),
           );
-      else if (issue.code === "invalid_type" && found === undefined)
-        this.tell(here.slice(0, -1), `${inner.at(-1)} is missing`, `add ${inner.at(-1)}`);
       else if (issue.code === "invalid_type")
         this.tell(here, `not a map (found ${shown(found)})`, knownKeys(issue.message));
       // names are checked by names.ts
@@ -65,9 +63,10 @@ export class Faults {
   }
 }
 
+/** `message` names the keys, save of a map of names. */
 const knownKeys = (message: string) =>
-  message.includes("Invalid")
-    ? "keys and values"
+  /^Invalid/.test(message)
+    ? "NAME: value"
     : `a map with keys such as ${message.split(" ").slice(0, 4).join(", ")}`;
 
 /** Where within the entry a key that is unknown here is known. */

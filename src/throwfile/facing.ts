@@ -120,10 +120,17 @@ function readPairs(value: unknown[], tell: Tell): Facing | undefined {
   if (pairs.read(value, tell) === undefined) return undefined;
   const prop = choice(propDirection);
   const world = choice(worldDirection);
-  const read = (value as [unknown, unknown][]).map(([p, w], i) => [
-    prop.read(p, at(tell, i, 0)),
-    world.read(w, at(tell, i, 1)),
-  ]);
+  const read = (value as [unknown, unknown][]).map(([p, w], i) => {
+    if (isWorldWord(p) && typeof w === "string" && !isWorldWord(w)) {
+      tell(
+        `a pair the wrong way round (found ${shown([p, w])})`,
+        "[direction of the prop, direction of the world]",
+        i,
+      );
+      return [undefined];
+    }
+    return [prop.read(p, at(tell, i, 0)), world.read(w, at(tell, i, 1))];
+  });
   if (read.some((r) => r.includes(undefined))) return undefined;
   const facing = read as unknown as [FacingPair] | [FacingPair, FacingPair];
   if (facing.length === 2)
@@ -180,8 +187,8 @@ function nonZero<T>(form: Form<T>): Form<T> {
   };
 }
 
-const isWorldWord = (word: string): word is WorldDirectionName =>
-  (WORLD_DIRECTIONS as readonly string[]).includes(word);
+const isWorldWord = (word: unknown): word is WorldDirectionName =>
+  (WORLD_DIRECTIONS as readonly unknown[]).includes(word);
 
 /** Whether two directions are known to lie on one line, before anything is drawn and any prop weighed. */
 function parallel(a: unknown, b: unknown): boolean {

@@ -10,8 +10,16 @@ import type { Entry, MapNode, Node } from "./tree.js";
 /** `remedy` may be a function where it costs time: it is only asked for faults that are told. */
 export type TellThrow = (name: string, fault: string, remedy: string | (() => string)) => void;
 
-/** The throws with everything inherited; `tell` hears of a `like` that cannot be. */
-export function inherit(throws: MapNode, tell: TellThrow): MapNode {
+/**
+ * The throws with everything inherited. `tell` hears of a `like` that cannot be; `broken` are the throws that lack
+ * something because of it.
+ */
+export function inherit(throws: MapNode, tell: TellThrow): { throws: MapNode; broken: ReadonlySet<string> } {
+  const broken = new Set<string>();
+  const tellBroken: TellThrow = (name, fault, remedy) => {
+    broken.add(name);
+    tell(name, fault, remedy);
+  };
   const done = new Map<string, Entry>();
   for (const name of throws.entries.keys()) {
     // up to an ancestor already merged, or one like nothing; then down again
@@ -19,11 +27,13 @@ export function inherit(throws: MapNode, tell: TellThrow): MapNode {
     let current: string | undefined = name;
     while (current !== undefined && !done.has(current) && !chain.has(current)) {
       chain.add(current);
-      current = parentOf(throws, current, tell);
+      current = parentOf(throws, current, tellBroken);
     }
-    if (current !== undefined && chain.has(current)) tellCircle([...chain], current, tell);
+    if (current !== undefined && chain.has(current)) tellCircle([...chain], current, tellBroken);
     let parent = current !== undefined ? done.get(current) : undefined;
     for (const child of [...chain].reverse()) {
+      if (current !== undefined && broken.has(current)) broken.add(child);
+      current = child;
       const own: Entry = throws.entries.get(child)!;
       const merged: Entry = parent ? { at: own.at, node: merge(parent.node, own.node) } : own;
       done.set(child, merged);
@@ -32,7 +42,7 @@ export function inherit(throws: MapNode, tell: TellThrow): MapNode {
   }
   const entries = new Map<string, Entry>();
   for (const name of throws.entries.keys()) entries.set(name, done.get(name)!);
-  return { ...throws, entries };
+  return { throws: { ...throws, entries }, broken };
 }
 
 function tellCircle(chain: string[], start: string, tell: TellThrow): void {

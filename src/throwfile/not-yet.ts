@@ -3,7 +3,7 @@
  * that makes one possible takes its line out.
  */
 
-import { pathText, shown } from "./errors.js";
+import { shown } from "./errors.js";
 import { type Node, plain } from "./tree.js";
 import type { KeyPath } from "./types.js";
 
@@ -45,7 +45,7 @@ export function checkNotYet(
         continue;
       const found = node.kind === "value" ? ` (found ${shown(plain(node))})` : "";
       const right = save === undefined ? "leave this key out" : `leave this key out, or write ${shown(save)}`;
-      tell(path, `${pathText(path.slice(-1))} is not there yet: ${missing}${found}`, right);
+      tell(path, `not there yet: ${missing}${found}`, right);
     }
 }
 

@@ -37,7 +37,7 @@ export function number(rule: Rule = {}): Form<number> {
 /** A number that may be spread: `1.5..2.5`, `2 ± 0.2`, `{pick: […]}`, `{each: […]}`. */
 export function spreadNumber(rule: Rule = {}): Form<DrawableNumber> {
   const single = number(rule);
-  const expects = `${single.expects}, or a spread such as ${exampleRange(rule)}`;
+  const expects = `${single.expects}, or a spread such as ${exampleRange(rule)} or {pick: […]}`;
   return choice(
     {
       read: (value, tell) =>
@@ -55,7 +55,7 @@ export function spreadNumber(rule: Rule = {}): Form<DrawableNumber> {
 export function time(rule: Rule, frameRate: number): Form<DrawableNumber> {
   const seconds: Rule = { ...rule, unit: "seconds" };
   const forms = "whole frames such as 27f";
-  const expects = `${describe(seconds)}, ${forms}, or a spread such as 0.9..1.1 or 22f..26f`;
+  const expects = `${describe(seconds)}, ${forms}, or a spread such as 0.9..1.1, 22f..26f or {pick: […]}`;
   const plain = (value: unknown, tell: Tell, right: string): number | undefined => {
     const frames = typeof value === "string" ? FRAMES.exec(value) : null;
     if (frames === null) return plainNumber(value, seconds, right, tell);

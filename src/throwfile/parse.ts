@@ -13,7 +13,7 @@ import { checkNotYet } from "./not-yet.js";
 import { readYaml } from "./read-yaml.js";
 import { checkReferences } from "./references.js";
 import { rulesOf } from "./rules.js";
-import { chainSchema, fileSchema, propSchema, throwSchema } from "./schema.js";
+import { chainSchema, propSchema, throwSchema, USUAL, usualThrow } from "./schema.js";
 import { checkSpin } from "./spin-rules.js";
 import { find, locate, type MapNode, type Node, plain } from "./tree.js";
 import type { BakeSettings, ChainEntry, KeyPath, PropEntry, ThrowEntry, ThrowFile } from "./types.js";
@@ -31,13 +31,13 @@ export function parseThrowFile(name: string, text: string): ThrowFile {
       { ...written.at, path: [], fault: "not a map of keys", remedy: "keys such as props, throws, bake" },
     ]);
   const faults = new Faults();
-  const root = withInherited(written, faults);
+  const { root, broken } = withInherited(written, faults);
 
-  const shape = fileSchema(30).shape;
+  const shape = USUAL.shape;
   for (const key of root.entries.keys())
     if (!Object.hasOwn(shape, key))
       faults.tell([key], "unknown key", () =>
-        unknownKey(key, Object.keys(shape), key in shapeOfBake ? ["bake"] : []),
+        unknownKey(key, Object.keys(shape), Object.hasOwn(shape.bake.unwrap().shape, key) ? ["bake"] : []),
       );
   const top = <T>(key: string, schema: z.ZodType<T>): T | undefined => {
     const node = find(root, [key]);
@@ -61,7 +61,7 @@ export function parseThrowFile(name: string, text: string): ThrowFile {
 
   checkNames(root, faults.tell);
   const props = readProps(root, faults);
-  const throws = readThrows(root, written, frameRate, bake?.layout === "turn-only", faults);
+  const throws = readThrows(root, written, broken, frameRate, bake?.layout === "turn-only", faults);
   const chains = readChains(root, throws, faults);
   checkNotYet(root, faults.tell);
   faults.finish(name, written, root);
@@ -79,15 +79,18 @@ export function parseThrowFile(name: string, text: string): ThrowFile {
   };
 }
 
-const shapeOfBake = fileSchema(30).shape.bake.unwrap().shape;
-
-function withInherited(written: MapNode, faults: Faults): MapNode {
-  const throws = written.entries.get("throws");
-  if (throws?.node.kind !== "map") return written;
-  const node = inherit(throws.node, (name, fault, remedy) =>
+/** The file with every `like` carried out, and the names of throws where that failed. */
+function withInherited(written: MapNode, faults: Faults): { root: MapNode; broken: ReadonlySet<string> } {
+  const entry = written.entries.get("throws");
+  if (entry?.node.kind !== "map") return { root: written, broken: new Set() };
+  const { throws, broken } = inherit(entry.node, (name, fault, remedy) =>
     faults.tell(["throws", name, "like"], fault, remedy),
   );
-  return { ...written, entries: new Map(written.entries).set("throws", { at: throws.at, node }) };
+  const root = {
+    ...written,
+    entries: new Map(written.entries).set("throws", { at: entry.at, node: throws }),
+  };
+  return { root, broken };
 }
 
 /** The entries of a map of names that are maps themselves; what is not is told. */
@@ -150,16 +153,23 @@ function checkProp(prop: PropEntry, path: KeyPath, faults: Faults): void {
 function readThrows(
   root: Node,
   written: Node,
+  broken: ReadonlySet<string>,
   frameRate: number,
   turnOnly: boolean,
   faults: Faults,
 ): Map<string, ThrowEntry> {
   const throws = new Map<string, ThrowEntry>();
-  const schema = throwSchema(frameRate);
+  const schema = frameRate === 30 ? usualThrow : throwSchema(frameRate);
   const props = keysOf(root, ["props"]);
   for (const [name, value] of entriesOf(root, "throws", "NAME: {prop: …, release: …, arrive: …}", faults)) {
     const path = ["throws", name];
     const under = (key: string) => [...path, ...(key === "" ? [] : key.split("."))];
+    if (broken.has(name)) {
+      // what it would have inherited is no fault of its own
+      const read = schema.safeParse({ prop: "inherited", ...(value as object) });
+      if (!read.success) faults.tellIssues(path, value, schema, read.error.issues);
+      continue;
+    }
     const read = schema.safeParse(value);
     const keysAreRight = read.success || faults.tellIssues(path, value, schema, read.error.issues);
     if (keysAreRight) {

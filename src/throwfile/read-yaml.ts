@@ -73,7 +73,7 @@ export function readYaml(text: string): { root: Node | undefined; faults: Fault[
       .filter((e) => !seen.has(e.pos[0]) && seen.add(e.pos[0]))
       .map((e) => ({
         ...place(Math.min(e.pos[0], text.length)),
-        path: pathAt(document, e.pos[0]),
+        path: e.code === "MULTIPLE_DOCS" ? [] : pathAt(document, e.pos[0]),
         ...syntaxFault(e),
       }));
     return { root: undefined, faults };

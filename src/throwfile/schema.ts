@@ -7,7 +7,7 @@ import * as z from "zod";
 import { density, inertia, point, shape, weights } from "./bodies.js";
 import { axis, facing } from "./facing.js";
 import { fields } from "./fields.js";
-import { choice, type Form, list, NAME, name, text, word, yesNo } from "./form.js";
+import { choice, type Form, list, NAME, name, type Tell, text, word, yesNo } from "./form.js";
 import { host } from "./host.js";
 import { bounds, drawnVector, number, spreadNumber, time, vector } from "./numbers.js";
 import { gravity, seed, takes } from "./scalars.js";
@@ -17,10 +17,10 @@ const leaf = <T>(form: Form<T>, description: string) =>
   z
     .any()
     .transform((value, context): T => {
-      const read = form.read(value, (fault, remedy, ...path) =>
-        context.addIssue({ code: "custom", message: fault, params: { remedy }, path }),
-      );
-      return read as T;
+      const tell: Tell = (fault, remedy, ...path) =>
+        context.addIssue({ code: "custom", message: fault, params: { remedy }, path });
+      if (value === undefined) tell("this key is missing", form.expects);
+      return (value === undefined ? undefined : form.read(value, tell)) as T;
     })
     .meta({ description, ...form.json });
 
@@ -301,8 +301,8 @@ const bakeSchema = keys(
 const byName = <S extends z.ZodType>(entry: S, description: string) =>
   z.record(z.string().regex(NAME), entry).optional().meta({ description });
 
-/** The whole file. `frameRate` is what a time in frames is divided by. */
-export const fileSchema = (frameRate: number) =>
+/** The whole file. */
+const fileSchema = (throwEntry: typeof usualThrow) =>
   keys(
     {
       seed: defaulting(seed, "0", "text or whole number: another seed, other draws"),
@@ -318,15 +318,19 @@ export const fileSchema = (frameRate: number) =>
       ),
       bake: bakeSchema.prefault({}),
       props: byName(propSchema, "what is thrown, by name"),
-      throws: byName(throwSchema(frameRate), "the throws, by name"),
+      throws: byName(throwEntry, "the throws, by name"),
       chains: byName(chainSchema, "throws one after the other, by name"),
     },
     "a throw file of tossbake",
   );
 
+/** At the usual frame rate: built once, as building takes longer than reading. */
+export const usualThrow = throwSchema(30);
+export const USUAL = fileSchema(usualThrow);
+
 /** JSON Schema (draft 7, which editors know best) of the throw file, with a description for each key. */
 export function throwFileSchema(): Record<string, unknown> {
-  const schema = z.toJSONSchema(fileSchema(30), { io: "input", target: "draft-7" }) as Schema;
+  const schema = z.toJSONSchema(USUAL, { io: "input", target: "draft-7" }) as Schema;
   const { props, throws, chains } = schema.properties!;
   for (const map of [props, throws, chains]) (map as Schema).propertyNames = { pattern: NAME.source };
   inheritable(throws.additionalProperties as Schema);
