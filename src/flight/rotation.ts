@@ -1,3 +1,4 @@
+import { sumError } from "../math/elementary/exact.js";
 import { pow } from "../math/elementary.js";
 import { normalize, type Quat, rotate } from "../math/quat.js";
 import { length, normalize as normalizeVector, scale, type Vec3 } from "../math/vec3.js";
@@ -233,14 +234,13 @@ class Steps {
     out[offset + 3] = w / size;
   }
 
-  /** Writes the spin at a step's end with the digits that rounding to a double would lose (Knuth's exact sum). */
+  /** Writes the spin at a step's end with the digits that rounding to a double would lose. */
   endSpin(step: number, { high, low }: LongSpin): void {
     for (let a = 0; a < 3; a++) {
       let gain = low[a];
       for (let n = DEGREE; n > 0; n--) gain += this.spins[step * SPIN + 3 * n + a];
       const sum = high[a] + gain;
-      const part = sum - high[a];
-      low[a] = high[a] - (sum - part) + (gain - part);
+      low[a] = sumError(high[a], gain, sum);
       high[a] = sum;
     }
   }

@@ -1,3 +1,4 @@
+import { productError } from "../math/elementary/exact.js";
 import { CompensatedSum } from "../math/sum.js";
 import { cross, dot, type Vec3 } from "../math/vec3.js";
 
@@ -20,11 +21,14 @@ const NOISE = 1.3e-29;
  */
 export function spinInvariants(spin: Vec3, moments: Vec3): (state: LongSpin) => void {
   const greatest = Math.max(...moments);
-  const I: Vec3 = [moments[0] / greatest, moments[1] / greatest, moments[2] / greatest];
-  const middleMoment = [...I].sort((a, b) => a - b)[1];
-  const ofSquare: Vec3 = [I[0] * I[0], I[1] * I[1], I[2] * I[2]];
-  const weigh = (a: number): number => I[a] * (I[a] - middleMoment);
-  const ofMiddle: Vec3 = [weigh(0), weigh(1), weigh(2)];
+  const middle = [...moments].sort((a, b) => a - b)[1];
+  // differences before any rounding: those of a near-symmetric body are small and exact
+  const weights = (lessen: number): Vec3 => {
+    const weight = (moment: number): number => (moment / greatest) * ((moment - lessen) / greatest);
+    return [weight(moments[0]), weight(moments[1]), weight(moments[2])];
+  };
+  const ofSquare = weights(0);
+  const ofMiddle = weights(middle);
   const across = cross(ofMiddle, ofSquare);
 
   return ({ high, low }) => {
@@ -76,19 +80,4 @@ function addProduct(sum: CompensatedSum, a: number, b: number): void {
   const product = a * b;
   sum.add(product);
   sum.add(productError(a, b, product));
-}
-
-/** a·b − product, exactly, where `product` is a·b rounded (Dekker, Numerische Mathematik 18, 224, 1971). */
-function productError(a: number, b: number, product: number): number {
-  const aHigh = upperHalf(a);
-  const bHigh = upperHalf(b);
-  const aLow = a - aHigh;
-  const bLow = b - bHigh;
-  return aLow * bLow - (product - aHigh * bHigh - aLow * bHigh - aHigh * bLow);
-}
-
-/** The upper 26 bits. */
-function upperHalf(a: number): number {
-  const shifted = 134217729 * a;
-  return shifted - (shifted - a);
 }
