@@ -1,14 +1,6 @@
 import { createScanner } from "jsonc-parser";
+import { CLOSE_BRACE, CLOSE_BRACKET, COLON, END, OPEN_BRACE, OPEN_BRACKET, STRING } from "./json-tokens.js";
 import { ModelError } from "./model.js";
-
-/** Token kinds of jsonc-parser, whose own enumeration is gone once it is compiled. */
-const OPEN_BRACE = 1;
-const CLOSE_BRACE = 2;
-const OPEN_BRACKET = 3;
-const CLOSE_BRACKET = 4;
-const COLON = 6;
-const STRING = 10;
-const END = 17;
 
 /** Nesting beyond this is refused: no model needs it, and whatever recurses over the value later has a bounded stack. */
 const GREATEST_NESTING = 200;

@@ -66,6 +66,7 @@ describe("the container", () => {
     ["version 1", changed(4, 1), "the GLB version is 1"],
     ["a length too small", changed(8, 100), "the header states 100 bytes"],
     ["a JSON chunk of 4 GB", changed(12, 0xffffffff), "the chunk at byte 12 runs past the end"],
+    ["a JSON chunk as long as the file", changed(12, good.length), "the chunk at byte 12 runs past the end"],
     ["a first chunk of another type", changed(16, 0x12345678), "the first chunk is of type 0x12345678"],
     ["a header alone", good.slice(0, 12), "the file ends after 12 bytes"],
     ["nothing", new Uint8Array(), "it is not JSON"],

@@ -2,6 +2,7 @@ import { readFileSync } from "node:fs";
 import { NullEngine } from "@babylonjs/core/Engines/nullEngine.js";
 import "@babylonjs/core/Helpers/sceneHelpers.js";
 import { LoadSceneAsync } from "@babylonjs/core/Loading/sceneLoader.js";
+import { Logger } from "@babylonjs/core/Misc/logger.js";
 import { findNodeAtLocation, parseTree } from "jsonc-parser";
 import { AnimationMixer } from "three";
 import { GLTFLoader } from "three/examples/jsm/loaders/GLTFLoader.js";
@@ -145,6 +146,22 @@ describe("what is added", () => {
     const glb = spliceGlb(await readModel("model", tetrahedron()), packed);
     expect(await faults(glb)).toEqual([]);
     expect(jsonOf(glb).accessors.at(-1)).toMatchObject({ componentType: 5122, normalized: true, count: 3 });
+  });
+
+  it("may be nodes within nodes, the scene in the innermost", async () => {
+    const nested = graft();
+    nested.nodes = [
+      { name: "outer", translation: [1, 2, 3], children: [1] },
+      { name: "inner", rotation: [0, 0, 0, 1], children: [2] },
+      { name: "still", translation: [0, 0, 0.5], scale: [2, 2, 2], holdsScene: true },
+    ];
+    const glb = spliceGlb(await readModel("model", glbOf(OWN_TEXT, OWN_BYTES)), nested);
+    expect(jsonOf(glb).nodes.slice(2)).toEqual([
+      { name: "outer", translation: [1, 2, 3], children: [3] },
+      { name: "inner", rotation: [0, 0, 0, 1], children: [4] },
+      { name: "still", translation: [0, 0, 0.5], scale: [2, 2, 2], children: [0] },
+    ]);
+    expect(jsonOf(glb).scenes[0].nodes).toEqual([2]);
   });
 
   it("is the same bytes every time", async () => {
@@ -316,6 +333,7 @@ describe("players that others wrote", () => {
   });
 
   it("Babylon plays the clip", async () => {
+    Logger.LogLevels = Logger.NoneLogLevel;
     const engine = new NullEngine();
     const glb = await spliced(models[0][1]);
     const scene = await LoadSceneAsync(new Uint8Array(glb), engine, { pluginExtension: ".glb" });

@@ -115,6 +115,35 @@ describe("kinds of primitives", () => {
     ]);
   });
 
+  it("a strip's joints, triangles that name a vertex twice, are left out", async () => {
+    const { surfaces } = await read((json) => {
+      // The numbers 0 2 1 0 1 3 0 3 2 1 2 3 as one strip: ten triangles, of which those like 1 0 1 fall away.
+      json.meshes[0].primitives[0].mode = 5;
+    });
+    const strip = [0, 2, 1, 0, 1, 3, 0, 3, 2, 1, 2, 3];
+    const kept = strip.slice(2).filter((third, i) => new Set([strip[i], strip[i + 1], third]).size === 3);
+    expect(surfaces[0].triangles).toHaveLength(3 * kept.length);
+    expect(kept.length).toBeLessThan(10);
+  });
+
+  it("a rotation rounded to float32 is a rotation still", async () => {
+    const { surfaces } = await read((json) => {
+      json.nodes[0].rotation = [0.5, 0.5, 0.5, 0.500001];
+    });
+    expect(volume(surfaces)).toBeCloseTo(HELD, 15);
+  });
+
+  it("skin weights that add up to a half weigh as if they did to one", async () => {
+    const bytes = new Uint8Array(readFileSync(new URL("skin_bind_pose.glb", folder)));
+    const view = new DataView(bytes.buffer);
+    const binary = 28 + view.getUint32(12, true);
+    // Its second view: 16 weights of four floats from byte 64.
+    for (let at = binary + 64; at < binary + 320; at += 4)
+      view.setFloat32(at, view.getFloat32(at, true) / 2, true);
+    const { surfaces } = await readSurfaces(await readModel("m", bytes));
+    expect(Math.abs(volume(surfaces) / 0.0390625 - 1)).toBeLessThan(1e-13);
+  });
+
   it("points and lines are passed over, and said", async () => {
     const { surfaces, warnings } = await read((json) => {
       json.meshes[0].primitives.push(
