@@ -1,6 +1,6 @@
 import { exponent, timesPowerOfTwo } from "./elementary/exact.js";
 import { type Mat3, map } from "./mat3.js";
-import { addScaled, cross, dot, normalize, type Vec3 } from "./vec3.js";
+import { cross, normalize, type Vec3 } from "./vec3.js";
 
 /**
  * Eigenvalues of a symmetric 3×3 matrix, ascending, and unit eigenvectors as rows that form a right-handed frame; any one
@@ -75,10 +75,9 @@ function rotateAway(a: number[][], v: number[][], p: number, q: number): boolean
   return true;
 }
 
-/** The first two rows made orthonormal to the last digit (Gram–Schmidt), and the third that makes them right-handed. */
+/** The first two rows at unit length again, after many rotations, and the third that makes them right-handed. */
 function frame(first: number[], second: number[]): Mat3 {
   const x = normalize([first[0], first[1], first[2]]);
-  const y: Vec3 = [second[0], second[1], second[2]];
-  const unitY = normalize(addScaled(y, x, -dot(x, y)));
-  return [x, unitY, normalize(cross(x, unitY))];
+  const y = normalize([second[0], second[1], second[2]]);
+  return [x, y, normalize(cross(x, y))];
 }

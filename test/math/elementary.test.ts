@@ -241,6 +241,11 @@ describe("exponential, logarithm and powers keep their last digit", () => {
         const x = 1 + spread(-50, -3);
         return [x, between(-1, 1) * Math.abs(708 / Math.log(x))];
       }),
+      // where every digit of the logarithm's low part counts: series longest, product greatest
+      ...pairs(300, () => {
+        const x = random() < 0.5 ? between(0.71, 0.8) : between(1.25, 1.41);
+        return [x, (random() < 0.5 ? -1 : 1) * Math.abs(between(600, 708) / Math.log(x))];
+      }),
       ...pairs(100, () => {
         const x = between(0.1, 10);
         return [x, -between(709, 744) / Math.log(x)];

@@ -48,7 +48,8 @@ function logarithm(x: number): [number, number] {
   const third = z * THIRD;
   const rest = z * z * series(z);
   const u = third + rest;
-  const uLow = productError(z, THIRD, third) + z * THIRD_LOW + zLow * THIRD + sumError(third, rest, u);
+  const uLow =
+    productError(z, THIRD, third) + z * THIRD_LOW + zLow * (THIRD + 0.4 * z) + sumError(third, rest, u);
   // half + halfLow = artanh(s)
   const p = s * u;
   const half = s + p;
