@@ -3,9 +3,9 @@
 import { cross, length, type Vec3 } from "../math/vec3.js";
 import { shown } from "./errors.js";
 import { fields } from "./fields.js";
-import { at, choice, type Form, isObject, list, NAME, name, type Tell } from "./form.js";
+import { at, choice, type Form, isObject, list, NAME, name, type Tell, titled } from "./form.js";
 import { nearest } from "./nearest.js";
-import { spreadNumber, spreadVector } from "./numbers.js";
+import { anyNumber, spreadVector } from "./numbers.js";
 import {
   type Choice,
   type Drawable,
@@ -31,10 +31,12 @@ export const RESERVED_POINTS: readonly string[] = [
 ];
 
 const PROP_WORDS = `${PROP_DIRECTIONS.join(", ")}, a named point (a leading - turns it round), or [x, y, z]`;
+const POINT = NAME.source.replace("^", "^-?");
+const PAIR = "a pair [direction of the prop, direction of the world]";
 const WORLD_WORDS = `${WORLD_DIRECTIONS.join(", ")}, or [x, y, z]`;
 
 /** A direction of the prop; words of the world are refused. */
-const propDirection: Form<PropDirection> = direction(PROP_WORDS, (word, tell) => {
+const propDirection: Form<PropDirection> = direction(PROP_DIRECTIONS, PROP_WORDS, (word, tell) => {
   const bare = word.replace(/^-/, "");
   if (isWorldWord(bare)) {
     tell(`a direction of the world where one of the prop stands (found ${shown(word)})`, PROP_WORDS);
@@ -45,7 +47,7 @@ const propDirection: Form<PropDirection> = direction(PROP_WORDS, (word, tell) =>
   return undefined;
 });
 
-const worldDirection: Form<WorldDirection> = direction(WORLD_WORDS, (word, tell) => {
+const worldDirection: Form<WorldDirection> = direction(WORLD_DIRECTIONS, WORLD_WORDS, (word, tell) => {
   if (isWorldWord(word)) return word;
   const near = nearest(word.replace(/^-/, ""), WORLD_DIRECTIONS);
   const turned = word.startsWith("-") && isWorldWord(word.slice(1));
@@ -69,16 +71,20 @@ const OPPOSITE: Partial<Record<WorldDirectionName, WorldDirectionName>> = {
 
 /** `spin.axis` */
 export const axis: Form<Drawable<PropDirection | WorldDirection | "any">> = choice(
-  direction(`${PROP_WORDS}; ${WORLD_DIRECTIONS.join(", ")}; or any`, (word, tell) => {
-    if (word === "any" || isWorldWord(word) || (NAME.test(word.replace(/^-/, "")) && word !== "-any")) {
-      if (!word.startsWith("-") || !isWorldWord(word.slice(1))) return word;
-      const opposite = OPPOSITE[word.slice(1) as WorldDirectionName];
-      tell(`no - goes before a direction of the world (found ${shown(word)})`, opposite ?? "[x, y, z]");
+  direction(
+    [...PROP_DIRECTIONS, ...WORLD_DIRECTIONS, "any"],
+    `${PROP_WORDS}; ${WORLD_DIRECTIONS.join(", ")}; or any`,
+    (word, tell) => {
+      if (word === "any" || isWorldWord(word) || (NAME.test(word.replace(/^-/, "")) && word !== "-any")) {
+        if (!word.startsWith("-") || !isWorldWord(word.slice(1))) return word;
+        const opposite = OPPOSITE[word.slice(1) as WorldDirectionName];
+        tell(`no - goes before a direction of the world (found ${shown(word)})`, opposite ?? "[x, y, z]");
+        return undefined;
+      }
+      tell(`not a direction (found ${shown(word)})`, `${PROP_WORDS}; ${WORLD_DIRECTIONS.join(", ")}; or any`);
       return undefined;
-    }
-    tell(`not a direction (found ${shown(word)})`, `${PROP_WORDS}; ${WORLD_DIRECTIONS.join(", ")}; or any`);
-    return undefined;
-  }),
+    },
+  ),
 );
 
 /** `release.facing` and `arrive.facing`; the latter knows two words more. */
@@ -99,17 +105,13 @@ export function facing(when: "release" | "arrive"): Form<Drawable<Facing>> {
   });
 }
 
-const pair = list<unknown>(
-  // both places are read by their own form below; this one is for the schema
-  {
-    read: (value) => value,
-    json: { anyOf: [choice(propDirection).json, choice(worldDirection).json] },
-    expects: "",
-  },
-  2,
-  2,
-  "a pair [direction of the prop, direction of the world]",
-);
+const propSide = titled("prop-direction", choice(propDirection));
+const worldSide = titled("world-direction", choice(worldDirection));
+// both places are read one by one in `readPairs`; here they are for the schema
+const pair: Form<unknown> = {
+  ...list<unknown>({ read: (value) => value, json: {}, expects: "" }, 2, 2, PAIR),
+  json: { type: "array", items: [propSide.json, worldSide.json], minItems: 2, maxItems: 2 },
+};
 const pairs = list(pair, 1, 2, "one or two pairs [direction of the prop, direction of the world]");
 
 function readPairs(value: unknown[], tell: Tell): Facing | undefined {
@@ -118,8 +120,6 @@ function readPairs(value: unknown[], tell: Tell): Facing | undefined {
     return undefined;
   }
   if (pairs.read(value, tell) === undefined) return undefined;
-  const prop = choice(propDirection);
-  const world = choice(worldDirection);
   const read = (value as [unknown, unknown][]).map(([p, w], i) => {
     if (isWorldWord(p) && typeof w === "string" && !isWorldWord(w)) {
       tell(
@@ -129,7 +129,7 @@ function readPairs(value: unknown[], tell: Tell): Facing | undefined {
       );
       return [undefined];
     }
-    return [prop.read(p, at(tell, i, 0)), world.read(w, at(tell, i, 1))];
+    return [propSide.read(p, at(tell, i, 0)), worldSide.read(w, at(tell, i, 1))];
   });
   if (read.some((r) => r.includes(undefined))) return undefined;
   const facing = read as unknown as [FacingPair] | [FacingPair, FacingPair];
@@ -151,17 +151,23 @@ function readPairs(value: unknown[], tell: Tell): Facing | undefined {
 const plainly = (value: unknown) => (Array.isArray(value) ? value.map(String) : value);
 
 const quaternion: Form<SpreadQuat | Choice<SpreadQuat>> = choice(
-  nonZero(list(spreadNumber(), 4, 4, "a list of four numbers [x, y, z, w]")) as unknown as Form<SpreadQuat>,
+  nonZero(list(anyNumber, 4, 4, "a list of four numbers [x, y, z, w]")) as unknown as Form<SpreadQuat>,
 );
 const point = choice(name("a point of the prop"));
 
-const rotation = fields({ rotation: quaternion }, { point });
+const rotation = (() => {
+  const form = fields({ rotation: quaternion }, { point });
+  // a throw like another may write one of the two alone
+  return titled("rotation", { ...form, json: { ...form.json, required: [] } });
+})();
 
 function direction<T extends string>(
+  words: readonly string[],
   expects: string,
   readWord: (word: string, tell: Tell) => T | undefined,
 ): Form<T | SpreadVector> {
   const vector = nonZero(spreadVector());
+  const points = words.includes("long");
   return {
     read(value, tell) {
       if (typeof value === "string") return readWord(value, tell);
@@ -169,7 +175,7 @@ function direction<T extends string>(
       tell(`not a direction (found ${shown(value)})`, expects);
       return undefined;
     },
-    json: { anyOf: [{ type: "string", pattern: "^-?[A-Za-z0-9][A-Za-z0-9_-]{0,63}$" }, vector.json] },
+    json: { anyOf: [{ enum: words }, ...(points ? [{ type: "string", pattern: POINT }] : []), vector.json] },
     expects,
   };
 }

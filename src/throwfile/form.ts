@@ -28,6 +28,12 @@ export const at =
 export const isObject = (value: unknown): value is Record<string, unknown> =>
   typeof value === "object" && value !== null && !Array.isArray(value);
 
+/** The form, to stand once in the JSON Schema under this title. */
+export const titled = <T>(title: string, form: Form<T>): Form<T> => ({
+  ...form,
+  json: { title, ...form.json },
+});
+
 /** One of a few words. */
 export function word<const T extends string>(...words: T[]): Form<T> {
   const expects = words.length === 2 ? words.join(" or ") : `one of ${words.join(", ")}`;

@@ -1,7 +1,7 @@
 /** Numbers, plain and spread: ranges, bell curves, frames, and vectors of them. */
 
 import { shown } from "./errors.js";
-import { choice, type Form, type Json, list, type Tell } from "./form.js";
+import { choice, type Form, type Json, list, type Tell, titled } from "./form.js";
 import type { DrawableNumber, DrawableVector, Spread, SpreadVector } from "./types.js";
 
 /** Which numbers are right, and their unit for messages. */
@@ -50,6 +50,9 @@ export function spreadNumber(rule: Rule = {}): Form<DrawableNumber> {
     { ...single, expects: `${single.expects}; no spread within a choice` },
   );
 }
+
+/** Any finite number, perhaps spread. */
+export const anyNumber = titled("number", spreadNumber());
 
 /** A time in seconds, or in whole frames (`27f`), perhaps spread; comes out in seconds. */
 export function time(rule: Rule, frameRate: number): Form<DrawableNumber> {
@@ -107,12 +110,14 @@ export function vector(rule: Rule = {}): Form<[number, number, number]> {
 
 /** [x, y, z], each perhaps spread. */
 export function spreadVector(): Form<SpreadVector> {
-  const form = list(spreadNumber(), 3, 3, "a list of three numbers [x, y, z]");
-  return form as unknown as Form<SpreadVector>;
+  return titled(
+    "vector",
+    list(anyNumber, 3, 3, "a list of three numbers [x, y, z]"),
+  ) as unknown as Form<SpreadVector>;
 }
 
 /** [x, y, z], each perhaps spread, or a choice among such. */
-export const drawnVector = (): Form<DrawableVector> => choice(spreadVector());
+export const drawnVector = (): Form<DrawableVector> => titled("place", choice(spreadVector()));
 
 /** The unit in brackets: "a number from -90 to 90 (degrees)". */
 export function describe(rule: Rule): string {
@@ -225,4 +230,6 @@ function numberJson(rule: Rule): Json {
   return json;
 }
 
-const pattern = (regex: RegExp): Json => ({ type: "string", pattern: regex.source });
+function pattern(regex: RegExp): Json {
+  return { type: "string", pattern: regex.source };
+}

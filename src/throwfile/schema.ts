@@ -336,7 +336,9 @@ export function throwFileSchema(): Record<string, unknown> {
   inheritable(throws.additionalProperties as Schema);
   (throws.additionalProperties as Schema).anyOf = [{ required: ["prop"] }, { required: ["like"] }];
   schema.required = ["props"];
-  return schema;
+  const definitions: Record<string, Schema> = {};
+  const hoisted = hoist(schema, definitions) as Schema;
+  return { ...hoisted, definitions };
 }
 
 interface Schema extends Record<string, unknown> {
@@ -352,6 +354,19 @@ function inheritable(schema: Schema): void {
     const rest = value === undefined || isEmptyMap(value) ? {} : { default: value };
     schema.properties![key] = { description, ...rest, anyOf: [form, { type: "null" }] };
   }
+}
+
+/** Forms that have a title stand once, under `definitions`. */
+function hoist(node: unknown, definitions: Record<string, Schema>): unknown {
+  if (Array.isArray(node)) return node.map((item) => hoist(item, definitions));
+  if (typeof node !== "object" || node === null) return node;
+  const inner = Object.entries(node).map(([key, value]) => [key, hoist(value, definitions)]);
+  const { title, description, ...form } = Object.fromEntries(inner) as Schema;
+  if (typeof title !== "string") return Object.fromEntries(inner);
+  definitions[title] ??= form;
+  const reference = { $ref: `#/definitions/${title}` };
+  // beside a reference draft 7 reads nothing
+  return description === undefined ? reference : { description, allOf: [reference] };
 }
 
 const isEmptyMap = (value: unknown) =>
