@@ -1,6 +1,7 @@
 /** The library: the whole line as one function, and each of its steps. Runs in browsers and on Node. */
 
-export { type Bake, type BakedFile, type BakeOptions, bake } from "./bake/bake.js";
+export { type Bake, type BakedTake, type BakedThrow, type BakeOptions, bake } from "./bake/bake.js";
+export type { MotionState } from "./bake/motion.js";
 export type { ModelSource } from "./bake/props.js";
 export { defaultTolerance } from "./clip/default-tolerance.js";
 export { type Body, linearTrack } from "./clip/linear.js";
@@ -22,8 +23,9 @@ export { propDirection } from "./prop/directions.js";
 export { type Kind, kindOf } from "./prop/kind.js";
 export { type Prop, type PropOptions, weigh } from "./prop/prop.js";
 export { type Shape, shapeModel } from "./prop/shape.js";
-export type { ClipRecord, MotionState, PropRecord, TakesRecord } from "./record/clip-record.js";
+export type { ClipRecord, PropRecord, TakesRecord } from "./record/clip-record.js";
 export { formatRecord } from "./record/format.js";
+export { recordOf } from "./record/record-of.js";
 export { VERSION } from "./record/version.js";
 export { ThrowFileError } from "./throwfile/errors.js";
 export { parseThrowFile } from "./throwfile/parse.js";

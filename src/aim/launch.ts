@@ -3,10 +3,10 @@
 import { type Arc, type ArcRequest, solveArc } from "../flight/arc.js";
 import { fly } from "../flight/flight.js";
 import type { Launch } from "../flight/launch.js";
+import { continueToOne } from "../math/continuation.js";
 import { conjugate, multiply, type Quat, rotate } from "../math/quat.js";
 import { RequestError } from "../math/request-error.js";
 import { cross, scale, subtract, type Vec3, ZERO } from "../math/vec3.js";
-import { continueFixedPoint } from "./fixed-point.js";
 import type { ThrowCourse } from "./world-directions.js";
 
 /** A body as the launch needs it. */
@@ -58,7 +58,7 @@ export function solveLaunch(wish: LaunchWish, body: AimedBody): AimedLaunch {
     travel: wish.usesTravel ? ([x[1], x[2], x[3]] as const) : arc.velocity,
   });
   const solution = holdsPoint
-    ? continueFixedPoint(
+    ? continueToOne(
         (x, lambda) => unknowns(evaluate(wish, body, course(x, centred.arc), lambda).arc),
         unknowns(centred.arc),
       )

@@ -39,12 +39,12 @@ export function defaultWobble(axis: Vec3, moments: Vec3): number {
 }
 
 /**
- * The principal axis towards which the tilt lies at phase 0: the next of long, middle, short, long for an axis that is one of them, else the
+ * The principal axis towards which the tilt lies at phase 0: the next of long, middle, short, long for an axis within 1° of one of them, else the
  * one most square to it (the first of equals).
  */
 export function wobbleReference(axis: Vec3): Vec3 {
   const squareness = [Math.abs(axis[0]), Math.abs(axis[1]), Math.abs(axis[2])];
-  const own = squareness.findIndex((component) => component >= 1 - 1e-12);
+  const own = squareness.findIndex((component) => component >= cosDegrees(1));
   const chosen = own >= 0 ? (own + 1) % 3 : squareness.indexOf(Math.min(...squareness));
   return [chosen === 0 ? 1 : 0, chosen === 1 ? 1 : 0, chosen === 2 ? 1 : 0];
 }

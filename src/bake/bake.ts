@@ -1,28 +1,42 @@
-/** The one place that runs the line: draw, aim, fly, cut, splice, record. */
+/** The one place that runs the line: draw, aim, fly, cut, splice. */
 
+import type { Track } from "../clip/track.js";
 import { spliceGlb } from "../gltf/splice.js";
 import { RequestError } from "../math/request-error.js";
-import type { ClipRecord, PropRecord, TakesRecord } from "../record/clip-record.js";
-import { rounded } from "../record/format.js";
-import { textSha256 } from "../record/hash.js";
-import { VERSION } from "../record/version.js";
+import { rounded } from "../math/rounded.js";
+import type { Prop } from "../prop/prop.js";
 import { throwFileError } from "../throwfile/errors.js";
 import { type ThrowEntry, type ThrowFile, takeNumbers } from "../throwfile/types.js";
-import { clipExtras, clipRecord } from "./clip-record.js";
 import { oneNodeGraft } from "./graft.js";
-import { nearestFinder } from "./nearest.js";
+import { hostFrame } from "./host.js";
+import { type MotionState, motionState, turnTimes } from "./motion.js";
+import { type Nearest, nearestFinder } from "./nearest.js";
 import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
-import { cutTake, solveTake } from "./take.js";
+import { cutTake, solveTake, type Take } from "./take.js";
 
-export interface BakedFile {
-  /** Name within the output folder. */
+/** A take and the clip that was made of it. */
+export interface BakedTake {
+  /** Of the clip. */
   name: string;
-  content: Uint8Array;
+  take: Take;
+  track: Track;
+  /** In the host's coordinates. */
+  release: MotionState;
+  arrival: MotionState;
+  nearest: Nearest | null;
+}
+
+export interface BakedThrow {
+  entry: ThrowEntry;
+  takes: BakedTake[];
+  /** The file of the throw: its name within the output folder, and its bytes. */
+  file: { name: string; content: Uint8Array };
 }
 
 export interface Bake {
-  files: BakedFile[];
-  record: TakesRecord;
+  /** The props that were used, in the throw file's order. */
+  props: Map<string, LoadedProp>;
+  throws: BakedThrow[];
 }
 
 export interface BakeOptions {
@@ -35,32 +49,17 @@ export interface BakeOptions {
 /**
  * Bakes a throw file in memory.
  *
- * @param text of the throw file, for its hash
- * @throws ThrowFileError for a throw that cannot be, ModelError for a model that cannot be used
+ * @throws ThrowFileError for a throw that cannot be, ModelError for a model that cannot be used, RequestError for `only` naming no throw
  */
-export async function bake(
-  file: ThrowFile,
-  text: string,
-  source: ModelSource,
-  options: BakeOptions = {},
-): Promise<Bake> {
-  const throws = selectThrows(file, options.only);
-  const props = await loadProps(file, new Set(throws.map((entry) => entry.prop)), source);
-  const total = throws.reduce((sum, entry) => sum + takeNumbers(entry.takes).length, 0);
+export async function bake(file: ThrowFile, source: ModelSource, options: BakeOptions = {}): Promise<Bake> {
+  const entries = selectThrows(file, options.only);
+  const props = await loadProps(file, new Set(entries.map((entry) => entry.prop)), source);
+  const total = entries.reduce((sum, entry) => sum + takeNumbers(entry.takes).length, 0);
   let done = 0;
-  const baked = throws.map((entry) =>
+  const throws = entries.map((entry) =>
     bakeThrow(file, entry, props.get(entry.prop) as LoadedProp, () => options.onTake?.(++done, total)),
   );
-  return {
-    files: baked.map(({ file }) => file),
-    record: {
-      format: 1,
-      tossbake: VERSION,
-      throwFile: { name: file.name.replace(/^.*[\\/]/, ""), sha256: await textSha256(text) },
-      props: Object.fromEntries(Array.from(props, ([name, loaded]) => [name, propRecord(loaded)])),
-      clips: baked.flatMap(({ clips }) => clips),
-    },
-  };
+  return { props, throws };
 }
 
 function selectThrows(file: ThrowFile, only?: readonly string[]): ThrowEntry[] {
@@ -77,28 +76,23 @@ function selectThrows(file: ThrowFile, only?: readonly string[]): ThrowEntry[] {
 function bakeThrow(
   file: ThrowFile,
   entry: ThrowEntry,
-  loaded: LoadedProp,
+  { prop, model }: LoadedProp,
   onTake: () => void,
-): { file: BakedFile; clips: ClipRecord[] } {
-  const { prop, model } = loaded;
-  const name = `${entry.name}.glb`;
+): BakedThrow {
   const nearest = nearestFinder(prop.reach);
   try {
     const takes = takeNumbers(entry.takes).map((number) => {
-      const take = solveTake(file, entry, prop, number);
-      const track = cutTake(file, prop, take);
-      const record = clipRecord(file, entry, prop, take, track, nearest(number, take.flight), name);
+      const baked = bakeTake(file, entry, prop, number, nearest);
       onTake();
-      return {
-        record,
-        named: { name: record.name, track, extras: rounded(clipExtras(record, take)) as object },
-      };
+      return baked;
     });
-    const graft = oneNodeGraft(
-      prop,
-      takes.map(({ named }) => named),
-    );
-    return { file: { name, content: spliceGlb(model, graft) }, clips: takes.map(({ record }) => record) };
+    const clips = takes.map((baked) => ({
+      name: baked.name,
+      track: baked.track,
+      extras: rounded(clipExtras(entry, baked)),
+    }));
+    const content = spliceGlb(model, oneNodeGraft(prop, clips));
+    return { entry, takes, file: { name: `${entry.name}.glb`, content } };
   } catch (error) {
     if (!(error instanceof RequestError)) throw error;
     const path = error.path[0] === "bake" ? error.path : ["throws", entry.name, ...error.path];
@@ -106,7 +100,33 @@ function bakeThrow(
   }
 }
 
-export function propRecord({ prop, source, sha256 }: LoadedProp): PropRecord {
-  const { mass, volume, centerOfMass, inertia, principal, reach, warnings } = prop;
-  return { source, sha256, mass, volume, centerOfMass, inertia, principal, reach, warnings: [...warnings] };
+function bakeTake(
+  file: ThrowFile,
+  entry: ThrowEntry,
+  prop: Prop,
+  number: number,
+  nearest: ReturnType<typeof nearestFinder>,
+): BakedTake {
+  const take = solveTake(file, entry, prop, number);
+  const { flight } = take;
+  const host = hostFrame(file.host).fromWorld;
+  return {
+    // two digits, or as many as the number has
+    name: `${entry.name}_${String(number).padStart(2, "0")}`,
+    take,
+    track: cutTake(file, prop, take),
+    release: motionState(flight, prop, 0, host),
+    arrival: motionState(flight, prop, flight.duration, host),
+    nearest: nearest(number, flight),
+  };
 }
+
+/** What an engine needs to take over from the clip, or to hang sounds on it. */
+const clipExtras = (entry: ThrowEntry, { take, release, arrival }: BakedTake) => ({
+  throw: entry.name,
+  take: take.number,
+  draws: take.drawn.draws,
+  release,
+  arrival,
+  cues: { apex: take.aimed.arc.apex.time, turns: turnTimes(take.flight) },
+});

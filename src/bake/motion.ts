@@ -1,11 +1,18 @@
-/** What takes.json, extras and the engine are told of a flight: states and cues, in the host's coordinates. */
+/** What takes.json, extras and so the engine are told of a flight: states and cues, in the host's coordinates. */
 
 import type { Flight } from "../flight/flight.js";
 import { conjugate, multiply, type Quat } from "../math/quat.js";
-import { length } from "../math/vec3.js";
+import { length, type Vec3 } from "../math/vec3.js";
 import type { Prop } from "../prop/prop.js";
-import type { MotionState } from "../record/clip-record.js";
 import type { Conversion } from "./host.js";
+
+/** A moment of the motion; rotation turns the model from as modelled, angular velocity is in the world frame, rad/s. */
+export interface MotionState {
+  centerOfMass: Vec3;
+  rotation: Quat;
+  velocity: Vec3;
+  angularVelocity: Vec3;
+}
 
 /** The model's orientation at a time: turns it from as modelled. */
 export const modelRotation = (flight: Flight, prop: Prop, t: number): Quat =>

@@ -1,10 +1,10 @@
 /** The props of a throw file, read and weighed. */
 
 import type { Model } from "../gltf/model.js";
+import { textSha256 } from "../math/hash.js";
 import { RequestError } from "../math/request-error.js";
 import { type Prop, weigh } from "../prop/prop.js";
 import { shapeModel } from "../prop/shape.js";
-import { textSha256 } from "../record/hash.js";
 import { throwFileError } from "../throwfile/errors.js";
 import type { PropEntry, ThrowFile } from "../throwfile/types.js";
 
@@ -13,6 +13,7 @@ export interface LoadedProp {
   model: Model;
   /** As the record names it: the model's path, or the shape as JSON. */
   source: string;
+  /** Of the model's files, or of a shape's `source`. */
   sha256: string;
 }
 
@@ -44,13 +45,13 @@ export async function loadProps(
 
 async function loadProp(entry: PropEntry, source: ModelSource): Promise<LoadedProp> {
   if (entry.shape) {
-    const text = JSON.stringify(entry.shape);
     const model = shapeModel(entry.name, entry.shape);
+    const source = JSON.stringify(entry.shape);
     return {
       prop: await weigh(entry.name, entry.shape, entry),
       model,
-      source: text,
-      sha256: await textSha256(text),
+      source,
+      sha256: await textSha256(source),
     };
   }
   const { model, sha256 } = await source(entry.model as string);

@@ -1,6 +1,6 @@
 /** One take: the first of its candidates that has a flight, flown and cut into keys. */
 
-import { type AimedLaunch, solveLaunch } from "../aim/launch.js";
+import { type AimedLaunch, type LaunchWish, solveLaunch } from "../aim/launch.js";
 import { defaultTolerance } from "../clip/default-tolerance.js";
 import { linearTrack } from "../clip/linear.js";
 import type { Track } from "../clip/track.js";
@@ -19,6 +19,7 @@ export interface Take {
   /** Which of the take's candidates it is. */
   candidate: number;
   drawn: DrawnThrow;
+  wish: LaunchWish;
   aimed: AimedLaunch;
   flight: Flight;
 }
@@ -37,14 +38,13 @@ export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number
   for (const candidate of candidateOrder(entry, stream)) {
     const drawn = drawThrow(entry, { ...stream, candidate });
     try {
-      const aimed = solveLaunch(launchWish(drawn, prop, file.gravity, host), prop.principal);
-      return { number, candidate, drawn, aimed, flight: fly(aimed.launch) };
+      const wish = launchWish(drawn, prop, file.gravity, host);
+      const aimed = solveLaunch(wish, prop.principal);
+      return { number, candidate, drawn, wish, aimed, flight: fly(aimed.launch) };
     } catch (error) {
       if (!(error instanceof RequestError)) throw error;
       first ??= error;
       tried++;
-      // nothing was left to chance, so nothing else can come of it
-      if (Object.keys(drawn.draws).length === 0) break;
     }
   }
   const reason = first as RequestError;

@@ -5,6 +5,7 @@ import { writeFiles } from "../node/output-folder.js";
 import { openThrowFile } from "../node/throw-file.js";
 import type { ClipRecord, TakesRecord } from "../record/clip-record.js";
 import { formatRecord } from "../record/format.js";
+import { recordOf } from "../record/record-of.js";
 import { ExitCode } from "./exit-code.js";
 import { progress } from "./progress.js";
 import { span, table } from "./table.js";
@@ -32,18 +33,17 @@ export const bakeCommand = (answer: (code: number) => void) =>
     .action(async (path: string, options: Options) => {
       const { file, text, models } = await openThrowFile(path);
       const shown = progress();
-      const baked = await bake(file, text, models, { only: options.only, onTake: shown.update }).finally(
-        shown.end,
-      );
+      const baked = await bake(file, models, { only: options.only, onTake: shown.update }).finally(shown.end);
+      const fresh = await recordOf(file, text, baked);
       if (!options.dryRun) {
-        const record = await mergeRecord(options.output, baked.record, file);
+        const record = await mergeRecord(options.output, fresh, file);
         await writeFiles(options.output, [
-          ...baked.files,
+          ...baked.throws.map((baked) => baked.file),
           { name: "takes.json", content: formatRecord(record) },
         ]);
       }
-      process.stdout.write(options.json ? formatRecord(baked.record) : report(baked.record, options));
-      if (baked.record.clips.some(missed)) answer(ExitCode.checkFailed);
+      process.stdout.write(options.json ? formatRecord(fresh) : report(fresh, options));
+      if (fresh.clips.some(missed)) answer(ExitCode.checkFailed);
     });
 
 const missed = ({ miss }: ClipRecord) =>

@@ -1,6 +1,5 @@
 import { basename, extname } from "node:path";
 import { Command, InvalidArgumentError } from "commander";
-import { propRecord } from "../bake/bake.js";
 import { type LoadedProp, loadProps } from "../bake/props.js";
 import { length, type Vec3 } from "../math/vec3.js";
 import { readModelFile } from "../node/model-files.js";
@@ -8,6 +7,7 @@ import { openThrowFile } from "../node/throw-file.js";
 import { type AxisBehaviour, kindOf } from "../prop/kind.js";
 import { weigh } from "../prop/prop.js";
 import { formatRecord } from "../record/format.js";
+import { propRecord } from "../record/record-of.js";
 
 export const weighCommand = () =>
   new Command("weigh")

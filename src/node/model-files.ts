@@ -4,7 +4,7 @@ import { readFile, realpath, stat } from "node:fs/promises";
 import { basename, dirname, resolve, sep } from "node:path";
 import { type Model, ModelError } from "../gltf/model.js";
 import { readModel } from "../gltf/read.js";
-import { sha256 } from "../record/hash.js";
+import { sha256 } from "../math/hash.js";
 
 /** Larger files are refused before they are read: GLB itself counts its length in 32 bits. */
 const GREATEST_BYTES = 0xffffffff;

@@ -1,16 +1,9 @@
 /** What takes.json holds: the memory of a bake, for people, version control and engines. */
 
+import type { MotionState } from "../bake/motion.js";
 import type { Mat3 } from "../math/mat3.js";
 import type { Quat } from "../math/quat.js";
 import type { Vec3 } from "../math/vec3.js";
-
-/** A moment of the motion; rotation turns the model from as modelled, angular velocity is in the world frame, rad/s. */
-export interface MotionState {
-  centerOfMass: Vec3;
-  rotation: Quat;
-  velocity: Vec3;
-  angularVelocity: Vec3;
-}
 
 export interface PropRecord {
   /** The model's path as the throw file writes it, or the shape as JSON. */

@@ -1,18 +1,8 @@
 /** takes.json as text: stable under version control, so that a line that differs is motion that differs. */
 
-/** Digits that stand in the record; below `NOTHING` a number is rounding and is written 0. */
-const DIGITS = 12;
-const NOTHING = 1e-12;
-const WIDTH = 100;
+import { rounded } from "../math/rounded.js";
 
-/** A number with 12 significant digits, differences from zero below 1e-12 as 0; other values as they are. */
-export function rounded(value: unknown): unknown {
-  if (typeof value === "number") return Math.abs(value) < NOTHING ? 0 : Number(value.toPrecision(DIGITS));
-  if (Array.isArray(value)) return value.map(rounded);
-  if (value !== null && typeof value === "object")
-    return Object.fromEntries(Object.entries(value).map(([key, inner]) => [key, rounded(inner)]));
-  return value;
-}
+const WIDTH = 100;
 
 /** JSON of rounded numbers, two spaces deep, in which what fits on one line of 100 characters stands on one. */
 export const formatRecord = (record: unknown): string => `${layOut(rounded(record), "")}\n`;

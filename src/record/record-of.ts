@@ -1,0 +1,85 @@
+/** The record of a bake. */
+
+import type { Bake, BakedTake, BakedThrow } from "../bake/bake.js";
+import { hostFrame } from "../bake/host.js";
+import { modelRotation } from "../bake/motion.js";
+import type { LoadedProp } from "../bake/props.js";
+import { type Take, toleranceOf } from "../bake/take.js";
+import { trackBytes } from "../clip/track.js";
+import { axisShares, turnsAboutMomentum } from "../flight/turns.js";
+import { textSha256 } from "../math/hash.js";
+import { rotate } from "../math/quat.js";
+import { add, distance } from "../math/vec3.js";
+import type { Prop } from "../prop/prop.js";
+import type { ThrowFile } from "../throwfile/types.js";
+import type { ClipRecord, PropRecord, TakesRecord } from "./clip-record.js";
+import { VERSION } from "./version.js";
+
+/** @param text of the throw file, for its hash */
+export async function recordOf(file: ThrowFile, text: string, bake: Bake): Promise<TakesRecord> {
+  return {
+    format: 1,
+    tossbake: VERSION,
+    throwFile: { name: file.name.replace(/^.*[\\/]/, ""), sha256: await textSha256(text) },
+    props: Object.fromEntries(Array.from(bake.props, ([name, loaded]) => [name, propRecord(loaded)])),
+    clips: bake.throws.flatMap((baked) => {
+      const { prop } = bake.props.get(baked.entry.prop) as LoadedProp;
+      return baked.takes.map((take) => clipRecord(file, prop, baked, take));
+    }),
+  };
+}
+
+export function propRecord({ prop, source, sha256 }: LoadedProp): PropRecord {
+  const { mass, volume, centerOfMass, inertia, principal, reach, warnings } = prop;
+  return {
+    source,
+    sha256,
+    mass,
+    volume,
+    centerOfMass,
+    inertia,
+    principal,
+    reach,
+    warnings: [...warnings],
+  };
+}
+
+function clipRecord(
+  file: ThrowFile,
+  prop: Prop,
+  { entry, file: { name } }: BakedThrow,
+  baked: BakedTake,
+): ClipRecord {
+  const { take, track, release, arrival, nearest } = baked;
+  const { flight, aimed } = take;
+  return {
+    name: baked.name,
+    throw: entry.name,
+    take: take.number,
+    prop: entry.prop,
+    file: name,
+    duration: flight.duration,
+    turns: turnsAboutMomentum(flight),
+    share: axisShares(flight),
+    apex: { time: aimed.arc.apex.time, rise: hostFrame(file.host).fromWorld.length(aimed.arc.apex.rise) },
+    release,
+    arrival,
+    miss: { position: missedBy(take, prop), angle: null },
+    tolerance: toleranceOf(file, prop),
+    error: track.error,
+    keys: { translation: track.translation.times.length, rotation: track.rotation.times.length },
+    bytes: trackBytes(track),
+    candidate: take.candidate,
+    draws: take.drawn.draws,
+    flight: { start: 0, time: flight.duration },
+    nearest,
+  };
+}
+
+/** m from the mark to where the arrival point really is at the end; null without a mark. */
+function missedBy({ flight, wish }: Take, prop: Prop): number | null {
+  const { to } = wish.arc;
+  if (!to) return null;
+  const arm = rotate(modelRotation(flight, prop, flight.duration), wish.arrivalOffset);
+  return distance(add(flight.centerOfMass(flight.duration), arm), to);
+}

@@ -1,0 +1,21 @@
+/** The demo, read and baked in memory. */
+
+import { fileURLToPath } from "node:url";
+import { bake } from "../../src/bake/bake.js";
+import { loadProps } from "../../src/bake/props.js";
+import { openThrowFile } from "../../src/node/throw-file.js";
+import { recordOf } from "../../src/record/record-of.js";
+
+export const DEMO = fileURLToPath(new URL("../../assets/quay.throws.yaml", import.meta.url));
+
+export async function bakeDemo() {
+  const { file, text, models } = await openThrowFile(DEMO);
+  const props = await loadProps(file, new Set(file.props.keys()), models);
+  const baked = await bake(file, models);
+  return {
+    file,
+    props,
+    files: baked.throws.map((baked) => baked.file),
+    record: await recordOf(file, text, baked),
+  };
+}
