@@ -1,4 +1,6 @@
 import type { Surface } from "../gltf/surfaces.js";
+import { cross, dot, length, subtract } from "../math/vec3.js";
+import { placeKey, vertex } from "./vertex.js";
 
 /** Triangles that hang together by edges, vertices at the same place made one. */
 export interface Part {
@@ -17,8 +19,8 @@ export interface Part {
 /**
  * The parts that surfaces are made of. A part is closed when every edge is run through as often one way as the other: then
  * the integrals over its inside are well defined. A part open in its own surface is joined with what is open in the others
- * (a solid painted with two materials, or split over two nodes). Triangles without an area are passed over, unless it
- * takes them to close a part (one that lies in a crack between edges of different length).
+ * (a solid painted with two materials, or split over two nodes). Triangles without an area are passed over, unless
+ * more would be open without them (one can lie in a crack between edges of different length).
  *
  * @param surfaces in the order in which `owners` count them; places that are to be one must be equal to the last bit
  */
@@ -26,21 +28,21 @@ export function findParts(surfaces: readonly Pick<Surface, "positions" | "triang
   closed: Part[];
   open: Part[];
 } {
-  const closed: Part[] = [];
-  let left: Triangles[] = [];
-  surfaces.forEach((surface, owner) => {
-    const whole = { ...surface, owners: new Uint32Array(surface.triangles.length / 3).fill(owner) };
-    const parts = connectedParts(weld([whole]));
-    closed.push(...parts.filter(isClosed));
-    left.push(...parts.filter((part) => !isClosed(part)));
-  });
-  if (new Set(left.map((part) => part.owners[0])).size > 1) {
-    const parts = connectedParts(weld(left));
-    closed.push(...parts.filter(isClosed));
-    left = parts.filter((part) => !isClosed(part));
-  }
-  return { closed, open: left as Part[] };
+  const parts = surfaces.flatMap((surface, owner) =>
+    connectedParts(weld([{ ...surface, owners: new Uint32Array(surface.triangles.length / 3).fill(owner) }])),
+  );
+  const closed = parts.filter(isClosed);
+  const open = parts.filter((part) => !isClosed(part));
+  if (new Set(open.map((part) => part.owners[0])).size < 2) return { closed, open };
+  const joined = connectedParts(weld(open));
+  return {
+    closed: [...closed, ...joined.filter(isClosed)],
+    open: joined.filter((part) => !isClosed(part)),
+  };
 }
+
+/** Twice a triangle's area over the square of its longer side at a corner: what rounding makes of three points on a line. */
+const SLIVER = 1e-14;
 
 type Triangles = Pick<Part, "positions" | "triangles" | "owners">;
 
@@ -53,22 +55,27 @@ function weld(meshes: readonly Triangles[]): Triangles {
   const triangles: number[] = [];
   const owners: number[] = [];
   for (const mesh of meshes) {
-    const corners = Uint32Array.from(mesh.triangles, (vertex) => {
-      const [x, y, z] = mesh.positions.subarray(3 * vertex, 3 * vertex + 3);
-      const key = `${x},${y},${z}`; // −0 and 0 give the same text
-      let index = indexOf.get(key);
-      if (index === undefined) {
-        index = indexOf.size;
-        indexOf.set(key, index);
-        positions.push(x, y, z);
+    const known = new Map<number, number>();
+    const welded = (index: number): number => {
+      const before = known.get(index);
+      if (before !== undefined) return before;
+      const key = placeKey(mesh.positions, index);
+      let at = indexOf.get(key);
+      if (at === undefined) {
+        at = indexOf.size;
+        indexOf.set(key, at);
+        positions.push(...vertex(mesh.positions, index));
       }
-      return index;
-    });
-    for (let t = 0; t < corners.length; t += 3) {
-      const [a, b, c] = corners.subarray(t, t + 3);
+      known.set(index, at);
+      return at;
+    };
+    for (let t = 0; t < mesh.owners.length; t++) {
+      const a = welded(mesh.triangles[3 * t]);
+      const b = welded(mesh.triangles[3 * t + 1]);
+      const c = welded(mesh.triangles[3 * t + 2]);
       if (a === b || b === c || c === a) continue;
       triangles.push(a, b, c);
-      owners.push(mesh.owners[t / 3]);
+      owners.push(mesh.owners[t]);
     }
   }
   return {
@@ -81,10 +88,13 @@ function weld(meshes: readonly Triangles[]): Triangles {
 function connectedParts(mesh: Triangles): Part[] {
   const slim = withoutSlivers(mesh);
   const parts = split(slim);
-  if (slim.triangles.length === mesh.triangles.length || parts.every(isClosed)) return parts;
+  if (slim === mesh || parts.every(isClosed)) return parts;
   const withSlivers = split(mesh);
-  return withSlivers.every(isClosed) ? withSlivers : parts;
+  return faultyEdges(withSlivers) < faultyEdges(parts) ? withSlivers : parts;
 }
+
+const faultyEdges = (parts: readonly Part[]) =>
+  parts.reduce((sum, part) => sum + part.openEdges + part.contraryEdges, 0);
 
 /** The mesh without the triangles whose three corners lie on a line. */
 function withoutSlivers(mesh: Triangles): Triangles {
@@ -92,20 +102,19 @@ function withoutSlivers(mesh: Triangles): Triangles {
   return keep.length === mesh.owners.length ? mesh : pick(mesh, keep);
 }
 
-const pick = (mesh: Triangles, which: readonly number[]): Triangles => ({
-  positions: mesh.positions,
-  triangles: Uint32Array.from(which.flatMap((t) => [...mesh.triangles.subarray(3 * t, 3 * t + 3)])),
-  owners: Uint32Array.from(which, (t) => mesh.owners[t]),
-});
+function pick(mesh: Triangles, which: readonly number[]): Triangles {
+  const triangles = new Uint32Array(3 * which.length);
+  which.forEach((t, i) => {
+    triangles.set(mesh.triangles.subarray(3 * t, 3 * t + 3), 3 * i);
+  });
+  return { positions: mesh.positions, triangles, owners: Uint32Array.from(which, (t) => mesh.owners[t]) };
+}
 
 function isSliver({ positions, triangles }: Triangles, t: number): boolean {
-  const [a, b, c] = triangles.subarray(3 * t, 3 * t + 3);
-  const edge = (from: number, to: number, i: number) => positions[3 * to + i] - positions[3 * from + i];
-  const u = [edge(a, b, 0), edge(a, b, 1), edge(a, b, 2)];
-  const v = [edge(a, c, 0), edge(a, c, 1), edge(a, c, 2)];
-  const n = [u[1] * v[2] - u[2] * v[1], u[2] * v[0] - u[0] * v[2], u[0] * v[1] - u[1] * v[0]];
-  const square = (w: number[]) => w[0] * w[0] + w[1] * w[1] + w[2] * w[2];
-  return Math.sqrt(square(n)) <= 1e-14 * Math.max(square(u), square(v));
+  const a = vertex(positions, triangles[3 * t]);
+  const u = subtract(vertex(positions, triangles[3 * t + 1]), a);
+  const v = subtract(vertex(positions, triangles[3 * t + 2]), a);
+  return length(cross(u, v)) <= SLIVER * Math.max(dot(u, u), dot(v, v));
 }
 
 interface Edge {
@@ -137,8 +146,9 @@ function split(mesh: Triangles): Part[] {
       edge.uses++;
       edge.balance += from < to ? 1 : -1;
       // The lower number is the root, so that parts come in the order of their first triangle.
-      const [low, high] = [root(t), root(edge.triangle)].sort((a, b) => a - b);
-      group[high] = low;
+      const a = root(t);
+      const b = root(edge.triangle);
+      group[Math.max(a, b)] = Math.min(a, b);
     } else edges.set(key, { triangle: t, uses: 1, balance: from < to ? 1 : -1 });
   }
   const members = new Map<number, { triangles: number[]; openEdges: number; contraryEdges: number }>();

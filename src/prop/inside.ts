@@ -1,5 +1,6 @@
 import { atan2 } from "../math/elementary.js";
 import { cross, dot, length, subtract, type Vec3 } from "../math/vec3.js";
+import { vertex } from "./vertex.js";
 
 /**
  * Whether a point lies within a closed surface, whichever way its triangles face: the solid angle that the surface spans
@@ -20,9 +21,3 @@ export function isInside(point: Vec3, positions: Float64Array, triangles: Uint32
   // Halfway between outside (0) and once round (2π in half angles).
   return Math.abs(halfAngles) > Math.PI;
 }
-
-export const vertex = (positions: Float64Array, index: number): Vec3 => [
-  positions[3 * index],
-  positions[3 * index + 1],
-  positions[3 * index + 2],
-];

@@ -1,9 +1,10 @@
 import { RequestError } from "../math/request-error.js";
 import { cross, length, subtract } from "../math/vec3.js";
 import type { Part } from "./closed-parts.js";
-import { isInside, vertex } from "./inside.js";
+import { isInside } from "./inside.js";
 import { combine, type MassProperties, scaleDensity } from "./mass.js";
 import { solidIntegrals } from "./solid.js";
+import { vertex } from "./vertex.js";
 
 /** What the surface a part comes from is made of. */
 export interface Substance {

@@ -7,13 +7,13 @@ import { distance, type Vec3 } from "../math/vec3.js";
 import { findParts, type Part } from "./closed-parts.js";
 import { type Density, densities } from "./density.js";
 import { extremePoints } from "./extremes.js";
-import { vertex } from "./inside.js";
 import type { MassProperties } from "./mass.js";
 import { massOfParts, type Substance } from "./mass-of-parts.js";
 import { shapeModel } from "./shape.js";
 import { shapeReach, shapeSize } from "./shape-extent.js";
 import { checkShape, type Shape } from "./shape-kind.js";
 import { shapeMass } from "./shape-mass.js";
+import { vertex } from "./vertex.js";
 
 export interface Measured {
   /** None for a mesh that is not a solid. */
