@@ -216,6 +216,24 @@ describe("models of every kind become one GLB", () => {
     expect(again.buffers[1]).toEqual(binary.slice(48));
   });
 
+  it("a .gltf whose buffer's length is no multiple of four", async () => {
+    const bytes = text((json) => {
+      json.buffers = [{ uri: "c.bin", byteLength: 73 }];
+    });
+    const glb = await spliced(bytes, async () => bytesOf(binary, new Uint8Array([7])));
+    expect(jsonOf(glb).bufferViews[2].byteOffset).toBe(76);
+    expect([...splitGlb("", glb).binary!.subarray(72, 76)]).toEqual([7, 0, 0, 0]);
+    expect(await faults(glb)).toEqual([]);
+  });
+
+  it("a model with empty lists", async () => {
+    const lists = { nodes: [], scenes: [], accessors: [], bufferViews: [], buffers: [], animations: [] };
+    const glb = await spliced(
+      new TextEncoder().encode(JSON.stringify({ asset: { version: "2.0" }, ...lists })),
+    );
+    expect(await faults(glb)).toEqual([]);
+  });
+
   it("images in files", async () => {
     const bytes = text((json) => {
       json.buffers = [{ uri: "c.bin", byteLength: 72 }];
@@ -282,6 +300,13 @@ describe("models of every kind become one GLB", () => {
       expect(node.rotation[i]).toBeCloseTo(value, 12);
     });
     expect(await faults(glb)).toEqual([]);
+    // Mirrored in y: as a rotation and a scale, half a turn about z with x and z as they were, x turned round.
+    const mirrored = spliceGlb(
+      await readModel("m", matrix([1, 0, 0, 0, 0, -2, 0, 0, 0, 0, 3, 0, 0, 0, 0, 1])),
+      moved,
+    );
+    expect(jsonOf(mirrored).nodes[0].scale).toEqual([-1, 2, 3]);
+    expect(jsonOf(mirrored).nodes[0].rotation.map(Math.abs)).toEqual([0, 0, 1, 0]);
     const sheared = await readModel("m", matrix([1, 0, 0, 0, 1, 1, 0, 0, 0, 0, 1, 0, 0, 0, 0, 1]));
     expect(() => spliceGlb(sheared, moved)).toThrow(ModelError);
   });

@@ -189,6 +189,18 @@ describe("kinds of primitives", () => {
     ]);
   });
 
+  it("interleaved vertices may end with the last one's bytes (glTF 2.0, 3.6.2.4)", async () => {
+    const { surfaces } = await read((json) => {
+      // Every second vertex of the tetrahedron, and no room for a whole stride after the second.
+      json.accessors[0] = { bufferView: 0, componentType: 5126, count: 2, type: "VEC3" };
+      json.bufferViews[0] = { buffer: 0, byteLength: 36, byteStride: 24 };
+      json.accessors[1] = { bufferView: 2, componentType: 5126, count: 3, type: "VEC3" };
+      json.bufferViews.push({ buffer: 0, byteLength: 36 });
+      json.meshes[0].primitives = [{ attributes: { POSITION: 1 } }, { attributes: { POSITION: 0 } }];
+    });
+    expect(surfaces).toHaveLength(1);
+  });
+
   it("vertices that no triangle uses are left out", async () => {
     const { surfaces } = await read((json) => {
       json.accessors[1].count = 3;
@@ -241,6 +253,16 @@ describe("nodeFrame", () => {
     [0.5, 0.5, -0.5, 0.5].forEach((value, i) => {
       expect(found.rotation[i]).toBeCloseTo(value, 14);
     });
+  });
+
+  it("of a mirrored node is a rotation all the same, its x turned round", async () => {
+    const found = nodeFrame(
+      await model((json) => {
+        json.nodes[0].scale = [-1, 1, 1];
+      }),
+      "solid",
+    )!;
+    expect(found.rotation.map(Math.abs)).toEqual([0, 0, 0, 1]);
   });
 
   it("knows only the default scene, and refuses what is ambiguous or flat", async () => {

@@ -71,6 +71,18 @@ describe("throwClips", () => {
     expect(scenesOf(document)).toEqual([[["solid", []]]]);
   });
 
+  it("takes int16 rotations, and copies of the arrays it is given", async () => {
+    const document = new Document();
+    const packed = graft();
+    const turn = new Int16Array([0, 0, 0, 32767, 0, 23170, 0, 23170, 0, 32767, 0, 0]);
+    packed.clips[0].channels[1].values = turn;
+    await document.transform(throwClips(packed));
+    turn.fill(1);
+    const output = document.getRoot().listAnimations()[0].listSamplers()[1].getOutput()!;
+    // 32767 stands for 1 (glTF 2.0, 3.11).
+    expect(output.getElement(0, [])).toEqual([0, 0, 0, 1]);
+  });
+
   it("refuses a clip whose name is taken", async () => {
     const document = new Document();
     document.createAnimation("lob_01");
