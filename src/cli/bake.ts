@@ -89,5 +89,5 @@ function report(record: TakesRecord, options: Options): string {
   const end = options.dryRun
     ? "nothing written (--dry-run)"
     : `written to ${options.output}, with takes.json`;
-  return `${table(head, rows)}\n\n${[...warnings, ...misses].join("")}${record.clips.length} takes of ${names.length} throws ${end}\n`;
+  return `${table(head, rows)}\n\n${[...warnings, ...misses].join("")}${record.clips.length} takes of ${names.length} ${names.length === 1 ? "throw" : "throws"} ${end}\n`;
 }
