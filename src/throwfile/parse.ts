@@ -10,11 +10,13 @@ import { inherit } from "./inherit.js";
 import { checkNames } from "./names.js";
 import { nearestHint, unknownKey } from "./nearest.js";
 import { checkNotYet } from "./not-yet.js";
+import { propSchema } from "./prop-schema.js";
 import { readYaml } from "./read-yaml.js";
 import { checkReferences } from "./references.js";
 import { rulesOf } from "./rules.js";
-import { chainSchema, propSchema, throwSchema, USUAL, usualThrow } from "./schema.js";
+import { chainSchema, USUAL, usualThrow } from "./schema.js";
 import { checkSpin } from "./spin-rules.js";
+import { throwSchema } from "./throw-schema.js";
 import { find, locate, type MapNode, type Node, plain } from "./tree.js";
 import type { BakeSettings, ChainEntry, KeyPath, PropEntry, ThrowEntry, ThrowFile } from "./types.js";
 
