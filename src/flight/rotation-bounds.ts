@@ -17,7 +17,9 @@ const ROUNDING = 1 + 1e-11;
  *
  * Euler's equations make d(ω_a²)/dt = 2 k_a ω₁ω₂ω₃, so the squares of the components move on one straight line,
  * ω_a² = ω_a²(0) + s k_a, between the two s where one of them is zero: the polhode's turning points (Landau & Lifshitz,
- * Mechanics, §37). |ω|² is linear in s and |dω/dt|² = Σ k_a² ω_b² ω_c² quadratic, so both maxima are exact.
+ * Mechanics, §37). |ω|² is linear in s, and |dω/dt|² = Σ k_a² ω_b² ω_c² is monotonic: its derivative is
+ * Σ ω_a² k_b k_c (k_b + k_c) with k_b + k_c = −k_a (1 + k_b k_c), where the |k| ≤ 1 of every body give each term the sign
+ * of −k₁k₂k₃. Both greatest values are therefore at one of the ends, and exact.
  */
 export function rotationBounds(spin: Vec3, moments: Vec3): RotationBounds {
   const ratios = momentRatios(moments);
@@ -39,21 +41,9 @@ export function rotationBounds(spin: Vec3, moments: Vec3): RotationBounds {
     return Math.sqrt(term(0, 1, 2) + term(1, 2, 0) + term(2, 0, 1));
   };
 
-  const candidates = [from, to];
-  // Σ k_a² (y_b + s k_b)(y_c + s k_c): its stationary point, where it is a maximum
-  const k = ratios[0] * ratios[1] * ratios[2];
-  const bend = k * (ratios[0] + ratios[1] + ratios[2]);
-  let slope = 0;
-  for (let a = 0; a < 3; a++) {
-    const b = (a + 1) % 3;
-    const c = (a + 2) % 3;
-    slope += ratios[a] * ratios[a] * (squares[b] * ratios[c] + squares[c] * ratios[b]);
-  }
-  if (bend < 0) candidates.push(Math.min(to, Math.max(from, -slope / (2 * bend))));
-
   return {
-    rate: Math.max(...candidates.map(rate)) * ROUNDING,
-    angularAcceleration: Math.max(...candidates.map(acceleration)) * ROUNDING,
+    rate: Math.max(rate(from), rate(to)) * ROUNDING,
+    angularAcceleration: Math.max(acceleration(from), acceleration(to)) * ROUNDING,
   };
 }
 
