@@ -1,27 +1,21 @@
 import type { Flight } from "../flight/flight.js";
 import { length } from "../math/vec3.js";
-import type { Body } from "./sampled-flight.js";
+import type { Body } from "./body.js";
+import { timeGrid } from "./time-grid.js";
 
 /** Distance between neighbouring float32 numbers, as a part of the number (at most). */
 const FLOAT32 = 1 / 0x80_00_00;
 
 /**
- * The finest tolerance, m, that float32 keys can hold on this flight: four units in the last place of the greatest
- * coordinate that a point of the prop takes, and five times `endShift`.
+ * The finest tolerance, m, that keys can be proved to hold on this flight: four float32 steps of the greatest coordinate
+ * that a point of the prop takes, and five times the surcharge of the finest time grid. Throws a RangeError for a flight that
+ * lasts no time.
  *
- * One unit is what rounding a rotation key may move a point by (1.2e-7 rad), 0.87 what rounding a translation key may;
- * the other two leave the search some room.
+ * One float32 step is what rounding a rotation key may move a point by (1.2e-7 rad), 0.87 what rounding a translation key
+ * may; the other two leave the search some room.
  */
 export const leastTolerance = (flight: Flight, body: Body): number =>
-  4 * FLOAT32 * greatestCoordinate(flight, body) + 5 * endShift(flight, body);
-
-/** m: how far any point can get in the time by which the flight's duration differs from its float32 value. */
-export function endShift(flight: Flight, body: Body): number {
-  const { duration, greatestRate } = flight;
-  // The speed of the centre of mass is a convex function of time: greatest at an end.
-  const speed = Math.max(length(flight.velocity(0)), length(flight.velocity(duration)));
-  return (speed + body.reach * greatestRate) * Math.abs(Math.fround(duration) - duration);
-}
+  4 * FLOAT32 * greatestCoordinate(flight, body) + 5 * timeGrid(flight, body, 0).surcharge;
 
 /** Greatest coordinate, m, of any point of the prop or of the model's origin during the flight. */
 export function greatestCoordinate(flight: Flight, body: Body): number {

@@ -1,7 +1,8 @@
 import { cos, sin } from "../math/elementary.js";
 import { GreatCircle } from "./great-circle.js";
 import { longestSegments } from "./longest-segments.js";
-import { type SampledFlight, STRIDE } from "./sampled-flight.js";
+import type { SampledFlight } from "./sampled-flight.js";
+import { STRIDE } from "./time-grid.js";
 
 /** Rotation keys on the times of a flight's grid. */
 export interface RotationKeys {

@@ -1,6 +1,7 @@
 import { longestSegments } from "./longest-segments.js";
 import type { NodePath } from "./node-path.js";
-import { type SampledFlight, STRIDE } from "./sampled-flight.js";
+import type { SampledFlight } from "./sampled-flight.js";
+import { STRIDE } from "./time-grid.js";
 
 /** Translation keys on the times of a flight's grid. */
 export interface TranslationKeys {

@@ -1,14 +1,15 @@
 import type { Flight } from "../flight/flight.js";
 import { cbrt } from "../math/elementary.js";
 import { RequestError } from "../math/request-error.js";
+import type { Body } from "./body.js";
 import { greatestCoordinate, leastTolerance } from "./least-tolerance.js";
 import { rotationKeys } from "./linear-rotation.js";
 import { translationKeys } from "./linear-translation.js";
 import { nodePath } from "./node-path.js";
-import { type Body, type SampledFlight, sampleFlight } from "./sampled-flight.js";
+import { type SampledFlight, sampleFlight } from "./sampled-flight.js";
 import { type Track, trackBytes } from "./track.js";
 
-export type { Body } from "./sampled-flight.js";
+export type { Body } from "./body.js";
 
 /**
  * Part of the tolerance that the rotation may use alone. On twelve flights at three tolerances, with the origin at up to the
@@ -30,27 +31,15 @@ const GREATEST_SHARE = 0.95;
  * end. The error includes what that time's rounding does; a player's own float32 arithmetic may add 2⁻²³ of the greatest
  * coordinate.
  *
- * Throws a RequestError for a tolerance that float32 cannot hold, a RangeError for a flight that lasts no time.
+ * Throws a RequestError for a tolerance that cannot be held (`leastTolerance`), a RangeError for a flight that lasts no time.
  */
 export function linearTrack(flight: Flight, body: Body, toleranceMetres: number): Track {
   const least = leastTolerance(flight, body);
-  if (!(toleranceMetres >= least))
-    throw tooFine(
-      toleranceMetres,
-      least,
-      `float32 keys cannot hold it ${greatestCoordinate(flight, body).toPrecision(2)} m from the world's origin`,
-    );
+  if (!(toleranceMetres >= least)) throw tooFine(flight, body, toleranceMetres, least);
   const sampled = sampleFlight(flight, body, toleranceMetres);
-  if (!(toleranceMetres >= 4 * sampled.surcharge))
-    throw tooFine(
-      toleranceMetres,
-      5 * sampled.surcharge,
-      `proving it takes more than ${sampled.samples} samples of so long and fast a flight`,
-    );
-
   const limit = toleranceMetres - sampled.surcharge;
   const first = cut(sampled, limit, SHARE);
-  if (!first) throw tooFine(toleranceMetres, 2 * toleranceMetres, "no keys hold it");
+  if (!first) throw tooFine(flight, body, toleranceMetres, 2 * toleranceMetres);
   const share = bestShare(first);
   const second = Math.abs(share - SHARE) > SHARE_SLACK ? cut(sampled, limit, share) : undefined;
   return second && trackBytes(second) < trackBytes(first) ? second : first;
@@ -82,12 +71,13 @@ function bestShare(track: Track): number {
   return Math.min(GREATEST_SHARE, (root * root) / (1 + root * root));
 }
 
-function tooFine(tolerance: number, least: number, why: string): RequestError {
+function tooFine(flight: Flight, body: Body, tolerance: number, least: number): RequestError {
+  const far = greatestCoordinate(flight, body).toPrecision(2);
   // Two digits, rounded up.
   const needed = Number((1.06 * least).toPrecision(2));
   return new RequestError(
     ["bake", "tolerance"],
-    `a tolerance of ${tolerance} m is too fine: ${why}`,
+    `a tolerance of ${tolerance} m is finer than float32 keys can hold over ${flight.duration} s and up to ${Number(far)} m from the world's origin`,
     `needs at least ${needed} m`,
   );
 }

@@ -258,7 +258,11 @@ describe("a tolerance that cannot be held", () => {
     ["finer than float32", thrown({ spin: [1, 5, 2] }), 1e-9],
     ["not above 0", thrown({ spin: [1, 5, 2] }), 0],
     ["not a number", thrown({ spin: [1, 5, 2] }), Number.NaN],
-    ["in a long, fast flight", thrown({ spin: [0, 900, 1], gravity: [0, 0, 0], duration: 60 }), 0.00025],
+    [
+      "in a long, fast flight far away",
+      thrown({ centerOfMass: [600, 0, 0], spin: [0, 900, 1], gravity: [0, 0, 0], duration: 60 }),
+      0.00025,
+    ],
   ])("%s is refused with one that can", (_, flight, tolerance) => {
     const error = refusal(() => linearTrack(flight, offCenter, tolerance));
     expect(error.path).toEqual(["bake", "tolerance"]);
