@@ -67,7 +67,7 @@ describe("parts of a mesh", () => {
       triangles: [[a, b, middle], [b, c, middle], second, ...rest],
     };
     expect(parts(cracked).open.map((part) => part.openEdges)).toEqual([3]);
-    const closed: Mesh = { ...cracked, triangles: [...cracked.triangles, [a, middle, c]] };
+    const closed: Mesh = { ...cracked, triangles: [...cracked.triangles, [a, middle, c], [a, a, b]] };
     expect([parts(closed).open.length, parts(closed).closed.length]).toEqual([0, 1]);
   });
 });

@@ -81,6 +81,16 @@ describe("the names long, middle, short", () => {
     );
   });
 
+  test("take the first of components of equal size as the largest, whatever rounding says", () => {
+    const q = fromAxisAngle([0, 0, 1], -Math.PI / 4);
+    for (const noise of [-1e-15, 0, 1e-15, 3e-15]) {
+      const uneven = map(tensor([1, 2, 3], q), (value, i, j) => (i === j ? value + i * noise : value));
+      const { long, middle } = axisNames(uneven);
+      expect(distance(long, [S, -S, 0])).toBeLessThan(1e-14);
+      expect(distance(middle, [S, S, 0])).toBeLessThan(1e-14);
+    }
+  });
+
   test("of a turned cube and of a ball are x, y, z", () => {
     const expected = { long: [1, 0, 0], middle: [0, 1, 0], short: [0, 0, 1] };
     expect(axisNames(shaken(tensor([2, 2, 2], fromAxisAngle([1, 2, 3], 0.7))))).toEqual(expected);
