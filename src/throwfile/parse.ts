@@ -50,6 +50,7 @@ export function parseThrowFile(name: string, text: string): ThrowFile {
     return undefined;
   };
   const frameRate = top("frameRate", shape.frameRate) ?? 30;
+  top("$schema", shape.$schema);
   const seed = top("seed", shape.seed) ?? "0";
   const gravity = top("gravity", shape.gravity) ?? 0;
   const host = top("host", shape.host);

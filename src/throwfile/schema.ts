@@ -4,7 +4,7 @@
  */
 
 import * as z from "zod";
-import { list, NAME, name, word, yesNo } from "./form.js";
+import { list, NAME, name, text, word, yesNo } from "./form.js";
 import { host } from "./host.js";
 import { hoist, inheritable, type JsonSchema } from "./json-schema.js";
 import { defaulting, keys, leaf, optional } from "./key.js";
@@ -59,6 +59,10 @@ const byName = <S extends z.ZodType>(entry: S, description: string) =>
 const fileSchema = (throwEntry: typeof usualThrow) =>
   keys(
     {
+      $schema: optional(
+        text("where an editor finds the schema"),
+        "where an editor finds this schema; says nothing about throws",
+      ),
       seed: defaulting(seed, "0", "text or whole number: another seed, other draws"),
       gravity: defaulting(number({ min: 0, unit: "m/s²" }), 9.80665, "m/s² along -Y"),
       frameRate: defaulting(
