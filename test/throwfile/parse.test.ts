@@ -67,7 +67,7 @@ describe("the grammar's example", () => {
   test("may say where its schema is, in text", () => {
     const pointed = parse(`$schema: throws.schema.json\n${QUAY}`);
     expect([...pointed.throws]).toEqual([...parse(QUAY).throws]);
-    expect(faultsOf(`$schema: 7\n${QUAY}`)).toMatchObject([{ line: 1, column: 10, path: ["$schema"] }]);
+    expect(faultsOf(`$schema: 7\n${QUAY}`)).toMatchObject([{ line: 1, column: 1, path: ["$schema"] }]);
   });
 
   test("is the same with Windows line ends, a byte order mark, or as JSON", () => {
