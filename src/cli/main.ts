@@ -9,6 +9,7 @@ import { ThrowFileError } from "../throwfile/errors.js";
 import { bakeCommand } from "./bake.js";
 import { ExitCode } from "./exit-code.js";
 import { schemaCommand } from "./schema.js";
+import { verifyCommand } from "./verify.js";
 import { weighCommand } from "./weigh.js";
 
 /** Runs one command line (without node and script) and answers its exit code; prints, but never ends the process. */
@@ -26,7 +27,7 @@ export async function main(args: readonly string[]): Promise<number> {
     .helpCommand(false)
     .showHelpAfterError("(tossbake --help lists the commands)")
     .exitOverride();
-  for (const command of [weighCommand(), bakeCommand(answer), schemaCommand()])
+  for (const command of [weighCommand(), bakeCommand(answer), verifyCommand(answer), schemaCommand()])
     program.addCommand(command.copyInheritedSettings(program));
   try {
     await program.parseAsync(args, { from: "user" });

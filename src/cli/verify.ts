@@ -1,0 +1,128 @@
+import { basename, dirname, join, resolve } from "node:path";
+import { Command } from "commander";
+import { bake } from "../bake/bake.js";
+import { RequestError } from "../math/request-error.js";
+import { length } from "../math/vec3.js";
+import { checkFolder, compareFiles, contentsOf, readBakedFolder } from "../node/baked-folder.js";
+import { type OpenedThrowFile, openThrowFile } from "../node/throw-file.js";
+import type { TakesRecord } from "../record/clip-record.js";
+import { compareBakes, type Drift } from "../record/compare.js";
+import { gravity } from "../record/compare-host.js";
+import { driftLines } from "../record/compare-report.js";
+import { formatRecord } from "../record/format.js";
+import { recordOf } from "../record/record-of.js";
+import { ExitCode } from "./exit-code.js";
+import { progress } from "./progress.js";
+
+interface Options {
+  output: string;
+  against?: string;
+  json?: boolean;
+}
+
+interface Comparison {
+  drifts: Drift[];
+  /** What both sides are, for the last line. */
+  checked: TakesRecord;
+  title: string;
+}
+
+export const verifyCommand = (answer: (code: number) => void) =>
+  new Command("verify")
+    .description(
+      "say what a folder's clips and takes.json differ in from what the throw file bakes now; writes nothing",
+    )
+    .argument("[throwfile]", "what was baked; with --against only its host's axes and unit count")
+    .requiredOption("-o, --output <dir>", "folder that was baked into")
+    .option("--against <dir>", "compare with this folder instead: what changed from there to the other")
+    .option("--json", "print every difference as JSON")
+    .addHelpText(
+      "after",
+      "\nExamples:\n  tossbake verify quay.throws.yaml -o out\n  tossbake verify -o out --against out-before",
+    )
+    .action(async (path: string | undefined, options: Options) => {
+      const { drifts, checked, title } = await compare(path, options);
+      const isDrift = drifts.length > 0;
+      process.stdout.write(
+        options.json
+          ? formatRecord({ drift: isDrift, rows: drifts })
+          : isDrift
+            ? `${driftLines(drifts).join("\n")}\n\n${title}: ${drifts.length} ${drifts.length === 1 ? "difference" : "differences"}\n`
+            : `${title}: no drift in ${checked.clips.length} ${checked.clips.length === 1 ? "take" : "takes"}\n`,
+      );
+      if (isDrift) answer(ExitCode.checkFailed);
+    });
+
+function compare(path: string | undefined, { output, against }: Options): Promise<Comparison> {
+  if (against !== undefined) return compareFolders(path, output, against);
+  if (path !== undefined) return compareWithBake(path, output);
+  throw new RequestError(
+    ["verify"],
+    "no throw file is named",
+    "name the one that was baked, or --against a folder",
+  );
+}
+
+async function compareWithBake(path: string, folder: string): Promise<Comparison> {
+  const before = await readBakedFolder(folder);
+  const opened = await openThrowFile(path);
+  const shown = progress();
+  const baked = await bake(opened.file, opened.models, { onTake: shown.update }).finally(shown.end);
+  const now = await recordOf(opened.file, opened.text, baked);
+  const contents = new Map(baked.throws.map(({ file }) => [file.name, file.content]));
+  const files = [
+    ...(await compareFiles([now, before.record], async (name) => contents.get(name), contentsOf(folder))),
+    ...(await checkFolder(folder, now, modelsIn(folder, path, opened))),
+  ];
+  return {
+    drifts: compareBakes(before, { record: now }, files, opened.file.host),
+    checked: now,
+    title: `${folder} beside ${path}`,
+  };
+}
+
+/** The throw file's own models that lie in the folder. */
+function modelsIn(folder: string, path: string, { file }: OpenedThrowFile): Set<string> {
+  const paths = [...file.props.values()].flatMap(({ model }) =>
+    model === undefined ? [] : [resolve(dirname(path), model)],
+  );
+  return new Set(paths.filter((model) => dirname(model) === resolve(folder)).map((model) => basename(model)));
+}
+
+async function compareFolders(path: string | undefined, folder: string, other: string): Promise<Comparison> {
+  const [now, before] = [await readBakedFolder(folder), await readBakedFolder(other)];
+  const host = path === undefined ? undefined : (await openThrowFile(path)).file.host;
+  if (path === undefined) {
+    checkAxes(folder, now.record);
+    checkAxes(other, before.record);
+  }
+  const known = new Set(
+    [now, before].flatMap(({ record }) => Object.values(record.props).map(({ source }) => basename(source))),
+  );
+  const own = async (name: string, record: TakesRecord) =>
+    (await checkFolder(name, record, known)).map((file) => ({ ...file, name: join(name, file.name) }));
+  const files = [
+    ...(await compareFiles([now.record, before.record], contentsOf(other), contentsOf(folder))),
+    ...(await own(folder, now.record)),
+    ...(await own(other, before.record)),
+  ];
+  return {
+    drifts: compareBakes(before, now, files, host),
+    checked: now.record,
+    title: `${folder} against ${other}`,
+  };
+}
+
+/** A record does not name its host; one whose things do not fall along -Y has one, and its numbers would be told wrongly. */
+function checkAxes(folder: string, { clips }: TakesRecord) {
+  const clip = clips.find((clip) => {
+    const [x, y, z] = gravity(clip);
+    return length([x, Math.max(y, 0), z]) > 1e-6 * length([x, y, z]);
+  });
+  if (!clip) return;
+  throw new RequestError(
+    [join(folder, "takes.json")],
+    `${clip.name} does not fall along -Y: the numbers are those of a host`,
+    "name the throw file too, which says in which axes and unit",
+  );
+}

@@ -1,0 +1,30 @@
+/** Whether two records of a take are in the axes and unit of different hosts: a record does not name its host. */
+
+import { cross, distance, dot, length, scale, subtract, type Vec3 } from "../math/vec3.js";
+import type { ClipRecord } from "./clip-record.js";
+
+/** What two records of one motion may differ by, relative: they have twelve digits. */
+const ROUNDING = 1e-9;
+
+/** Says so, or answers undefined: gravity points along another axis, or every length is the same number of times another. */
+export function hostChange(before: ClipRecord, now: ClipRecord): string | undefined {
+  const old = gravity(before);
+  const fresh = gravity(now);
+  const product = length(old) * length(fresh);
+  if (product === 0) return undefined;
+  if (length(cross(old, fresh)) > ROUNDING * product || dot(old, fresh) < 0)
+    return "is recorded in other axes (another host)";
+  const factor = length(fresh) / length(old);
+  const ratios = [
+    length(now.release.velocity) / length(before.release.velocity),
+    distance(now.release.centerOfMass, now.arrival.centerOfMass) /
+      distance(before.release.centerOfMass, before.arrival.centerOfMass),
+  ];
+  const isScaled =
+    Math.abs(factor - 1) > ROUNDING && ratios.every((r) => Math.abs(r / factor - 1) < ROUNDING);
+  return isScaled ? "is recorded in another unit (another host)" : undefined;
+}
+
+/** In the host's axes and unit. */
+export const gravity = ({ release, arrival, flight }: ClipRecord): Vec3 =>
+  scale(subtract(arrival.velocity, release.velocity), 1 / flight.time);
