@@ -42,6 +42,8 @@ export interface Bake {
 export interface BakeOptions {
   /** Names of the throws to bake; default all. */
   only?: readonly string[];
+  /** First and last number of the takes to bake; default all. */
+  takes?: readonly [number, number];
   /** Told after each take. */
   onTake?: (done: number, total: number) => void;
 }
@@ -50,14 +52,17 @@ export interface BakeOptions {
  * Bakes a throw file in memory.
  *
  * @throws ThrowFileError for a throw that cannot be, ModelError for a model that cannot be used, RequestError for `only` naming no throw
+ *   and for `takes` that no throw has
  */
 export async function bake(file: ThrowFile, source: ModelSource, options: BakeOptions = {}): Promise<Bake> {
-  const entries = selectThrows(file, options.only);
-  const props = await loadProps(file, new Set(entries.map((entry) => entry.prop)), source);
-  const total = entries.reduce((sum, entry) => sum + takeNumbers(entry.takes).length, 0);
+  const chosen = selectTakes(selectThrows(file, options.only), options.takes);
+  const props = await loadProps(file, new Set(chosen.map(({ entry }) => entry.prop)), source);
+  const total = chosen.reduce((sum, { numbers }) => sum + numbers.length, 0);
   let done = 0;
-  const throws = entries.map((entry) =>
-    bakeThrow(file, entry, props.get(entry.prop) as LoadedProp, () => options.onTake?.(++done, total)),
+  const throws = chosen.map(({ entry, numbers }) =>
+    bakeThrow(file, entry, numbers, props.get(entry.prop) as LoadedProp, () =>
+      options.onTake?.(++done, total),
+    ),
   );
   return { props, throws };
 }
@@ -73,15 +78,35 @@ function selectThrows(file: ThrowFile, only?: readonly string[]): ThrowEntry[] {
   return [...file.throws.values()].filter((entry) => !only || only.includes(entry.name));
 }
 
+/** The throws that have any of the takes, with the numbers of those they have. */
+function selectTakes(
+  entries: readonly ThrowEntry[],
+  takes?: BakeOptions["takes"],
+): { entry: ThrowEntry; numbers: readonly number[] }[] {
+  const all = entries.map((entry) => ({ entry, numbers: takeNumbers(entry.takes) }));
+  if (!takes) return all;
+  const [first, last] = takes;
+  const chosen = all
+    .map(({ entry, numbers }) => ({ entry, numbers: numbers.filter((n) => n >= first && n <= last) }))
+    .filter(({ numbers }) => numbers.length > 0);
+  if (chosen.length > 0) return chosen;
+  throw new RequestError(
+    ["--takes"],
+    `no throw has a take from ${first} to ${last}`,
+    `the last take is ${all.reduce((most, { numbers }) => numbers.reduce((m, n) => Math.max(m, n), most), 0)}`,
+  );
+}
+
 function bakeThrow(
   file: ThrowFile,
   entry: ThrowEntry,
+  numbers: readonly number[],
   { prop, model }: LoadedProp,
   onTake: () => void,
 ): BakedThrow {
   const nearest = nearestFinder(prop.reach);
   try {
-    const takes = takeNumbers(entry.takes).map((number) => {
+    const takes = numbers.map((number) => {
       const baked = bakeTake(file, entry, prop, number, nearest);
       onTake();
       return baked;

@@ -1,5 +1,6 @@
-import { Command } from "commander";
+import { Command, InvalidArgumentError } from "commander";
 import { bake } from "../bake/bake.js";
+import { RequestError } from "../math/request-error.js";
 import { mergeRecord } from "../node/kept-record.js";
 import { writeFiles } from "../node/output-folder.js";
 import { openThrowFile } from "../node/throw-file.js";
@@ -13,6 +14,7 @@ import { span, table } from "./table.js";
 interface Options {
   output: string;
   only?: string[];
+  takes?: [number, number];
   dryRun?: boolean;
   json?: boolean;
 }
@@ -27,13 +29,21 @@ export const bakeCommand = (answer: (code: number) => void) =>
     .argument("<throwfile>", "what is thrown and how (YAML or JSON)")
     .requiredOption("-o, --output <dir>", "folder for the clips")
     .option("--only <name...>", "these throws alone; the others' clips and records stay as they are")
+    .option("--takes <a-b>", "these takes alone, such as 3-7; with --dry-run", takeRange)
     .option("--dry-run", "solve and print, but write nothing")
     .option("--json", "print the record instead of the table")
     .addHelpText("after", "\nExample:\n  tossbake bake quay.throws.yaml -o out")
     .action(async (path: string, options: Options) => {
+      if (options.takes && !options.dryRun)
+        throw new RequestError(
+          ["--takes"],
+          "a throw's file holds all its takes, so that some of them cannot be written alone",
+          "add --dry-run to see them, or list the takes wanted under the throw's own takes",
+        );
       const { file, text, models } = await openThrowFile(path);
       const shown = progress();
-      const baked = await bake(file, models, { only: options.only, onTake: shown.update }).finally(shown.end);
+      const { only, takes } = options;
+      const baked = await bake(file, models, { only, takes, onTake: shown.update }).finally(shown.end);
       const fresh = await recordOf(file, text, baked);
       if (!options.dryRun) {
         const record = await mergeRecord(options.output, fresh, file);
@@ -45,6 +55,14 @@ export const bakeCommand = (answer: (code: number) => void) =>
       process.stdout.write(options.json ? formatRecord(fresh) : report(fresh, options));
       if (fresh.clips.some(missed)) answer(ExitCode.checkFailed);
     });
+
+function takeRange(text: string): [number, number] {
+  const match = /^(\d{1,9})-(\d{1,9})$/.exec(text);
+  const [first, last] = [Number(match?.[1]), Number(match?.[2])];
+  if (!(first >= 1 && last >= first))
+    throw new InvalidArgumentError("It is the first and the last take, such as 3-7.");
+  return [first, last];
+}
 
 const missed = ({ miss }: ClipRecord) =>
   (miss.position ?? 0) > MISS_METRES || (miss.angle ?? 0) > MISS_RADIANS;

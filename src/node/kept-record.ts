@@ -2,18 +2,30 @@
 
 import { readFile } from "node:fs/promises";
 import { join } from "node:path";
+import { RequestError } from "../math/request-error.js";
 import type { TakesRecord } from "../record/clip-record.js";
 import { parseRecord } from "../record/parse.js";
 import type { ThrowFile } from "../throwfile/types.js";
 
-/** The folder's record, or undefined where there is none. */
-export async function readRecord(folder: string): Promise<TakesRecord | undefined> {
+/**
+ * The folder's record and its text, or undefined where there is none.
+ *
+ * @throws RequestError for a takes.json that is none or cannot be read
+ */
+export async function readRecord(folder: string): Promise<{ record: TakesRecord; text: string } | undefined> {
   const path = join(folder, "takes.json");
   try {
-    return parseRecord(path, await readFile(path, "utf8"));
+    const text = await readFile(path, "utf8");
+    return { text, record: parseRecord(path, text) };
   } catch (error) {
-    if ((error as NodeJS.ErrnoException).code === "ENOENT") return undefined;
-    throw error;
+    if (error instanceof RequestError) throw error;
+    const code = (error as NodeJS.ErrnoException).code;
+    if (code === "ENOENT" || code === "ENOTDIR") return undefined;
+    throw new RequestError(
+      [path],
+      `cannot be read (${code})`,
+      "check that it is a file, and its permissions",
+    );
   }
 }
 
@@ -25,13 +37,15 @@ export async function readRecord(folder: string): Promise<TakesRecord | undefine
 export async function mergeRecord(folder: string, fresh: TakesRecord, file: ThrowFile): Promise<TakesRecord> {
   const baked = new Set(fresh.clips.map((clip) => clip.throw));
   const missing = [...file.throws.keys()].filter((name) => !baked.has(name));
-  const old = missing.length > 0 ? await readRecord(folder) : undefined;
+  const old = missing.length > 0 ? (await readRecord(folder))?.record : undefined;
   if (!old) return fresh;
   const kept = old.clips.filter((clip) => missing.includes(clip.throw));
   const clips = [...file.throws.keys()].flatMap((name) =>
     [...fresh.clips, ...kept].filter((clip) => clip.throw === name),
   );
-  const props = [...file.props.keys()].flatMap((name) => {
+  // a throw kept may have been thrown with a prop that the throw file no longer has
+  const names = new Set([...file.props.keys(), ...kept.map((clip) => clip.prop)]);
+  const props = [...names].flatMap((name) => {
     const prop = fresh.props[name] ?? (kept.some((clip) => clip.prop === name) ? old.props[name] : undefined);
     return prop ? [[name, prop] as const] : [];
   });
