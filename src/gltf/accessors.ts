@@ -1,4 +1,5 @@
 import { type Accessor, type GLTF, Logger, WebIO } from "@gltf-transform/core";
+import { unpackViews } from "./meshopt.js";
 import { type GltfJson, type Model, ModelError } from "./model.js";
 
 /** Elements read at most: many accessors may stand on the same bytes, so the file's size alone is no bound. */
@@ -12,7 +13,7 @@ export async function decodeAccessors(
   model: Model,
   indices: Iterable<number>,
 ): Promise<Map<number, Accessor>> {
-  const { accessors = [], bufferViews = [], buffers = [] } = model.json;
+  const { accessors = [], bufferViews = [] } = model.json;
   const wanted = [...new Set(indices)];
   const total = wanted.reduce((sum, index) => sum + accessors[index].count, 0);
   if (total > GREATEST_TOTAL)
@@ -21,6 +22,12 @@ export async function decodeAccessors(
       `its meshes state ${total} vertices and indices`,
       `at most ${GREATEST_TOTAL} are read`,
     );
+  const unpacked = await unpackViews(
+    model,
+    wanted.flatMap((index) => viewsOf(accessors[index])),
+  );
+  const contents = [...model.buffers, ...unpacked.values()];
+  const ownBuffer = new Map([...unpacked.keys()].map((view, i) => [view, model.buffers.length + i]));
   const sparse = wanted.filter((index) => accessors[index].sparse);
   const uri = (i: number): string => `${i}.bin`;
   const json: GltfJson = {
@@ -29,12 +36,14 @@ export async function decodeAccessors(
       ...wanted.map((index) => withOwnOffsets(accessors[index])),
       ...sparse.map((index) => sparseNumbers(accessors[index])),
     ],
-    bufferViews,
-    buffers: buffers.map(({ byteLength }, i) => ({ byteLength, uri: uri(i) })),
+    bufferViews: bufferViews.map((view, i) =>
+      ownBuffer.has(i) ? { ...view, buffer: ownBuffer.get(i)!, byteOffset: 0 } : view,
+    ),
+    buffers: contents.map(({ byteLength }, i) => ({ byteLength, uri: uri(i) })),
   };
   // glTF-Transform types its bytes more narrowly than the platform's readers do.
   const resources = Object.fromEntries(
-    model.buffers.map((bytes, i) => [uri(i), bytes as Uint8Array<ArrayBuffer>]),
+    contents.map((bytes, i) => [uri(i), bytes as Uint8Array<ArrayBuffer>]),
   );
   const io = new WebIO().setLogger(new Logger(Logger.Verbosity.SILENT));
   const decoded = (await io.readJSON({ json, resources })).getRoot().listAccessors();
@@ -50,6 +59,12 @@ export async function decodeAccessors(
   });
   return new Map(wanted.map((index, i) => [index, decoded[i]]));
 }
+
+/** The buffer views that an accessor reads. */
+const viewsOf = ({ bufferView, sparse }: GLTF.IAccessor): number[] => [
+  ...(bufferView === undefined ? [] : [bufferView]),
+  ...(sparse ? [sparse.indices.bufferView, sparse.values.bufferView] : []),
+];
 
 /** glTF-Transform gives a sparse part without an offset that of its accessor; the specification's default is 0. */
 function withOwnOffsets(accessor: GLTF.IAccessor): GLTF.IAccessor {

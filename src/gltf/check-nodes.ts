@@ -1,3 +1,4 @@
+import { checkNodeExtensions } from "./check-geometry-extensions.js";
 import type { Checker, JsonObject } from "./checker.js";
 
 /** Far more than any rig; players recurse over the hierarchy and give out at some thousands. */
@@ -8,8 +9,10 @@ export function checkNodes(json: JsonObject, check: Checker): void {
   const nodes = check.objects(json, "nodes");
   const count = (key: string): number => check.objects(json, key).length;
   const counts = { meshes: count("meshes"), skins: count("skins"), cameras: count("cameras") };
+  const accessors = check.objects(json, "accessors");
   nodes.forEach((node, i) => {
     const where = `nodes[${i}]`;
+    checkNodeExtensions(node, where, nodes.length, accessors, check);
     check.index(node.mesh, `${where}.mesh`, counts.meshes, "meshes", "optional");
     check.index(node.skin, `${where}.skin`, counts.skins, "skins", "optional");
     check.index(node.camera, `${where}.camera`, counts.cameras, "cameras", "optional");

@@ -1,27 +1,31 @@
 import { FLOAT, UNSIGNED } from "./accessor-layout.js";
 import { checkAccessors } from "./check-accessors.js";
+import { checkDraco, checkMeshopt } from "./check-geometry-extensions.js";
 import { checkNodes } from "./check-nodes.js";
 import { Checker, type JsonObject } from "./checker.js";
+import { DRACO } from "./draco.js";
+import { INSTANCING } from "./instancing.js";
+import { MESHOPT } from "./meshopt.js";
 import type { GltfJson } from "./model.js";
+import { LOD, VISIBILITY } from "./shown-nodes.js";
 
-/** Extensions that change nothing about where a triangle lies, or only its encoding in a way that is read. */
-const KNOWN = new Set([
+/** Extensions that are read, or change nothing about where a triangle lies. */
+const KNOWN = new Set<string>([
+  ...MESHOPT,
+  DRACO,
+  INSTANCING,
+  LOD,
+  VISIBILITY,
   "KHR_mesh_quantization",
   "KHR_texture_transform",
   "KHR_texture_basisu",
   "EXT_texture_webp",
   "EXT_texture_avif",
   "KHR_lights_punctual",
-  "KHR_node_visibility",
+  "KHR_animation_pointer",
   "KHR_xmp_json_ld",
   "EXT_mesh_features",
   "EXT_structural_metadata",
-]);
-const NOT_YET = new Set([
-  "KHR_draco_mesh_compression",
-  "EXT_meshopt_compression",
-  "EXT_mesh_gpu_instancing",
-  "KHR_mesh_primitive_restart",
 ]);
 
 /**
@@ -33,6 +37,7 @@ export function checkJson(model: string, json: JsonObject): asserts json is Json
   checkAsset(json, check);
   checkExtensions(json, check);
   checkAccessors(json, check);
+  checkMeshopt(json, check);
   checkNodes(json, check);
   checkMeshes(json, check);
   checkAnimations(json, check);
@@ -66,17 +71,13 @@ function checkExtensions(json: JsonObject, check: Checker): void {
       });
   for (const name of (json.extensionsRequired as string[] | undefined) ?? []) {
     if (KNOWN.has(name) || name.startsWith("KHR_materials_")) continue;
-    check.refuse(
-      `it requires the extension ${name}`,
-      NOT_YET.has(name)
-        ? "that is not read yet: save the model without it"
-        : "that is not known here: save the model without it",
-    );
+    check.refuse(`it requires the extension ${name}`, "that is not known here: save the model without it");
   }
 }
 
 function checkMeshes(json: JsonObject, check: Checker): void {
   const accessors = check.objects(json, "accessors");
+  const views = check.objects(json, "bufferViews").length;
   const materials = check.objects(json, "materials");
   materials.forEach((material, i) => {
     if (material.name !== undefined) check.string(material.name, `materials[${i}].name`);
@@ -94,6 +95,7 @@ function checkMeshes(json: JsonObject, check: Checker): void {
         if (count !== undefined && count !== vertices)
           check.refuse(`${where}.targets[${t}] moves ${count} vertices`, `the primitive has ${vertices}`);
       });
+      checkDraco(primitive, where, views, check);
       check.index(primitive.material, `${where}.material`, materials.length, "materials", "optional");
       if (primitive.mode !== undefined) check.integer(primitive.mode, `${where}.mode`, 0, 6);
       check.index(primitive.indices, `${where}.indices`, accessors.length, "accessors", "optional");

@@ -1,6 +1,7 @@
 /** What a glTF file is to this program: its JSON, as text and parsed, beside the bytes it refers to. */
 
 import type { GLTF } from "@gltf-transform/core";
+import type { Decoders } from "./decoders.js";
 
 export type GltfJson = GLTF.IGLTF;
 
@@ -12,12 +13,17 @@ export interface Model {
   /** The JSON text exactly as read. */
   text: string;
   json: GltfJson;
-  /** Content of each of `json.buffers`; at least its `byteLength`, and longer where the chunk or file was. */
+  /**
+   * Content of each of `json.buffers`; at least its `byteLength`, and longer where the chunk or file was. Empty for a buffer
+   * that only keeps the place of compressed views and has none.
+   */
   buffers: Uint8Array[];
   /** Content of external image files by index in `json.images`. */
   images: Map<number, Uint8Array>;
   /** Chunks of a GLB after the first two, with their headers, as they were. */
   otherChunks?: Uint8Array;
+  /** What the caller handed over to read compressed meshes with. */
+  decoders?: Decoders;
 }
 
 /**

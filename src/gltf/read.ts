@@ -1,15 +1,23 @@
 import { checkJson } from "./check.js";
+import type { Decoders } from "./decoders.js";
 import { isGlb, splitGlb } from "./glb.js";
 import { parseJson } from "./json-text.js";
+import { isFallback } from "./meshopt.js";
 import { type GltfJson, type Model, ModelError, type ResolveResource } from "./model.js";
 import { dataUriBytes, isDataUri, relativePath } from "./uri.js";
 
 /**
  * Reads a .glb or .gltf file (glTF 2.0) and checks it before anything follows what it says: lengths, indices, cycles,
  * ranges, and that it names no file outside its folder and no address. `name` is used in messages. Files the model names
- * are asked of `resolve`. Throws ModelError for whatever is wrong with the model.
+ * are asked of `resolve`; `decoders` are for compressed meshes, which are decoded when their triangles are asked for. Throws
+ * ModelError for whatever is wrong with the model.
  */
-export async function readModel(name: string, bytes: Uint8Array, resolve?: ResolveResource): Promise<Model> {
+export async function readModel(
+  name: string,
+  bytes: Uint8Array,
+  resolve?: ResolveResource,
+  decoders?: Decoders,
+): Promise<Model> {
   const glb = isGlb(bytes) ? splitGlb(name, bytes) : undefined;
   const { text, value } = parseJson(name, glb?.json ?? bytes);
   checkJson(name, value);
@@ -17,6 +25,10 @@ export async function readModel(name: string, bytes: Uint8Array, resolve?: Resol
   const external = collectPaths(name, json);
   const buffers: Uint8Array[] = [];
   for (const [i, buffer] of (json.buffers ?? []).entries()) {
+    if (buffer.uri === undefined && isFallback(buffer)) {
+      buffers.push(new Uint8Array());
+      continue;
+    }
     const content = await bufferContent(i);
     if (content.length < buffer.byteLength)
       throw new ModelError(
@@ -36,6 +48,7 @@ export async function readModel(name: string, bytes: Uint8Array, resolve?: Resol
     buffers,
     images,
     ...(glb?.others && { otherChunks: glb.others }),
+    ...(decoders && { decoders }),
   };
 
   async function bufferContent(i: number): Promise<Uint8Array> {

@@ -39,6 +39,14 @@ export function treeRoots(json: GltfJson): number[] {
   return (json.nodes ?? []).flatMap((_, i) => (children.has(i) ? [] : [i]));
 }
 
+/** The given nodes and all below them. */
+export function subtree(json: GltfJson, roots: Iterable<number>): Set<number> {
+  // A set may grow while it is gone through.
+  const nodes = new Set(roots);
+  for (const node of nodes) for (const child of json.nodes![node].children ?? []) nodes.add(child);
+  return nodes;
+}
+
 /**
  * The frames of all nodes under `roots` (default: those of the default scene), node → scene, parents before children in
  * the order of the file; in double precision from the JSON's numbers, without recursion (glTF 2.0, 3.5.3).
@@ -103,15 +111,24 @@ export function frameRotation(linear: Mat3): Quat | undefined {
   return fromMatrix(transpose([x, y, cross(x, y)]));
 }
 
-function localFrame(json: GltfJson, index: number): Frame {
+/** A node's own frame: node → parent. */
+export function localFrame(json: GltfJson, index: number): Frame {
   const node = json.nodes![index];
-  if (node.matrix) return matrixFrame(node.matrix);
+  return node.matrix ? matrixFrame(node.matrix) : transformFrame(node);
+}
+
+/** The frame of a translation, rotation and scale as glTF states them; what is missing changes nothing. */
+export function transformFrame(parts: {
+  translation?: readonly number[];
+  rotation?: readonly number[];
+  scale?: readonly number[];
+}): Frame {
   // Stated to float32 as a rule: its length is not quite 1.
-  const rotation = toMatrix(normalize((node.rotation as Quat | undefined) ?? IDENTITY_ROTATION));
-  const [x, y, z] = node.scale ?? [1, 1, 1];
+  const rotation = toMatrix(normalize((parts.rotation as Quat | undefined) ?? IDENTITY_ROTATION));
+  const [x, y, z] = parts.scale ?? [1, 1, 1];
   const row = (r: Vec3): Vec3 => [r[0] * x, r[1] * y, r[2] * z];
   return {
     linear: [row(rotation[0]), row(rotation[1]), row(rotation[2])],
-    origin: (node.translation as Vec3 | undefined) ?? ZERO,
+    origin: (parts.translation as Vec3 | undefined) ?? ZERO,
   };
 }

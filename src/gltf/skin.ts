@@ -2,6 +2,7 @@ import type { Accessor, GLTF } from "@gltf-transform/core";
 import { add as addMatrices, scale as scaleMatrix } from "../math/mat3.js";
 import { addScaled, scale, type Vec3 } from "../math/vec3.js";
 import type { GltfJson } from "./model.js";
+import type { Primitives } from "./primitives.js";
 import { compose, type Frame, matrixFrame, sceneFrames, treeRoots } from "./scene.js";
 
 /** Indices of the accessors that place a skinned primitive; none where it is not skinned. */
@@ -21,18 +22,18 @@ export function skinAccessors(json: GltfJson, node: number, primitive: GLTF.IMes
  */
 export function skinFrames(
   json: GltfJson,
-  accessors: Map<number, Accessor>,
+  { plain, accessor }: Pick<Primitives, "plain" | "accessor">,
 ): (node: number, primitive: GLTF.IMeshPrimitive) => ((vertex: number) => Frame) | undefined {
   if (!json.skins?.length) return () => undefined;
   const frames = sceneFrames(json, treeRoots(json));
   const jointsOf = new Map<GLTF.ISkin, Frame[]>();
   return (node, primitive) => {
     const skin = skinOf(json, node);
-    const sets = influences(primitive).map((pair) => pair.map((index) => accessors.get(index)!));
+    const sets = influences(primitive).map((pair) => pair.map((index) => accessor(primitive, index)));
     if (!skin || sets.length === 0) return undefined;
     let joints = jointsOf.get(skin);
     if (!joints) {
-      const inverse = accessors.get(skin.inverseBindMatrices ?? -1);
+      const inverse = plain.get(skin.inverseBindMatrices ?? -1);
       joints = skin.joints.map((joint, i) => {
         const frame = frames.get(joint)!;
         return inverse ? compose(frame, matrixFrame(inverse.getElement(i, []))) : frame;

@@ -40,6 +40,12 @@ export function spliceGlb(model: Model, graft: Graft): Uint8Array {
   edit.append("animations", animations);
   edit.append("accessors", pack.accessors);
 
+  if (json.buffers?.[0]?.uri === undefined && model.buffers[0]?.length === 0)
+    throw new ModelError(
+      model.name,
+      "buffers[0] only keeps the place of compressed data",
+      "a GLB's first buffer has content: put another one first",
+    );
   const binary = new Binary(model.buffers[0] ?? new Uint8Array());
   const views: GLTF.IBufferView[] = [];
   if (pack.byteLength > 0) {

@@ -5,6 +5,7 @@ import { basename, dirname, resolve, sep } from "node:path";
 import { type Model, ModelError } from "../gltf/model.js";
 import { readModel } from "../gltf/read.js";
 import { sha256 } from "../math/hash.js";
+import { DECODERS } from "./draco.js";
 
 /** Larger files are refused before they are read: GLB itself counts its length in 32 bits. */
 const GREATEST_BYTES = 0xffffffff;
@@ -27,7 +28,10 @@ export async function readModelFile(path: string, shownAs: string): Promise<Mode
   const folder = await realpath(dirname(resolve(path)));
   const parts = [bytes];
   const paths = [resolve(path)];
-  const model = await readModel(shownAs, bytes, async (uri) => {
+  const model = await readModel(shownAs, bytes, readNamed, DECODERS);
+  return { model, sha256: await sha256(...parts), paths };
+
+  async function readNamed(uri: string): Promise<Uint8Array> {
     const named = resolve(folder, uri);
     const real = await realpath(named).catch(() => named);
     if (!real.startsWith(folder + sep))
@@ -40,8 +44,7 @@ export async function readModelFile(path: string, shownAs: string): Promise<Mode
     parts.push(content);
     paths.push(real);
     return content;
-  });
-  return { model, sha256: await sha256(...parts), paths };
+  }
 }
 
 async function readGuarded(path: string, shownAs: string): Promise<Uint8Array> {

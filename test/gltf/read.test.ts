@@ -44,13 +44,6 @@ describe("files that must be refused", () => {
     await expect(reading).rejects.toThrow(`${file}: ${fault}`);
     expect(asked).toEqual(file === "missing_buffer.gltf" ? ["nowhere.bin"] : []);
   });
-
-  it("compressed models, with the extension's name", async () => {
-    const file = readFileSync(new URL("../meshopt_lossless.glb", bad));
-    expect(await complaint(file)).toContain(
-      "it requires the extension EXT_meshopt_compression; that is not read yet",
-    );
-  });
 });
 
 describe("the container", () => {

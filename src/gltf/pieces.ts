@@ -1,0 +1,67 @@
+import type { GLTF } from "@gltf-transform/core";
+import { INSTANCING, instanceCount } from "./instancing.js";
+import { type GltfJson, type Model, ModelError } from "./model.js";
+import { hasTriangles } from "./triangles.js";
+
+/** A primitive with triangles that a node shows, once or as often as the node has instances. */
+export interface Piece {
+  node: number;
+  primitive: GLTF.IMeshPrimitive;
+  /** Its place in the file, for messages. */
+  where: string;
+  /** Of the mesh's morph targets, in the rest pose. */
+  weights: number[];
+  copies: number;
+}
+
+const GREATEST_COPIES = 100_000;
+
+export const tooMuch = ({ name }: Model): ModelError =>
+  new ModelError(
+    name,
+    "its scene shows too much",
+    `at most 5 million triangles in ${GREATEST_COPIES} pieces are read: use a simpler model`,
+  );
+
+/** The pieces that the nodes show; counted as it goes, for a few bytes can name billions. */
+export function listPieces(model: Model, nodes: Iterable<number>, warnings: Set<string>): Piece[] {
+  const { json } = model;
+  const shownBy = new Map<number, Pick<Piece, "primitive" | "where">[]>();
+  const pieces: Piece[] = [];
+  let total = 0;
+  for (const node of nodes) {
+    const { mesh, skin, name, weights } = json.nodes![node];
+    if (mesh === undefined) continue;
+    let copies = instanceCount(json, node);
+    if (skin !== undefined && copies !== 1) {
+      warnings.add(`the node "${name ?? node}" is skinned and has instances (${INSTANCING}): read as one`);
+      copies = 1;
+    }
+    let primitives = shownBy.get(mesh);
+    if (!primitives) {
+      primitives = solidPrimitives(json, mesh, warnings);
+      shownBy.set(mesh, primitives);
+    }
+    for (const { primitive, where } of primitives) {
+      total += copies;
+      if (total > GREATEST_COPIES) throw tooMuch(model);
+      pieces.push({ node, primitive, where, copies, weights: weights ?? json.meshes![mesh].weights ?? [] });
+    }
+  }
+  return pieces;
+}
+
+function solidPrimitives(
+  json: GltfJson,
+  mesh: number,
+  warnings: Set<string>,
+): Pick<Piece, "primitive" | "where">[] {
+  return json.meshes![mesh].primitives.flatMap((primitive, p) => {
+    const where = `meshes[${mesh}].primitives[${p}]`;
+    if (!hasTriangles(primitive.mode ?? 4)) warnings.add(`${where} is points or lines: passed over`);
+    else if (primitive.attributes.POSITION === undefined)
+      warnings.add(`${where} has no positions: passed over`);
+    else return [{ primitive, where }];
+    return [];
+  });
+}
