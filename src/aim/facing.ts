@@ -1,8 +1,8 @@
 /** The orientation in which directions of the prop lie along directions of the world. */
 
 import { type Mat3, multiply, transpose } from "../math/mat3.js";
-import { between, fromMatrix, type Quat } from "../math/quat.js";
-import { addScaled, cross, dot, length, normalize, perpendicular, type Vec3 } from "../math/vec3.js";
+import { between, fromMatrix, multiply as multiplyQuat, type Quat } from "../math/quat.js";
+import { addScaled, cross, dot, length, negate, normalize, perpendicular, type Vec3 } from "../math/vec3.js";
 import { UP } from "./world-directions.js";
 
 /** A direction of the prop (model frame) and the direction of the world it lies along, both unit vectors. */
@@ -29,7 +29,8 @@ export function facingRotation(first: DirectionPair, second?: DirectionPair): Qu
   if (1 + dot(first.prop, first.world) > 1e-14) return between(first.prop, first.world);
   const square = addScaled(UP, first.prop, -dot(UP, first.prop));
   const axis = length(square) > PARALLEL_SINE ? normalize(square) : perpendicular(first.prop);
-  return [axis[0], axis[1], axis[2], 0];
+  // half a turn about it, and what is left to the world's direction where the two are only nearly opposite
+  return multiplyQuat(between(negate(first.prop), first.world), [axis[0], axis[1], axis[2], 0]);
 }
 
 /** Rows: the unit vector, the one square to it and to the normal, the unit normal. */
