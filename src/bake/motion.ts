@@ -6,6 +6,9 @@ import { length, type Vec3 } from "../math/vec3.js";
 import type { Prop } from "../prop/prop.js";
 import type { Conversion } from "./host.js";
 
+/** Of a turn: a body that was asked for two turns has made its second whatever the last digit says. */
+const ROUNDING = 1e-9;
+
 /** A moment of the motion; rotation turns the model from as modelled, angular velocity is in the world frame, rad/s. */
 export interface MotionState {
   centerOfMass: Vec3;
@@ -32,5 +35,6 @@ export function turnTimes(flight: Flight): number[] {
   const momentum = length(flight.angularMomentum);
   if (momentum === 0) return [];
   const turn = (2 * Math.PI * momentum) / (2 * flight.energy);
-  return Array.from({ length: Math.floor(flight.duration / turn) }, (_, i) => (i + 1) * turn);
+  const whole = Math.floor(flight.duration / turn + ROUNDING);
+  return Array.from({ length: whole }, (_, i) => Math.min((i + 1) * turn, flight.duration));
 }
