@@ -46,8 +46,9 @@ export async function mergeRecord(folder: string, fresh: TakesRecord, file: Thro
   // a throw kept may have been thrown with a prop that the throw file no longer has
   const names = new Set([...file.props.keys(), ...kept.map((clip) => clip.prop)]);
   const props = [...names].flatMap((name) => {
-    const prop = fresh.props[name] ?? (kept.some((clip) => clip.prop === name) ? old.props[name] : undefined);
-    return prop ? [[name, prop] as const] : [];
+    // own members only: a prop may be called "constructor"
+    if (Object.hasOwn(fresh.props, name)) return [[name, fresh.props[name]] as const];
+    return kept.some((clip) => clip.prop === name) ? [[name, old.props[name]] as const] : [];
   });
   return { ...fresh, props: Object.fromEntries(props), clips };
 }
