@@ -5,17 +5,19 @@ import { rounded } from "../math/rounded.js";
 const WIDTH = 100;
 
 /** JSON of rounded numbers, two spaces deep, in which what fits on one line of 100 characters stands on one. */
-export const formatRecord = (record: unknown): string => `${layOut(rounded(record), "")}\n`;
+export const formatRecord = (record: unknown): string => `${layOut(rounded(record), "", "")}\n`;
 
-function layOut(value: unknown, indent: string): string {
-  const flat = oneLine(value);
-  if (value === null || typeof value !== "object" || indent.length + flat.length <= WIDTH) return flat;
+/** @param key what stands on the value's first line before it, behind the indent */
+function layOut(value: unknown, indent: string, key: string): string {
+  const flat = indent + key + oneLine(value);
+  // a comma may follow
+  if (value === null || typeof value !== "object" || flat.length < WIDTH) return flat;
   const deeper = `${indent}  `;
   const isList = Array.isArray(value);
   const lines = isList
-    ? value.map((item) => deeper + layOut(item, deeper))
-    : Object.entries(value).map(([key, item]) => `${deeper}${JSON.stringify(key)}: ${layOut(item, deeper)}`);
-  return `${isList ? "[" : "{"}\n${lines.join(",\n")}\n${indent}${isList ? "]" : "}"}`;
+    ? value.map((item) => layOut(item, deeper, ""))
+    : Object.entries(value).map(([name, item]) => layOut(item, deeper, `${JSON.stringify(name)}: `));
+  return `${indent}${key}${isList ? "[" : "{"}\n${lines.join(",\n")}\n${indent}${isList ? "]" : "}"}`;
 }
 
 function oneLine(value: unknown): string {
