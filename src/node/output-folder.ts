@@ -1,6 +1,6 @@
 /** Whole files or none: everything is written under temporary names first and only then given its own. */
 
-import { mkdir, rename, rm, writeFile } from "node:fs/promises";
+import { mkdir, rename, rm, stat, writeFile } from "node:fs/promises";
 import { dirname, join } from "node:path";
 import { MachineError } from "./machine-error.js";
 
@@ -23,9 +23,9 @@ export async function writeFiles(folder: string, files: readonly OutputFile[]): 
     temporary: temporaryName(folder, file.name),
   }));
   try {
-    await mkdir(folder, { recursive: true });
+    await makeFolder(folder);
     for (const file of staged) {
-      await mkdir(dirname(file.path), { recursive: true });
+      await refuseFolder(file.path);
       await writeFile(file.temporary, file.content, { flush: true });
     }
     for (const file of staged) await rename(file.temporary, file.path);
@@ -39,6 +39,30 @@ export async function writeFiles(folder: string, files: readonly OutputFile[]): 
 
 // the process number keeps two bakes into one folder out of each other's temporary files
 const temporaryName = (folder: string, name: string) => join(folder, `.${name}.${process.pid}.part`);
+
+/** Not `mkdir`'s own recursion: it never ends where a folder takes no new ones and says that it is not there (/proc). */
+async function makeFolder(path: string): Promise<void> {
+  try {
+    await mkdir(path);
+  } catch (error) {
+    const { code } = error as NodeJS.ErrnoException;
+    if (code === "ENOENT" && dirname(path) !== path) {
+      await makeFolder(dirname(path));
+      await mkdir(path);
+    } else if (!(await isFolder(path))) throw error;
+  }
+}
+
+/** A rename would find it out only after the files before it had theirs. */
+async function refuseFolder(path: string): Promise<void> {
+  if (await isFolder(path)) throw Object.assign(new Error(path), { code: "EISDIR" });
+}
+
+const isFolder = (path: string): Promise<boolean> =>
+  stat(path).then(
+    (status) => status.isDirectory(),
+    () => false,
+  );
 
 function reason(error: unknown): string {
   const code = (error as NodeJS.ErrnoException).code;
