@@ -3,6 +3,7 @@ import { bake } from "../bake/bake.js";
 import { RequestError } from "../math/request-error.js";
 import { mergeRecord } from "../node/kept-record.js";
 import { writeFiles } from "../node/output-folder.js";
+import { spareInputs } from "../node/spare-inputs.js";
 import { openThrowFile } from "../node/throw-file.js";
 import type { ClipRecord, TakesRecord } from "../record/clip-record.js";
 import { formatRecord } from "../record/format.js";
@@ -40,17 +41,23 @@ export const bakeCommand = (answer: (code: number) => void) =>
           "a throw's file holds all its takes, so that some of them cannot be written alone",
           "add --dry-run to see them, or list the takes wanted under the throw's own takes",
         );
-      const { file, text, models } = await openThrowFile(path);
+      const { file, text, models, inputs } = await openThrowFile(path);
       const shown = progress();
       const { only, takes } = options;
       const baked = await bake(file, models, { only, takes, onTake: shown.update }).finally(shown.end);
       const fresh = await recordOf(file, text, baked);
       if (!options.dryRun) {
         const record = await mergeRecord(options.output, fresh, file);
-        await writeFiles(options.output, [
+        const files = [
           ...baked.throws.map((baked) => baked.file),
           { name: "takes.json", content: formatRecord(record) },
-        ]);
+        ];
+        await spareInputs(
+          options.output,
+          files.map(({ name }) => name),
+          inputs,
+        );
+        await writeFiles(options.output, files);
       }
       process.stdout.write(options.json ? formatRecord(fresh) : report(fresh, options));
       if (fresh.clips.some(missed)) answer(ExitCode.checkFailed);
@@ -107,5 +114,7 @@ function report(record: TakesRecord, options: Options): string {
   const end = options.dryRun
     ? "nothing written (--dry-run)"
     : `written to ${options.output}, with takes.json`;
-  return `${table(head, rows)}\n\n${[...warnings, ...misses].join("")}${record.clips.length} takes of ${names.length} ${names.length === 1 ? "throw" : "throws"} ${end}\n`;
+  return `${table(head, rows)}\n\n${[...warnings, ...misses].join("")}${counted(record.clips.length, "take")} of ${counted(names.length, "throw")} ${end}\n`;
 }
+
+const counted = (count: number, what: string) => `${count} ${what}${count === 1 ? "" : "s"}`;

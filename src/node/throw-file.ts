@@ -1,7 +1,7 @@
 /** A throw file on disk and the models it names. */
 
 import { readFile, stat } from "node:fs/promises";
-import { dirname, join } from "node:path";
+import { dirname, join, resolve } from "node:path";
 import type { ModelSource } from "../bake/props.js";
 import { RequestError } from "../math/request-error.js";
 import { parseThrowFile } from "../throwfile/parse.js";
@@ -15,15 +15,23 @@ export interface OpenedThrowFile {
   file: ThrowFile;
   text: string;
   models: ModelSource;
+  /** Absolute paths of the throw file and, once read, of every file of its models. */
+  inputs: ReadonlySet<string>;
 }
 
 /** @throws ThrowFileError for what is written in it, RequestError for a file that cannot be read */
 export async function openThrowFile(path: string): Promise<OpenedThrowFile> {
   const text = await readText(path);
+  const inputs = new Set([resolve(path)]);
   return {
     text,
     file: parseThrowFile(path, text),
-    models: (model) => readModelFile(join(dirname(path), model), model),
+    models: async (model) => {
+      const read = await readModelFile(join(dirname(path), model), model);
+      for (const file of read.paths) inputs.add(file);
+      return read;
+    },
+    inputs,
   };
 }
 
