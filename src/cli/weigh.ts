@@ -1,6 +1,7 @@
 import { basename, extname } from "node:path";
 import { Command, InvalidArgumentError } from "commander";
 import { type LoadedProp, loadProps } from "../bake/props.js";
+import { RequestError } from "../math/request-error.js";
 import { length, type Vec3 } from "../math/vec3.js";
 import { readModelFile } from "../node/model-files.js";
 import { openThrowFile } from "../node/throw-file.js";
@@ -22,6 +23,12 @@ export const weighCommand = () =>
       "\nExamples:\n  tossbake weigh props/spanner.glb --density 7850\n  tossbake weigh quay.throws.yaml",
     )
     .action(async (path: string, options: { density?: number; json?: boolean }) => {
+      if (options.density !== undefined && !isModel(path))
+        throw new RequestError(
+          ["--density"],
+          `${path} is a throw file`,
+          "densities stand there, under props.NAME.density",
+        );
       const props = isModel(path) ? await weighModel(path, options.density) : await weighAll(path);
       process.stdout.write(
         options.json
