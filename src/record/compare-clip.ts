@@ -2,7 +2,7 @@
 
 import { type Conversion, hostFrame } from "../bake/host.js";
 import { atan2, sin } from "../math/elementary.js";
-import { angleBetween } from "../math/quat.js";
+import { angleBetween, type Quat } from "../math/quat.js";
 import { cross, distance, dot, length, subtract, type Vec3 } from "../math/vec3.js";
 import type { Host } from "../throwfile/types.js";
 import type { ClipRecord } from "./clip-record.js";
@@ -22,6 +22,9 @@ import {
   moreTurns,
   spinsFaster,
 } from "./compare-words.js";
+
+/** Of the motion; what else there is follows from these, mostly, and is in `changes`. */
+const MOST_PHRASES = 4;
 
 export interface ClipDrift {
   /** "arrives 14 mm further, turns 0.2 more" */
@@ -65,22 +68,19 @@ export function compareClips(
   const { toWorld } = hostFrame(host);
   const old = side(before, toWorld);
   const fresh = side(now, toWorld);
+  const motion = [...arrives(old, fresh), ...turns(old, fresh), ...leaves(old, fresh), ...starts(old, fresh)];
   const otherHost = hostChange(before, now);
-  const words = [
-    ...(otherHost ? [otherHost] : [...arrives(old, fresh), ...turns(old, fresh), ...leaves(old, fresh)]),
-    ...isMade(before, now),
-  ];
+  const words = [...(otherHost ? [otherHost] : motion.slice(0, MOST_PHRASES)), ...isMade(before, now)];
+  const displacement = (moment: "release" | "arrival") =>
+    found.some(({ key }) => key.startsWith(moment))
+      ? distance(old[moment].centerOfMass, fresh[moment].centerOfMass) +
+        2 * reach * sin(angleBetween(before[moment].rotation, now[moment].rotation) / 2)
+      : 0;
   const draws = found.some(({ key }) => key === "candidate" || key.startsWith("draws."));
   return {
     text: `${words.length > 0 ? words.join(", ") : lastDigits(found.map(({ key }) => key))}${draws ? "; drawn anew" : ""}`,
     changes: found,
-    displacement: Math.max(
-      ...(["release", "arrival"] as const).map(
-        (moment) =>
-          distance(old[moment].centerOfMass, fresh[moment].centerOfMass) +
-          2 * reach * sin(angleBetween(before[moment].rotation, now[moment].rotation) / 2),
-      ),
-    ),
+    displacement: Math.max(displacement("release"), displacement("arrival")),
   };
 }
 
@@ -101,51 +101,42 @@ function side(clip: ClipRecord, host: Conversion): Side {
   };
 }
 
-function arrives(old: Side, now: Side): string[] {
-  const ahead = course(old);
-  const parts = [
-    ...displaced(subtract(now.arrival.centerOfMass, old.arrival.centerOfMass), ahead),
+const arrives = (old: Side, now: Side): string[] =>
+  said("arrives", [
+    ...displaced(subtract(now.arrival.centerOfMass, old.arrival.centerOfMass), course(old)),
     ...later(now.clip.flight.time - old.clip.flight.time),
     ...faster(length(now.arrival.velocity) - length(old.arrival.velocity)),
-    ...degrees(angleBetween(old.clip.arrival.rotation, now.clip.arrival.rotation), "turned differently"),
-  ];
-  return said("arrives", parts);
-}
+    ...turned(old.clip.arrival.rotation, now.clip.arrival.rotation),
+  ]);
 
-function turns(old: Side, now: Side): string[] {
-  return said("turns", moreTurns(now.clip.turns - old.clip.turns));
-}
+const turns = (old: Side, now: Side): string[] => said("turns", moreTurns(now.clip.turns - old.clip.turns));
 
-function leaves(old: Side, now: Side): string[] {
-  const ahead = course(old);
-  const place = displaced(subtract(now.release.centerOfMass, old.release.centerOfMass), ahead);
-  const pose = degrees(
-    angleBetween(old.clip.release.rotation, now.clip.release.rotation),
-    "turned differently",
-  );
-  const spin = spinsFaster(length(now.release.angularVelocity) - length(old.release.angularVelocity));
+function leaves({ release: old }: Side, { release: now }: Side): string[] {
+  const rate = spinsFaster(length(now.angularVelocity) - length(old.angularVelocity));
+  const axis = degrees(angle(old.angularVelocity, now.angularVelocity), "off");
   return [
     ...said("leaves", [
-      ...faster(length(now.release.velocity) - length(old.release.velocity)),
-      ...degrees(elevation(now.release.velocity) - elevation(old.release.velocity), "steeper", "flatter"),
-      ...degrees(toTheLeft(old.release.velocity, now.release.velocity), "to the left", "to the right"),
+      ...faster(length(now.velocity) - length(old.velocity)),
+      ...degrees(elevation(now.velocity) - elevation(old.velocity), "steeper", "flatter"),
+      ...degrees(toTheLeft(old.velocity, now.velocity), "to the left", "to the right"),
     ]),
-    ...said(
-      "spins",
-      spin.length > 0
-        ? spin
-        : degrees(
-            angle(old.release.angularVelocity, now.release.angularVelocity),
-            "differently about its axes at release",
-          ),
-    ),
-    ...said("starts", [...place, ...pose]),
-    ...said("rises", longer(now.rise - old.rise, "higher", "less high")),
-    ...(Math.abs(now.gravity - old.gravity) < 1e-3
-      ? []
-      : [`falls at ${amount(now.gravity)} m/s² instead of ${amount(old.gravity)}`]),
+    ...said("spins", rate.length > 0 ? rate : axis.map((text) => `about an axis ${text}`)),
   ];
 }
+
+const starts = (old: Side, now: Side): string[] => [
+  ...said("starts", [
+    ...displaced(subtract(now.release.centerOfMass, old.release.centerOfMass), course(old)),
+    ...turned(old.clip.release.rotation, now.clip.release.rotation),
+  ]),
+  ...(Math.abs(now.gravity - old.gravity) < 1e-3
+    ? []
+    : [`falls at ${amount(now.gravity)} m/s² instead of ${amount(old.gravity)}`]),
+  ...said("rises", longer(now.rise - old.rise, "higher", "less high")),
+];
+
+const turned = (from: Quat, to: Quat): string[] =>
+  degrees(angleBetween(from, to), "differently").map((text) => `turned ${text}`);
 
 /** How it is cut and written, and what is amiss with it. */
 function isMade(before: ClipRecord, now: ClipRecord): string[] {

@@ -36,7 +36,7 @@ function mass(before: PropRecord, now: PropRecord): string[] {
   const moments = (["long", "middle", "short"] as const).flatMap((axis, i) => {
     const share = now.principal.moments[i] / before.principal.moments[i];
     // where all is heavier alike, the mass says it
-    if (Math.abs(share / heavier - 1) < WORTH) return [];
+    if (Math.abs(share / heavier - 1) < WORTH || Math.abs(share - 1) < WORTH) return [];
     return [`${percent(share)} ${share > 1 ? "harder" : "easier"} to turn about its ${axis} axis`];
   });
   return [
@@ -54,7 +54,10 @@ function balance(before: PropRecord, now: PropRecord): string[] {
   const fresh = now.warnings.filter((text) => !before.warnings.includes(text));
   const gone = before.warnings.filter((text) => !now.warnings.includes(text));
   return [
-    ...moved.map((text) => `balances ${text} (by [${shift.map((d) => amount(d * 1000)).join(", ")}] mm)`),
+    ...moved.map(
+      (text) =>
+        `balances ${text} (by [${shift.map((d) => (Math.abs(d) < 1e-5 ? 0 : amount(d * 1000))).join(", ")}] mm)`,
+    ),
     ...axes.map((text) => `has its axes ${text}`),
     ...longer(now.reach - before.reach, "further", "less far").map((text) => `reaches ${text}`),
     ...fresh.map((text) => `warns: ${text}`),
