@@ -1,7 +1,5 @@
 /** Which values of two records differ. */
 
-import { rounded } from "../math/rounded.js";
-
 export interface Change {
   /** Keys joined by dots, e.g. "arrival.velocity". */
   key: string;
@@ -10,21 +8,19 @@ export interface Change {
   now?: unknown;
 }
 
-/** The leaves that differ in the digits a record keeps; lists are leaves. Keys in `now`'s order, then those that are gone. */
+/** The leaves that differ; lists are leaves. Keys in `now`'s order, then those that are gone. */
 export function changes(before: unknown, now: unknown, passedOver: readonly string[] = []): Change[] {
   const old = leaves(before);
   const fresh = leaves(now);
   return [...new Set([...fresh.keys(), ...old.keys()])]
     .filter((key) => !passedOver.some((name) => key === name || key.startsWith(`${name}.`)))
-    .filter((key) => written(old.get(key)) !== written(fresh.get(key)))
+    .filter((key) => JSON.stringify(old.get(key)) !== JSON.stringify(fresh.get(key)))
     .map((key) => ({
       key,
       ...(old.has(key) && { before: old.get(key) }),
       ...(fresh.has(key) && { now: fresh.get(key) }),
     }));
 }
-
-const written = (value: unknown) => JSON.stringify(rounded(value));
 
 function leaves(value: unknown, key = "", found = new Map<string, unknown>()): Map<string, unknown> {
   if (value === null || typeof value !== "object" || Array.isArray(value)) found.set(key, value);

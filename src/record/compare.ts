@@ -1,5 +1,6 @@
 /** What drifted between two bakes: their records, and the files that lie in a folder. */
 
+import { rounded } from "../math/rounded.js";
 import type { Host } from "../throwfile/types.js";
 import type { ClipRecord, TakesRecord } from "./clip-record.js";
 import { compareClips } from "./compare-clip.js";
@@ -49,15 +50,17 @@ export function compareBakes(
   host?: Host,
 ): Drift[] {
   const states = new Map(files.map(({ name, state }) => [name, state]));
-  const props = propDrifts(before.record, now.record);
-  const throws = throwDrifts(before.record, now.record, states, host);
+  // what is not rounded yet is about to be compared with what was rounded to be written
+  const [old, fresh] = [rounded(before.record), rounded(now.record)];
+  const props = propDrifts(old, fresh);
+  const throws = throwDrifts(old, fresh, states, host);
   const drifts = [
     ...props,
     ...throws,
-    ...files.flatMap((file) => fileDrift(file, before.record, now.record, [...props, ...throws])),
+    ...files.flatMap((file) => fileDrift(file, old, fresh, [...props, ...throws])),
   ];
   const recordDrifts = props.length + throws.length > 0 ? [] : textDrift(before, now);
-  return [...throwFileDrift(before.record, now.record, drifts.length > 0), ...drifts, ...recordDrifts];
+  return [...throwFileDrift(old, fresh, drifts.length > 0), ...drifts, ...recordDrifts];
 }
 
 function throwFileDrift(before: TakesRecord, now: TakesRecord, isMore: boolean): Drift[] {

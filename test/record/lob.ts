@@ -21,7 +21,7 @@ throws:
     spin: { axis: short, turns: 1.5 }
 `;
 
-export interface BakedLob extends BakedFolder {
+export interface BakedLob extends Required<BakedFolder> {
   file: ThrowFile;
   contents: Map<string, Uint8Array>;
 }
@@ -32,7 +32,7 @@ export async function bakeText(text: string): Promise<BakedLob> {
   const record = await recordOf(file, text, baked);
   return {
     file,
-    record: JSON.parse(formatRecord(record)) as TakesRecord,
+    record,
     text: formatRecord(record),
     contents: new Map(baked.throws.map((baked) => [baked.file.name, baked.file.content])),
   };
@@ -41,9 +41,10 @@ export async function bakeText(text: string): Promise<BakedLob> {
 /** What a folder baked with one text is told when the throw file holds another. */
 export async function drift(before: string, now: string): Promise<Drift[]> {
   const [old, fresh] = [await bakeText(before), await bakeText(now)];
+  const written = { ...old, record: JSON.parse(old.text) as TakesRecord };
   const files = [...old.contents].flatMap(([name, bytes]): FolderFile[] => {
     const other = fresh.contents.get(name);
     return other ? [{ name, state: Buffer.compare(bytes, other) === 0 ? "same" : "different" }] : [];
   });
-  return compareBakes(old, fresh, files, fresh.file.host);
+  return compareBakes(written, { record: fresh.record }, files, fresh.file.host);
 }
