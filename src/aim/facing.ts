@@ -35,6 +35,7 @@ export function facingRotation(first: DirectionPair, second?: DirectionPair): Qu
 
 /** Rows: the unit vector, the one square to it and to the normal, the unit normal. */
 function frame(along: Vec3, normal: Vec3): Mat3 {
-  const n = normalize(normal);
+  // the product of two almost parallel vectors is short, and as much of it as is rounding leans along them
+  const n = normalize(addScaled(normal, along, -dot(normal, along)));
   return [along, cross(n, along), n];
 }
