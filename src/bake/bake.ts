@@ -11,6 +11,7 @@ import { oneNodeGraft } from "./graft.js";
 import { hostFrame } from "./host.js";
 import { type MotionState, motionState, turnTimes } from "./motion.js";
 import { type Nearest, nearestFinder } from "./nearest.js";
+import { nodeGraft } from "./node-graft.js";
 import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
 import { cutTake, solveTake, type Take } from "./take.js";
 
@@ -116,7 +117,8 @@ function bakeThrow(
       track: baked.track,
       extras: rounded(clipExtras(entry, baked)),
     }));
-    const content = spliceGlb(model, oneNodeGraft(prop, clips));
+    const graft = prop.node ? nodeGraft(prop.node, prop.scale, clips) : oneNodeGraft(prop, clips);
+    const content = spliceGlb(model, graft);
     return { entry, takes, file: { name: `${entry.name}.glb`, content } };
   } catch (error) {
     if (!(error instanceof RequestError)) throw error;

@@ -23,8 +23,8 @@ export function oneNodeGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
       {
         name: prop.name,
         ...(only && {
-          translation: firstKey(only.translation, 3) as unknown as Vec3,
-          rotation: firstKey(only.rotation, 4) as unknown as Quat,
+          translation: firstKey<Vec3>(only.translation),
+          rotation: firstKey<Quat>(only.rotation),
         }),
         ...(prop.scale !== 1 && { scale: [prop.scale, prop.scale, prop.scale] as const }),
         holdsScene: true,
@@ -45,4 +45,6 @@ const channel = (path: "translation" | "rotation", track: Track): ClipChannel =>
   ...track[path],
 });
 
-const firstKey = (channel: Channel, size: number): number[] => Array.from(channel.values.subarray(0, size));
+/** The value of a channel's first key. */
+export const firstKey = <T extends Vec3 | Quat>({ times, values }: Channel): T =>
+  Array.from(values.subarray(0, values.length / times.length)) as unknown as T;

@@ -12,6 +12,7 @@ import { RequestError } from "../math/request-error.js";
 import type { Prop } from "../prop/prop.js";
 import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
 import { hostFrame } from "./host.js";
+import { cutInParentFrame } from "./parent-frame.js";
 import { launchWish, mayWobble } from "./wish.js";
 
 export interface Take {
@@ -57,13 +58,16 @@ export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number
 }
 
 /**
- * The take's keys within the throw file's tolerance.
+ * The take's keys within the throw file's tolerance, in the frame of the parents of the node they move.
  *
  * @throws RequestError where the tolerance cannot be held; its path starts at the top of the file
  */
 export function cutTake(file: ThrowFile, prop: Prop, take: Take): Track {
   const body = { centerOfMass: prop.centerOfMass, axes: prop.principal.axes, reach: prop.reach };
-  return linearTrack(take.flight, body, toleranceOf(file, prop));
+  const tolerance = toleranceOf(file, prop);
+  return prop.node
+    ? cutInParentFrame(take.flight, body, tolerance, prop.node, prop.scale, linearTrack)
+    : linearTrack(take.flight, body, tolerance);
 }
 
 export const toleranceOf = (file: ThrowFile, prop: Prop): number =>

@@ -36,10 +36,19 @@ export interface NewClip {
   channels: ClipChannel[];
 }
 
+/** How one of the model's own nodes rests from now on; what is missing stays as it is. */
+export interface Rest {
+  node: number;
+  translation?: Vec3;
+  rotation?: Quat;
+  scale?: Vec3;
+}
+
 export interface Graft {
   /** The first becomes the only root of the default scene; without any, the scene stays as it is. */
   nodes: NewNode[];
   clips: NewClip[];
+  rests?: Rest[];
 }
 
 export type SamplerType = "SCALAR" | "VEC3" | "VEC4";

@@ -1,7 +1,7 @@
 import type { GLTF } from "@gltf-transform/core";
 import { decompose } from "./decompose.js";
 import { joinGlb } from "./glb.js";
-import { type ClipChannel, checkClipNames, GENERATOR, type Graft } from "./graft.js";
+import { type ClipChannel, checkClipNames, GENERATOR, type Graft, type Rest } from "./graft.js";
 import { imageType } from "./image-type.js";
 import { JsonEdit } from "./json-edit.js";
 import { type Model, ModelError } from "./model.js";
@@ -9,13 +9,13 @@ import { SamplerPack } from "./sampler-pack.js";
 import { matrixFrame, sceneRoots } from "./scene.js";
 import { bytesDataUri, isDataUri } from "./uri.js";
 
-export type { ClipChannel, Graft, NewClip, NewNode } from "./graft.js";
+export type { ClipChannel, Graft, NewClip, NewNode, Rest } from "./graft.js";
 
 /**
  * The model with new nodes and clips, as a GLB that needs no other file. They are added at the ends of the model's lists,
  * their keys in one buffer view behind its bytes; of what was there, only this changes: the default scene's roots, the
- * generator, the size of buffer 0, where buffers and images outside the GLB are to be found, and the `matrix` of a node that
- * is animated (which may have none). All else stays to the letter and to the byte.
+ * generator, the size of buffer 0, where buffers and images outside the GLB are to be found, the rest pose of nodes that the
+ * graft states, and the `matrix` of a node that is animated (which may have none). All else stays to the letter and to the byte.
  * Throws ModelError where a clip's name is taken, or an animated node cannot be told apart into translation, rotation
  * and scale, or an external image is of an unknown kind.
  */
@@ -29,7 +29,7 @@ export function spliceGlb(model: Model, graft: Graft): Uint8Array {
   const edit = new JsonEdit(model.text);
   edit.set(["asset"], "generator", GENERATOR);
   addNodes(model, graft, edit);
-  splitMatrices(model, graft, edit);
+  setRests(model, graft, edit);
 
   const firstNode = json.nodes?.length ?? 0;
   const firstView = json.bufferViews?.length ?? 0;
@@ -101,22 +101,30 @@ function addNodes({ json }: Model, { nodes }: Graft, edit: JsonEdit): void {
   });
 }
 
-/** An animated node must not have a matrix (glTF 2.0, 3.5.2). */
-function splitMatrices({ json, name }: Model, { clips }: Graft, edit: JsonEdit): void {
-  const targets = clips.flatMap(({ channels }) =>
-    channels.flatMap(({ target }) => ("node" in target ? [target.node] : [])),
+/** Gives nodes the rest pose that the graft states; an animated node must not have a matrix (glTF 2.0, 3.5.2). */
+function setRests({ json, name }: Model, { clips, rests = [] }: Graft, edit: JsonEdit): void {
+  const changes = new Map(
+    clips.flatMap(({ channels }) =>
+      channels.flatMap(({ target }): [number, Omit<Rest, "node">][] =>
+        "node" in target ? [[target.node, {}]] : [],
+      ),
+    ),
   );
-  for (const target of new Set(targets)) {
-    const { matrix } = json.nodes![target];
-    if (!matrix) continue;
-    const parts = decompose(matrixFrame(matrix));
-    if (!parts)
+  for (const { node, ...parts } of rests) changes.set(node, parts);
+  for (const [node, parts] of changes) {
+    const { matrix } = json.nodes![node];
+    if (!matrix) {
+      for (const [key, value] of Object.entries(parts)) edit.set(["nodes", node], key, value);
+      continue;
+    }
+    const former = decompose(matrixFrame(matrix));
+    if (!former)
       throw new ModelError(
         name,
-        `the matrix of node ${target} is sheared or flat`,
+        `the matrix of node ${node} is sheared or flat`,
         "a node that is animated cannot be",
       );
-    edit.replace(["nodes", target], "matrix", parts);
+    edit.replace(["nodes", node], "matrix", { ...former, ...parts });
   }
 }
 

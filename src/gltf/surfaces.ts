@@ -8,6 +8,7 @@ import { applyFrame, compose, type Frame } from "./scene.js";
 import { shownNodes } from "./shown-nodes.js";
 import { skinFrames } from "./skin.js";
 
+export { type MovedNode, movedNode } from "./moved-node.js";
 export { nodeFrame } from "./scene.js";
 
 /** One primitive of a mesh where one node shows it, or one of a node's instances. */

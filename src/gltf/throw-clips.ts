@@ -25,6 +25,11 @@ export function throwClips(graft: Graft): (document: Document) => void {
     root.getAsset().generator = GENERATOR;
     const own = root.listNodes();
     const added = addNodes(document, graft.nodes);
+    for (const { node, translation, rotation, scale } of graft.rests ?? []) {
+      if (translation) own[node].setTranslation([...translation]);
+      if (rotation) own[node].setRotation([...rotation]);
+      if (scale) own[node].setScale([...scale]);
+    }
     const buffer = root.listBuffers()[0] ?? document.createBuffer();
     const accessors = new Map<string, Accessor>();
     const accessor = (array: Float32Array | Int16Array, type: SamplerType): Accessor => {

@@ -28,7 +28,7 @@ export interface Measured {
 }
 
 /**
- * The default scene, closed parts as solids.
+ * The default scene, or its node of the index `top` with all below it, closed parts as solids.
  *
  * @param mayBeOpen do without a body where the mesh is none
  * @throws RequestError at ["model"] where there is nothing to weigh, or it is not closed; at ["density", …]
@@ -37,11 +37,14 @@ export async function measureModel(
   model: Model,
   density: Density | undefined,
   mayBeOpen: boolean,
+  top?: number,
 ): Promise<Measured> {
-  const { surfaces, warnings } = await readSurfaces(model);
+  const { surfaces, warnings } = await readSurfaces(model, top);
   const extremes = extremePoints(surfaces);
   if (extremes.length === 0)
-    throw new RequestError(["model"], "has no triangles to weigh", "needs a mesh in its default scene");
+    throw top === undefined
+      ? new RequestError(["model"], "has no triangles to weigh", "needs a mesh in its default scene")
+      : new RequestError(["node"], "has no triangles to weigh", "needs a mesh in the node or below");
   const weighed = attempt(() => weighSurfaces(surfaces, density), mayBeOpen);
   return {
     body: weighed?.body,

@@ -1,5 +1,5 @@
 import type { Model } from "../gltf/model.js";
-import { nodeFrame } from "../gltf/surfaces.js";
+import { type MovedNode, movedNode, nodeFrame } from "../gltf/surfaces.js";
 import { nearestName } from "../math/nearest-name.js";
 import { IDENTITY, type Quat } from "../math/quat.js";
 import { RequestError } from "../math/request-error.js";
@@ -35,11 +35,15 @@ export interface Prop extends MassProperties {
   /** Own properties only. */
   readonly points: Readonly<Record<string, NamedPoint>>;
   readonly scale: number;
+  /** The node of the model that is the prop, with all below it; none: the whole scene. */
+  readonly node?: MovedNode;
   readonly warnings: readonly string[];
 }
 
 /** How a prop is to be weighed. Places are metres in the model's scene frame, after `scale`. */
 export interface PropOptions {
+  /** Name of the node of the model that is weighed with all below it; default: the whole default scene. */
+  readonly node?: string;
   /** Factor on the model's lengths; default 1. */
   readonly scale?: number;
   /** kg/m³; default 1000. A map goes from material name, else node name; 0 leaves a node out of the weighing. */
@@ -59,7 +63,7 @@ export interface PropOptions {
 const USUAL_REACH = [0.005, 5] as const;
 
 /**
- * Weighs a model's default scene, or a shape, as a solid.
+ * Weighs a model's default scene, or one of its nodes, or a shape, as a solid.
  *
  * @throws RequestError, path relative to the prop's entry, for a mesh that cannot be weighed and options that no body meets
  */
@@ -67,8 +71,9 @@ export async function weigh(name: string, source: Model | Shape, options: PropOp
   const scale = positive(options.scale ?? 1, "scale", "a factor");
   const isStated =
     options.mass !== undefined && options.centerOfMass !== undefined && options.inertia !== undefined;
+  const node = options.node === undefined ? undefined : nodeOf(source, options.node);
   const measured = await ("json" in source
-    ? measureModel(source, options.density, isStated)
+    ? measureModel(source, options.density, isStated, node?.index)
     : measureShape(name, source, options.density));
   const body = settleMass(measured.body && scaleLengths(measured.body, scale), options);
   const reach = measured.reachFrom(scaleVector(body.centerOfMass, 1 / scale)) * scale;
@@ -82,8 +87,14 @@ export async function weigh(name: string, source: Model | Shape, options: PropOp
     extremes: measured.extremes.map((value) => value * scale),
     points: namedPoints(options.points ?? {}, source, scale),
     scale,
+    ...(node && { node }),
     warnings: [...measured.warnings, ...reachWarnings(reach)],
   };
+}
+
+function nodeOf(source: Model | Shape, name: string): MovedNode {
+  if ("json" in source) return movedNode(source, name);
+  throw new RequestError(["node"], `is "${name}"`, "a shape has no nodes: leave it out");
 }
 
 /** The worked-out body (none: an open mesh of which all is stated) with weights and stated values. */

@@ -29,9 +29,6 @@ export const NOT_YET: readonly NotYet[] = [
   { key: "bake.container", missing: "no .gltf is written", save: "glb" },
   { key: "bake.mesh", missing: "the mesh is always written", save: true },
   { key: "bake.pack", missing: "numbers are not packed", save: "float" },
-  { key: "props.*.node", missing: "a model is weighed and animated whole" },
-  { key: "props.*.solid", missing: "what is solid cannot be chosen", save: "auto" },
-  { key: "props.*.wall", missing: "the thickness of walls cannot be chosen" },
 ];
 
 export function checkNotYet(

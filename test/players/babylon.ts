@@ -20,10 +20,11 @@ export const babylon: Player = {
     for (const group of scene.animationGroups) group.stop();
     return {
       clips: scene.animationGroups.map(({ name }) => name),
-      play(clip) {
+      play(clip, name) {
         const group = scene.animationGroups.find(({ name }) => name === clip)!;
         const [root] = scene.rootNodes.filter(({ name }) => name === "__root__");
-        const [node] = (root as TransformNode).getChildTransformNodes(true);
+        const [only] = (root as TransformNode).getChildTransformNodes(true);
+        const node = name === undefined ? only : (scene.getNodeByName(name) as TransformNode);
         group.start(true);
         group.pause();
         // the loader turns seconds into frames of its own

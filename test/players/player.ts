@@ -8,6 +8,6 @@ export interface Player {
 
 export interface OpenedFile {
   clips: string[];
-  /** Starts a clip; `seek` answers where a point of the scene's only root node then stands, right-handed, +Y up. */
-  play(clip: string): { seek(time: number): (point: Vec3) => Vec3; end(): void };
+  /** Starts a clip; `seek` answers where a point of the named node (default: the scene's only root) then stands, right-handed, +Y up. */
+  play(clip: string, node?: string): { seek(time: number): (point: Vec3) => Vec3; end(): void };
 }

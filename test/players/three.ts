@@ -12,10 +12,10 @@ export const three: Player = {
     const { scene, animations } = await new GLTFLoader().parseAsync(glb.slice().buffer, "");
     return {
       clips: animations.map(({ name }) => name),
-      play(clip) {
+      play(clip, name) {
         const mixer = new AnimationMixer(scene);
         mixer.clipAction(animations.find(({ name }) => name === clip)!).play();
-        const [node] = scene.children;
+        const node = name === undefined ? scene.children[0] : scene.getObjectByName(name)!;
         const point = new Vector3();
         return {
           seek(time) {
