@@ -1,10 +1,10 @@
-import { RequestError } from "../math/request-error.js";
-import { cross, length, subtract } from "../math/vec3.js";
-import type { Part } from "./closed-parts.js";
 import { isInside } from "./inside.js";
-import { combine, type MassProperties, scaleDensity } from "./mass.js";
+import { type MassProperties, scaleDensity } from "./mass.js";
+import type { Notes } from "./notes.js";
+import { overlap } from "./overlap.js";
 import { solidIntegrals } from "./solid.js";
-import { vertex } from "./vertex.js";
+import type { Part } from "./split.js";
+import { type Box, boxOf, diagonal, triangleArea, vertex } from "./vertex.js";
 
 /** What the surface a part comes from is made of. */
 export interface Substance {
@@ -16,56 +16,39 @@ export interface Substance {
 
 /** Volume over (area × size) below which a closed part is flat. */
 const FLAT = 1e-12;
+/** Share of the mass that may be counted twice unsaid. */
+const OVERLAP = 1e-3;
 
 /**
- * Mass properties of closed parts. A part that faces inwards is a cavity where it lies in another part, and else is inside
- * out and turned round, with all within it that comes from the same surface. Masses of parts that overlap add.
+ * Bodies of closed parts. A part that faces inwards is a cavity where it lies in another part, and else is inside
+ * out and turned round, with all within it that comes from the same surface. Masses of parts that overlap add; that is noted.
  *
  * @param substances by surface, as `owners` of the parts count them
- * @throws RequestError at ["model"] where nothing has a volume
+ * @returns `flat`: the parts that have no volume, not weighed
  */
 export function massOfParts(
   parts: readonly Part[],
   substances: readonly Substance[],
-): { body: MassProperties; warnings: string[] } {
-  const warnings = new Set<string>();
+  notes: Notes,
+): { bodies: MassProperties[]; flat: Part[] } {
   const solids: Solid[] = [];
+  const flat: Part[] = [];
   for (const part of parts) {
     const integrals = solidIntegrals(part.positions, part.triangles);
-    const { surface, mixed } = mainSurface(part, substances);
+    const { surface, area, mixed } = mainSurface(part, substances);
     const { density, label } = substances[surface];
-    const box = boxOf(part);
-    if (!(Math.abs(integrals.volume) > FLAT * areaOf(part) * length(subtract(box.high, box.low)))) {
-      warnings.add(`${label}: a closed part is flat: it has no volume and weighs nothing`);
+    const box = boxOf(part.positions, part.triangles);
+    if (!(Math.abs(integrals.volume) > FLAT * area * diagonal(box))) {
+      flat.push(part);
       continue;
     }
-    if (mixed)
-      warnings.add(
-        `${label}: a solid with faces of other densities too: weighed as ${density} kg/m³ throughout`,
-      );
+    if (mixed) notes.add(`${label}, ${density} kg/m³`, MIXED);
     solids.push({ part, integrals, box, surface, density, sign: Math.sign(integrals.volume), within: [] });
   }
-  if (solids.length === 0)
-    throw new RequestError(
-      ["model"],
-      "is flat: its closed parts have no volume",
-      "give it a thickness, or state mass, centerOfMass and inertia",
-    );
-  if (solids.some((solid) => solid.sign < 0))
-    for (const message of settleSides(solids, substances)) warnings.add(message);
-  const body = combine(solids.map(bodyOf));
-  if (!(body.mass > 0))
-    throw new RequestError(
-      ["model"],
-      `weighs ${body.mass} kg: its cavities are larger than what they lie in`,
-      "make each cavity lie within the solid around it",
-    );
-  return { body, warnings: [...warnings] };
-}
-
-interface Box {
-  low: [number, number, number];
-  high: [number, number, number];
+  if (solids.some((solid) => solid.sign < 0)) settleSides(solids, substances, notes);
+  const bodies = solids.map(bodyOf);
+  noteOverlap(solids, bodies, substances, notes);
+  return { bodies, flat };
 }
 
 interface Solid {
@@ -81,9 +64,13 @@ interface Solid {
   within: Solid[];
 }
 
-/** Decides what is matter and what a cavity; returns warnings. */
-function settleSides(solids: readonly Solid[], substances: readonly Substance[]): string[] {
-  const warnings: string[] = [];
+const MIXED = (n: number) =>
+  `${n === 1 ? "a solid has" : `${n} solids have`} faces of other densities too: weighed as that of the greater area throughout; state one density, or mass`;
+const INSIDE_OUT = (n: number) =>
+  `${n === 1 ? "a part is" : `${n} parts are`} inside out: turned round (turn its faces in the model)`;
+
+/** Decides what is matter and what a cavity. */
+function settleSides(solids: readonly Solid[], substances: readonly Substance[], notes: Notes): void {
   const size = (solid: Solid) => Math.abs(solid.integrals.volume);
   for (const solid of solids)
     solid.within = solids
@@ -95,18 +82,18 @@ function settleSides(solids: readonly Solid[], substances: readonly Substance[])
     if (outermost !== solid && outermost.surface !== solid.surface) continue;
     if (faces.get(outermost) === 1) continue;
     solid.sign = -solid.sign;
-    if (outermost === solid)
-      warnings.push(`${substances[solid.surface].label}: a part is inside out: turned round`);
+    if (outermost === solid) notes.add(substances[solid.surface].label, INSIDE_OUT);
   }
-  return warnings;
 }
 
 /** A cavity takes away what the innermost solid around it is made of. */
 function bodyOf(solid: Solid): MassProperties {
   const density = solid.sign < 0 ? solid.within.find((around) => around.sign > 0)!.density : solid.density;
-  const turned = solid.sign * Math.sign(solid.integrals.volume);
+  const turned = turnedBy(solid);
   return { ...scaleDensity(solid.integrals, turned * density), volume: turned * solid.integrals.volume };
 }
+
+const turnedBy = (solid: Solid) => solid.sign * Math.sign(solid.integrals.volume);
 
 function contains(outer: Solid, inner: Solid): boolean {
   for (let i = 0; i < 3; i++)
@@ -115,36 +102,50 @@ function contains(outer: Solid, inner: Solid): boolean {
   return isInside(vertex(positions, triangles[0]), outer.part.positions, outer.part.triangles);
 }
 
+function noteOverlap(
+  solids: readonly Solid[],
+  bodies: readonly MassProperties[],
+  substances: readonly Substance[],
+  notes: Notes,
+): void {
+  const found = overlap(
+    solids.map((solid) => ({
+      positions: solid.part.positions,
+      triangles: solid.part.triangles,
+      sign: turnedBy(solid),
+      density: solid.density,
+    })),
+  );
+  const share = found ? found.mass / bodies.reduce((sum, { mass }) => sum + mass, 0) : 0;
+  if (!found || share < OVERLAP) return;
+  const [one, two] = found.pair.map((n) => substances[solids[n].surface].label);
+  const percent = Number((100 * share).toPrecision(share < 0.1 ? 1 : 2));
+  notes.add(
+    one === two ? one : `${one}; ${two}`,
+    () =>
+      `parts overlap, and each counts: about ${percent} % of the mass is counted twice; density 0 leaves a node or material out`,
+  );
+}
+
 /** The surface that makes up most of a part, and whether the others are of another density. */
-function mainSurface(part: Part, substances: readonly Substance[]): { surface: number; mixed: boolean } {
+function mainSurface(
+  { positions, triangles, owners }: Part,
+  substances: readonly Substance[],
+): { surface: number; area: number; mixed: boolean } {
   const areas = new Map<number, number>();
-  part.owners.forEach((owner, t) => {
-    areas.set(owner, (areas.get(owner) ?? 0) + triangleArea(part, t));
+  let area = 0;
+  let ofOwner = 0;
+  owners.forEach((owner, t) => {
+    const triangle = triangleArea(positions, triangles, t);
+    area += triangle;
+    // Triangles of one surface follow each other.
+    ofOwner += triangle;
+    if (owners[t + 1] === owner) return;
+    areas.set(owner, (areas.get(owner) ?? 0) + ofOwner);
+    ofOwner = 0;
   });
-  let surface = part.owners[0];
-  for (const [owner, area] of areas) if (area > areas.get(surface)!) surface = owner;
+  let surface = owners[0];
+  for (const [owner, part] of areas) if (part > areas.get(surface)!) surface = owner;
   const { density } = substances[surface];
-  return { surface, mixed: [...areas.keys()].some((owner) => substances[owner].density !== density) };
-}
-
-const areaOf = (part: Part) => part.owners.reduce((sum, _, t) => sum + triangleArea(part, t), 0);
-
-function triangleArea({ positions, triangles }: Part, t: number): number {
-  const a = vertex(positions, triangles[3 * t]);
-  const b = vertex(positions, triangles[3 * t + 1]);
-  const c = vertex(positions, triangles[3 * t + 2]);
-  return length(cross(subtract(b, a), subtract(c, a))) / 2;
-}
-
-function boxOf({ positions, triangles }: Part): Box {
-  const box: Box = {
-    low: [Infinity, Infinity, Infinity],
-    high: [-Infinity, -Infinity, -Infinity],
-  };
-  for (const index of triangles)
-    for (let i = 0; i < 3; i++) {
-      box.low[i] = Math.min(box.low[i], positions[3 * index + i]);
-      box.high[i] = Math.max(box.high[i], positions[3 * index + i]);
-    }
-  return box;
+  return { surface, area, mixed: [...areas.keys()].some((owner) => substances[owner].density !== density) };
 }

@@ -69,6 +69,26 @@ export const scaleLengths = (body: MassProperties, s: number): MassProperties =>
   inertia: map(body.inertia, (value) => value * s * s * s * s * s),
 });
 
+/** The products of coordinates that `momentTensor` takes the integrals of, in its order. */
+export const PAIRS = [
+  [0, 0],
+  [1, 1],
+  [2, 2],
+  [0, 1],
+  [0, 2],
+  [1, 2],
+] as const;
+
+/** Inertia from the second moments ∫ x_i x_j dm about the centre of mass. */
+export function momentTensor(moments: readonly number[]): Mat3 {
+  const [xx, yy, zz, xy, xz, yz] = moments;
+  return [
+    [yy + zz, -xy, -xz],
+    [-xy, xx + zz, -yz],
+    [-xz, -yz, xx + yy],
+  ];
+}
+
 function total(values: readonly number[]): number {
   const sum = new CompensatedSum();
   for (const value of values) sum.add(value);

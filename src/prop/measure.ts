@@ -4,16 +4,17 @@ import type { Model } from "../gltf/model.js";
 import { readSurfaces, type Surface } from "../gltf/surfaces.js";
 import { RequestError } from "../math/request-error.js";
 import { distance, type Vec3 } from "../math/vec3.js";
-import { findParts, type Part } from "./closed-parts.js";
 import { type Density, densities } from "./density.js";
 import { extremePoints } from "./extremes.js";
 import type { MassProperties } from "./mass.js";
-import { massOfParts, type Substance } from "./mass-of-parts.js";
+import type { Substance } from "./mass-of-parts.js";
+import { massOfSurfaces, type Solidity } from "./mass-of-surfaces.js";
 import { shapeModel } from "./shape.js";
 import { shapeReach, shapeSize } from "./shape-extent.js";
 import { checkShape, type Shape } from "./shape-kind.js";
 import { shapeMass } from "./shape-mass.js";
-import { vertex } from "./vertex.js";
+import { shapeMesh } from "./shape-mesh.js";
+import { boxOf, vertex } from "./vertex.js";
 
 export interface Measured {
   /** None for a mesh that is not a solid. */
@@ -27,16 +28,21 @@ export interface Measured {
   reachFrom(place: Vec3): number;
 }
 
+/** How matter fills what is weighed; lengths are the source's own. */
+export interface Matter extends Solidity {
+  readonly density?: Density;
+}
+
 /**
- * The default scene, or its node of the index `top` with all below it, closed parts as solids.
+ * The default scene, or its node of the index `top` with all below it.
  *
- * @param mayBeOpen do without a body where the mesh is none
- * @throws RequestError at ["model"] where there is nothing to weigh, or it is not closed; at ["density", …]
+ * @param isStated all that weighing works out is stated: do without a body where there is none, and without warnings
+ * @throws RequestError at ["model"] where there is nothing to weigh; at ["density", …]
  */
 export async function measureModel(
   model: Model,
-  density: Density | undefined,
-  mayBeOpen: boolean,
+  matter: Matter,
+  isStated: boolean,
   top?: number,
 ): Promise<Measured> {
   const { surfaces, warnings } = await readSurfaces(model, top);
@@ -45,12 +51,12 @@ export async function measureModel(
     throw top === undefined
       ? new RequestError(["model"], "has no triangles to weigh", "needs a mesh in its default scene")
       : new RequestError(["node"], "has no triangles to weigh", "needs a mesh in the node or below");
-  const weighed = attempt(() => weighSurfaces(surfaces, density), mayBeOpen);
+  const weighed = attempt(() => weighSurfaces(surfaces, matter), isStated);
   return {
     body: weighed?.body,
     size: sizeOf(extremes),
     extremes,
-    warnings: [...warnings, ...(weighed?.warnings ?? [])],
+    warnings: [...warnings, ...(isStated ? [] : weighed!.warnings)],
     reachFrom(place) {
       let reach = 0;
       for (let i = 0; i < extremes.length / 3; i++)
@@ -60,26 +66,36 @@ export async function measureModel(
   };
 }
 
-export async function measureShape(
-  name: string,
-  shape: Shape,
-  density: Density | undefined,
-): Promise<Measured> {
+export async function measureShape(name: string, shape: Shape, matter: Matter): Promise<Measured> {
   checkShape(shape);
-  const [kilograms] = densities([{ nodeName: name, materialName: name }], density);
+  const [kilograms] = densities([{ nodeName: name, materialName: name }], matter.density);
   if (!(kilograms > 0)) throw new RequestError(["density"], `is ${kilograms}`, "needs kg/m³ above 0");
-  const { surfaces, warnings } = await readSurfaces(shapeModel(name, shape));
+  const { surfaces } = await readSurfaces(shapeModel(name, shape));
+  const isHullOther = matter.solid === "hull" && ("ring" in shape || "tube" in shape);
+  // In closed form where it is solid as it is, else as a fine mesh.
+  const weighed =
+    matter.solid === "surface" || isHullOther
+      ? massOfSurfaces([fineMesh(shape)], [{ density: kilograms, label: name }], matter)
+      : { body: shapeMass(shape, kilograms), warnings: [] };
   return {
-    body: shapeMass(shape, kilograms),
+    body: weighed.body,
     size: shapeSize(shape),
     extremes: extremePoints(surfaces),
-    warnings,
+    warnings: weighed.warnings,
     reachFrom: (place) => shapeReach(shape, place),
   };
 }
 
-function weighSurfaces(all: readonly Surface[], density: Density | undefined) {
-  const perSurface = densities(all, density);
+/** So many corners round a circle that lengths, areas and volumes are right to about 1e-4. */
+const FINE = 256;
+
+function fineMesh(shape: Shape) {
+  const { positions, indices } = shapeMesh(shape, FINE);
+  return { positions: Float64Array.from(positions), triangles: Uint32Array.from(indices) };
+}
+
+function weighSurfaces(all: readonly Surface[], matter: Matter) {
+  const perSurface = densities(all, matter.density);
   const heavy = (_: unknown, i: number) => perSurface[i] !== 0;
   const surfaces = all.filter(heavy);
   const substances: Substance[] = all
@@ -87,46 +103,14 @@ function weighSurfaces(all: readonly Surface[], density: Density | undefined) {
     .filter(heavy);
   if (surfaces.length === 0)
     throw new RequestError(["density"], "is 0 throughout", "needs something that weighs: kg/m³ above 0");
-  const { closed, open } = findParts(surfaces);
-  if (open.length > 0) throw notClosed(open, substances);
-  return massOfParts(closed, substances);
+  return massOfSurfaces(surfaces, substances, matter);
 }
 
 const labelOf = ({ nodeName, materialName }: Surface) =>
   `${nodeName ? `node "${nodeName}"` : "a node without a name"}${materialName ? `, material "${materialName}"` : ""}`;
 
-function notClosed(open: readonly Part[], substances: readonly Substance[]): RequestError {
-  const counts = new Map<string, { open: number; contrary: number }>();
-  for (const part of open) {
-    const { label } = substances[part.owners[0]];
-    const count = counts.get(label) ?? { open: 0, contrary: 0 };
-    counts.set(label, {
-      open: count.open + part.openEdges,
-      contrary: count.contrary + part.contraryEdges,
-    });
-  }
-  const listed = [...counts].slice(0, 5).map(([label, count]) => {
-    const faults = [
-      ...(count.open ? [`${count.open} open edges`] : []),
-      ...(count.contrary ? [`${count.contrary} edges between faces that face opposite ways`] : []),
-    ];
-    return `${faults.join(" and ")} in ${label}`;
-  });
-  const more = counts.size > 5 ? `; and ${counts.size - 5} more` : "";
-  return new RequestError(
-    ["model"],
-    `is not closed: ${listed.join("; ")}${more}`,
-    "close it (merge vertices, fill holes, make all faces point outwards), or use a shape, or state mass, centerOfMass and inertia; density 0 leaves a node or material out",
-  );
-}
-
 function sizeOf(points: Float64Array): Vec3 {
-  const low = [Infinity, Infinity, Infinity];
-  const high = [-Infinity, -Infinity, -Infinity];
-  points.forEach((value, i) => {
-    low[i % 3] = Math.min(low[i % 3], value);
-    high[i % 3] = Math.max(high[i % 3], value);
-  });
+  const { low, high } = boxOf(points);
   return [high[0] - low[0], high[1] - low[1], high[2] - low[2]];
 }
 

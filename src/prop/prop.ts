@@ -6,7 +6,8 @@ import { RequestError } from "../math/request-error.js";
 import { scale as scaleVector, type Vec3 } from "../math/vec3.js";
 import type { Density } from "./density.js";
 import { combine, type MassProperties, pointMass, scaleDensity, scaleLengths } from "./mass.js";
-import { measureModel, measureShape } from "./measure.js";
+import { USUAL_WALL } from "./mass-of-surfaces.js";
+import { type Matter, measureModel, measureShape } from "./measure.js";
 import { type AxisNames, axisNames, type Principal, principalAxes } from "./principal.js";
 import type { Shape } from "./shape-kind.js";
 import { statedInertia } from "./stated-inertia.js";
@@ -48,6 +49,13 @@ export interface PropOptions {
   readonly scale?: number;
   /** kg/m³; default 1000. A map goes from material name, else node name; 0 leaves a node out of the weighing. */
   readonly density?: Density;
+  /**
+   * `auto` (default): closed parts are solid, flat openings are capped, what stays open is a thin surface; `hull`: the convex
+   * hull is solid; `surface`: all is a thin surface.
+   */
+  readonly solid?: "auto" | "hull" | "surface";
+  /** Thickness of thin surfaces, m; default 0.002. Stated, what is open is a thin surface, and no opening is capped. */
+  readonly wall?: number;
   /** kg, with the weights: scales the density. */
   readonly mass?: number;
   /** Point masses added, kg. */
@@ -72,9 +80,15 @@ export async function weigh(name: string, source: Model | Shape, options: PropOp
   const isStated =
     options.mass !== undefined && options.centerOfMass !== undefined && options.inertia !== undefined;
   const node = options.node === undefined ? undefined : nodeOf(source, options.node);
+  const matter: Matter = {
+    density: options.density,
+    solid: options.solid ?? "auto",
+    wall: positive(options.wall ?? USUAL_WALL, "wall", "metres") / scale,
+    isWallStated: options.wall !== undefined,
+  };
   const measured = await ("json" in source
-    ? measureModel(source, options.density, isStated, node?.index)
-    : measureShape(name, source, options.density));
+    ? measureModel(source, matter, isStated, node?.index)
+    : measureShape(name, source, matter));
   const body = settleMass(measured.body && scaleLengths(measured.body, scale), options);
   const reach = measured.reachFrom(scaleVector(body.centerOfMass, 1 / scale)) * scale;
   return {

@@ -1,7 +1,7 @@
-import type { Mat3 } from "../math/mat3.js";
 import { CompensatedSum } from "../math/sum.js";
 import type { Vec3 } from "../math/vec3.js";
-import type { MassProperties } from "./mass.js";
+import { type MassProperties, momentTensor, PAIRS } from "./mass.js";
+import { boxOf } from "./vertex.js";
 
 /**
  * A homogeneous solid bounded by triangles, of density 1, exactly: the sum over the triangles of the integrals over the
@@ -39,25 +39,9 @@ export function solidIntegrals(positions: Float64Array, triangles: Uint32Array):
     mass: v,
     volume: v,
     centerOfMass: [origin[0] + c[0], origin[1] + c[1], origin[2] + c[2]],
-    inertia: tensor(s[0], s[1], s[2], -s[3], -s[4], -s[5]),
+    inertia: momentTensor(s),
   };
 }
-
-const PAIRS = [
-  [0, 0],
-  [1, 1],
-  [2, 2],
-  [0, 1],
-  [0, 2],
-  [1, 2],
-] as const;
-
-/** Inertia from the second moments ∫x², ∫y², ∫z² and the products of inertia. */
-const tensor = (xx: number, yy: number, zz: number, xy: number, xz: number, yz: number): Mat3 => [
-  [yy + zz, xy, xz],
-  [xy, xx + zz, yz],
-  [xz, yz, xx + yy],
-];
 
 const sums = (count: number) => Array.from({ length: count }, () => new CompensatedSum());
 
@@ -69,16 +53,7 @@ const sixVolumes = (p: Float64Array): number =>
 
 /** Middle of the bounding box of the corners used. */
 function middleOf(positions: Float64Array, triangles: Uint32Array): Vec3 {
-  const middle = [0, 0, 0];
-  for (let i = 0; i < 3; i++) {
-    let least = Number.POSITIVE_INFINITY;
-    let most = Number.NEGATIVE_INFINITY;
-    for (const vertex of triangles) {
-      const value = positions[3 * vertex + i];
-      least = Math.min(least, value);
-      most = Math.max(most, value);
-    }
-    middle[i] = least + (most - least) / 2;
-  }
-  return [middle[0], middle[1], middle[2]];
+  const { low, high } = boxOf(positions, triangles);
+  const middle = (i: number) => low[i] + (high[i] - low[i]) / 2;
+  return [middle(0), middle(1), middle(2)];
 }

@@ -3,9 +3,8 @@
 import type { Surface } from "../../src/gltf/surfaces.js";
 import { eigenSymmetric } from "../../src/math/eigen.js";
 import type { Vec3 } from "../../src/math/vec3.js";
-import { findParts } from "../../src/prop/closed-parts.js";
 import type { MassProperties } from "../../src/prop/mass.js";
-import { massOfParts } from "../../src/prop/mass-of-parts.js";
+import { massOfSurfaces, type Solidity } from "../../src/prop/mass-of-surfaces.js";
 
 export interface Mesh {
   vertices: Vec3[];
@@ -95,14 +94,21 @@ export const surface = (mesh: Mesh, nodeName = "prop", materialName = "stuff"): 
   triangles: Uint32Array.from(mesh.triangles.flat()),
 });
 
-/** Weighs meshes, each a surface of its own of the density beside it; none of them may be open. */
+/** Weighs meshes, each a surface of its own of the density beside it (else 1000). */
 export function weighed(...meshes: (Mesh | [Mesh, number])[]): { body: MassProperties; warnings: string[] } {
+  return weighedAs({}, ...meshes);
+}
+
+/** The same, with what counts as matter stated. */
+export function weighedAs(
+  { solid = "auto", wall }: { solid?: Solidity["solid"]; wall?: number },
+  ...meshes: (Mesh | [Mesh, number])[]
+): { body: MassProperties; warnings: string[] } {
   const listed = meshes.map((entry): [Mesh, number] => (Array.isArray(entry) ? entry : [entry, 1000]));
-  const { closed, open } = findParts(listed.map(([mesh]) => surface(mesh)));
-  if (open.length > 0) throw new Error("open");
-  return massOfParts(
-    closed,
+  return massOfSurfaces(
+    listed.map(([mesh]) => surface(mesh)),
     listed.map(([, density], i) => ({ density, label: `surface ${i}` })),
+    { solid, wall: wall ?? 0.002, isWallStated: wall !== undefined },
   );
 }
 
@@ -111,7 +117,7 @@ export function difference(a: MassProperties, b: MassProperties, size = 0.5): nu
   const greatest = eigenSymmetric(b.inertia).values[2];
   return Math.max(
     Math.abs(a.mass - b.mass) / b.mass,
-    Math.abs(a.volume - b.volume) / b.volume,
+    a.volume === b.volume ? 0 : Math.abs(a.volume - b.volume) / b.volume,
     ...a.centerOfMass.map((value, i) => Math.abs(value - b.centerOfMass[i]) / size),
     ...a.inertia.flatMap((row, i) => row.map((value, j) => Math.abs(value - b.inertia[i][j]) / greatest)),
   );

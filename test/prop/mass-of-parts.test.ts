@@ -150,6 +150,8 @@ describe("an L-shaped solid", () => {
   });
 });
 
+const INSIDE_OUT = "surface 0: a part is inside out: turned round (turn its faces in the model)";
+
 describe("which side of a part is matter", () => {
   const outer = box([-1, -1, -1], [1, 1, 1]);
   const inner = box([-0.5, -0.25, -0.5], [0.25, 0.5, 0.75]);
@@ -175,7 +177,7 @@ describe("which side of a part is matter", () => {
   test("a mesh inside out as a whole is turned round, cavities too, with a warning", () => {
     const { body, warnings } = weighed(turnedRound(together(outer, turnedRound(inner), seedling)));
     expect(body.volume).toBe(hollow + kernel);
-    expect(warnings).toEqual(["surface 0: a part is inside out: turned round"]);
+    expect(warnings).toEqual([INSIDE_OUT]);
   });
 
   test("a solid of another surface within one that is inside out stays a solid", () => {
@@ -186,7 +188,7 @@ describe("which side of a part is matter", () => {
   test("a part inside out beside others is turned round", () => {
     const beside = moved(box([0, 0, 0], [0.5, 0.5, 0.5]), (v) => add(v, [3, 0, 0]));
     const { body, warnings } = weighed(together(outer, turnedRound(beside)));
-    expect([body.volume, warnings]).toEqual([8.125, ["surface 0: a part is inside out: turned round"]]);
+    expect([body.volume, warnings]).toEqual([8.125, [INSIDE_OUT]]);
   });
 
   test("a part within the box around another but outside it is no cavity", () => {
@@ -204,10 +206,13 @@ describe("what cannot be weighed", () => {
     expect(() => weighed(flat)).toThrow(/is flat.*give it a thickness/);
   });
 
-  test("a flat part beside a solid weighs nothing, with a warning", () => {
+  test("a flat part beside a solid is a thin surface, with a warning that names the key", () => {
     const { body, warnings } = weighed(ell(), flat);
-    expect(difference(body, L)).toBe(0);
-    expect(warnings).toEqual([expect.stringContaining("surface 1: a closed part is flat")]);
+    // 1 m² of 2 mm at 1000 kg/m³: the default wall.
+    expect(body.mass).toBeCloseTo(L.mass + 2, 12);
+    expect(warnings).toEqual([
+      "surface 1: a part has no thickness: taken as a thin surface of 0.002 m; state wall",
+    ]);
   });
 
   test("a solid whose faces are of two densities is weighed as the larger, with a warning", () => {
@@ -218,7 +223,11 @@ describe("what cannot be weighed", () => {
     );
     expect([body.mass, warnings]).toEqual([
       700,
-      [expect.stringContaining("weighed as 700 kg/m³ throughout")],
+      [
+        expect.stringMatching(
+          /^surface 1, 700 kg\/m³: a solid has faces of other densities too: weighed as that of the greater area/,
+        ),
+      ],
     ]);
   });
 });

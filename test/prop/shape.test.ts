@@ -6,7 +6,7 @@ import { readModel } from "../../src/gltf/read.js";
 import { readSurfaces } from "../../src/gltf/surfaces.js";
 import type { Vec3 } from "../../src/math/vec3.js";
 import { findParts } from "../../src/prop/closed-parts.js";
-import { massOfParts } from "../../src/prop/mass-of-parts.js";
+import { massOfSurfaces } from "../../src/prop/mass-of-surfaces.js";
 import { weigh } from "../../src/prop/prop.js";
 import { type Shape, shapeModel } from "../../src/prop/shape.js";
 import { shapeReach } from "../../src/prop/shape-extent.js";
@@ -99,13 +99,15 @@ describe("shapes in closed form", () => {
     });
 });
 
+const SOLID = { solid: "auto", wall: 0.002, isWallStated: false } as const;
+
 describe("the meshes of shapes", () => {
   for (const [name, shape] of all) {
     test(`a ${name}'s mesh is closed, faces outwards and weighs nearly as much`, async () => {
       const { surfaces } = await readSurfaces(shapeModel(name, shape));
       const { closed, open } = findParts(surfaces);
       expect([closed.length, open.length]).toEqual([1, 0]);
-      const { body, warnings } = massOfParts(closed, [{ density: 1000, label: name }]);
+      const { body, warnings } = massOfSurfaces(surfaces, [{ density: 1000, label: name }], SOLID);
       expect(warnings).toEqual([]);
       const ideal = shapeMass(shape, 1000);
       const isRound = !("box" in shape);
@@ -126,10 +128,8 @@ describe("the meshes of shapes", () => {
         const ideal = shapeMass(shape, 1000);
         const losses = [64, 128].map((around) => {
           const { positions, indices } = shapeMesh(shape, around);
-          const { closed } = findParts([
-            { positions: Float64Array.from(positions), triangles: Uint32Array.from(indices) },
-          ]);
-          const { body } = massOfParts(closed, [{ density: 1000, label: name }]);
+          const mesh = { positions: Float64Array.from(positions), triangles: Uint32Array.from(indices) };
+          const { body } = massOfSurfaces([mesh], [{ density: 1000, label: name }], SOLID);
           return [
             1 - body.volume / ideal.volume,
             1 - body.inertia[0][0] / ideal.inertia[0][0],

@@ -1,0 +1,110 @@
+import { after, eachEdge } from "./edges.js";
+import { pick, type Triangles } from "./weld.js";
+
+/** Triangles that hang together by edges, one vertex at each place. */
+export interface Part extends Triangles {
+  /** Edges with a triangle on one side only (or any odd number). */
+  readonly openEdges: number;
+  /** Edges whose triangles do not face the same side of the surface. */
+  readonly contraryEdges: number;
+  /** Edges at which more than two triangles meet. */
+  readonly crowdedEdges: number;
+  /** Two vertices an edge: the edges that are run through once more this way than the other. They make closed loops. */
+  readonly rim: readonly number[];
+}
+
+/** Whether every edge is run through as often one way as the other: the integrals over the inside are well defined. */
+export const isClosed = (part: Part): boolean => part.rim.length === 0;
+
+/** The parts of a welded mesh, in the order of their first triangles. */
+export function split(mesh: Triangles): Part[] {
+  const { triangles, owners } = mesh;
+  const group = new Int32Array(owners.length);
+  for (let t = 0; t < group.length; t++) group[t] = t;
+  const root = (t: number): number => {
+    while (group[t] !== t) {
+      group[t] = group[group[t]];
+      t = group[t];
+    }
+    return t;
+  };
+  // Edges that are not plain, as triples: a half edge, uses, balance.
+  const odd: number[] = [];
+  eachEdge(triangles, mesh.positions.length / 3, (first, link) => {
+    let uses = 0;
+    let balance = 0;
+    for (let h = first; h >= 0; h = link[h]) {
+      uses++;
+      balance += triangles[h] === triangles[first] ? 1 : -1;
+      if (h === first) continue;
+      // The lower number is the root, so that parts come in the order of their first triangles.
+      const a = root(Math.trunc(h / 3));
+      const b = root(Math.trunc(first / 3));
+      if (a < b) group[b] = a;
+      else group[a] = b;
+    }
+    if (uses !== 2 || balance !== 0) odd.push(first, uses, balance);
+  });
+  const parts = new Map<number, { which: number[]; odd: number[] }>();
+  for (let t = 0; t < owners.length; t++) {
+    const part = parts.get(root(t));
+    if (part) part.which.push(t);
+    else parts.set(t, { which: [t], odd: [] });
+  }
+  for (let n = 0; n < odd.length; n += 3)
+    parts.get(root(Math.trunc(odd[n] / 3)))!.odd.push(odd[n], odd[n + 1], odd[n + 2]);
+  const renumber = renumbering(mesh.positions.length / 3);
+  return Array.from(parts.values(), ({ which, odd }) => {
+    const faults = faultsOf(odd, triangles);
+    if (parts.size === 1) return { ...mesh, ...faults };
+    const number = renumber();
+    const part = pick(mesh, which);
+    return {
+      triangles: part.triangles.map(number),
+      owners: part.owners,
+      ...faults,
+      rim: faults.rim.map(number),
+      positions: number.places(mesh.positions),
+    };
+  });
+}
+
+function faultsOf(odd: readonly number[], triangles: Uint32Array) {
+  const faults = { openEdges: 0, contraryEdges: 0, crowdedEdges: 0, rim: [] as number[] };
+  for (let n = 0; n < odd.length; n += 3) {
+    const [first, uses, balance] = [odd[n], odd[n + 1], odd[n + 2]];
+    if (uses > 2) faults.crowdedEdges++;
+    if (uses % 2 === 1) faults.openEdges++;
+    else if (balance !== 0) faults.contraryEdges++;
+    const [from, to] = [triangles[first], triangles[after(first)]];
+    for (let k = 0; k < Math.abs(balance); k++) faults.rim.push(...(balance > 0 ? [from, to] : [to, from]));
+  }
+  return faults;
+}
+
+/** Numbers for the vertices of one part after another, so that each has a list of its own. */
+function renumbering(vertexCount: number) {
+  const usedBy = new Int32Array(vertexCount).fill(-1);
+  const numbers = new Uint32Array(vertexCount);
+  let part = -1;
+  return () => {
+    part++;
+    const vertices: number[] = [];
+    const number = (v: number): number => {
+      if (usedBy[v] !== part) {
+        usedBy[v] = part;
+        numbers[v] = vertices.length;
+        vertices.push(v);
+      }
+      return numbers[v];
+    };
+    const places = (positions: Float64Array): Float64Array => {
+      const own = new Float64Array(3 * vertices.length);
+      vertices.forEach((v, n) => {
+        for (let i = 0; i < 3; i++) own[3 * n + i] = positions[3 * v + i];
+      });
+      return own;
+    };
+    return Object.assign(number, { places });
+  };
+}
