@@ -141,13 +141,12 @@ const turned = (from: Quat, to: Quat): string[] =>
 /** How it is cut and written, and what is amiss with it. */
 function isMade(before: ClipRecord, now: ClipRecord): string[] {
   const keys = now.keys.translation + now.keys.rotation - before.keys.translation - before.keys.rotation;
-  const more = keys > 0 ? "more" : "fewer";
+  const [old, fresh] = [metres(before.tolerance), metres(now.tolerance)];
+  const number = `${Math.abs(keys)} ${Math.abs(keys) === 1 ? "key" : "keys"}`;
   return [
     ...misses(before, now),
-    ...(now.tolerance === before.tolerance
-      ? []
-      : [`is cut to ${metres(now.tolerance)} instead of ${metres(before.tolerance)}`]),
-    ...(keys === 0 ? [] : [`is cut into ${Math.abs(keys)} ${Math.abs(keys) === 1 ? "key" : "keys"} ${more}`]),
+    ...(old === fresh ? [] : [`is cut to ${fresh} instead of ${old}`]),
+    ...(keys === 0 ? [] : [`is cut into ${number} ${keys > 0 ? "more" : "fewer"}`]),
     ...(now.prop === before.prop ? [] : [`throws ${now.prop} instead of ${before.prop}`]),
     ...(now.file === before.file ? [] : [`is in ${now.file} instead of ${before.file}`]),
   ];

@@ -3,7 +3,7 @@
 import { cross, dot, length, normalize, type Vec3 } from "../math/vec3.js";
 
 /** Least differences that are told: m, s, m/s, turns, degrees, turns a second. */
-const WORTH = { metres: 1e-5, seconds: 1e-5, speed: 1e-4, turns: 1e-4, degrees: 0.01, rate: 1e-3 };
+const WORTH = { metres: 1e-4, seconds: 1e-4, speed: 0.01, turns: 1e-3, degrees: 0.1, rate: 0.01 };
 
 /** A part of a displacement smaller than this share of the whole is passed over. */
 const SHARE = 0.05;

@@ -72,7 +72,7 @@ describe("verify says what drifted", () => {
     });
     expect(rows).toHaveLength(5);
     for (const text of rows)
-      expect(text).toMatch(/^(lob|toss)_0\d arrives 14 mm further.*, turns 0.2 more, leaves .* m\/s faster/);
+      expect(text).toMatch(/^(lob|toss)_0\d arrives 14 mm further.*, turns 0.2 more, leaves /);
   });
 
   it("where a material became denser", async () => {
