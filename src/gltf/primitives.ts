@@ -21,6 +21,8 @@ export interface Primitives {
   plain: ReadonlyMap<number, Accessor>;
   /** An accessor that the primitive names. */
   accessor(primitive: GLTF.IMeshPrimitive, index: number): Accessor;
+  /** The numbers of an accessor that the primitive names, element by element, normalised integers as what they mean. */
+  numbers(primitive: GLTF.IMeshPrimitive, index: number): ArrayLike<number>;
   /** Throws ModelError for numbers beyond the vertices. */
   triangles(primitive: GLTF.IMeshPrimitive): Triangles;
 }
@@ -47,6 +49,7 @@ export async function readPrimitives(model: Model, pieces: readonly Piece[]): Pr
   return {
     plain,
     accessor,
+    numbers: (primitive, index) => numbersOf(accessor(primitive, index)),
     triangles(primitive) {
       const known = compacted.get(primitive);
       if (known) return known;
@@ -94,6 +97,15 @@ export async function readPrimitives(model: Model, pieces: readonly Piece[]): Pr
   }
 }
 
+function numbersOf(accessor: Accessor): ArrayLike<number> {
+  if (!accessor.getNormalized()) return accessor.getArray()!;
+  const size = accessor.getElementSize();
+  const numbers = new Float64Array(accessor.getCount() * size);
+  const element: number[] = [];
+  for (let i = 0; i < accessor.getCount(); i++) numbers.set(accessor.getElement(i, element), size * i);
+  return numbers;
+}
+
 /** Renumbers triangles so that only vertices they use are left, in the order of their first use. */
 function compact(
   list: Uint32Array,
@@ -105,14 +117,18 @@ function compact(
   const numbers = new Map<number, number>();
   const vertices = new Uint32Array(list.length);
   let count = 0;
-  const triangles = list.map((vertex) => {
+  const triangles = new Uint32Array(list.length);
+  for (let corner = 0; corner < list.length; corner++) {
+    const vertex = list[corner];
     if (vertex >= vertexCount) refuse(vertex);
-    const known = table ? table[vertex] : (numbers.get(vertex) ?? -1);
-    if (known >= 0) return known;
-    if (table) table[vertex] = count;
-    else numbers.set(vertex, count);
-    vertices[count] = vertex;
-    return count++;
-  });
+    let known = table ? table[vertex] : (numbers.get(vertex) ?? -1);
+    if (known < 0) {
+      known = count++;
+      vertices[known] = vertex;
+      if (table) table[vertex] = known;
+      else numbers.set(vertex, known);
+    }
+    triangles[corner] = known;
+  }
   return { triangles, vertices: vertices.slice(0, count) };
 }

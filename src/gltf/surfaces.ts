@@ -1,10 +1,9 @@
 import { determinant } from "../math/mat3.js";
-import type { Vec3 } from "../math/vec3.js";
-import { instanceFrames } from "./instancing.js";
+import { instanceAccessors, instanceFrames } from "./instancing.js";
 import { type Model, ModelError } from "./model.js";
 import { listPieces, type Piece } from "./pieces.js";
 import { type Primitives, readPrimitives } from "./primitives.js";
-import { applyFrame, compose, type Frame } from "./scene.js";
+import { compose, type Frame } from "./scene.js";
 import { shownNodes } from "./shown-nodes.js";
 import { skinFrames } from "./skin.js";
 
@@ -42,52 +41,49 @@ export async function readSurfaces(
   const skinned = skinFrames(json, primitives);
   const surfaces = pieces.flatMap((piece) => {
     const { node, primitive, copies } = piece;
+    const frame = frames.get(node)!;
     const joined = skinned(node, primitive);
     if (joined) return surfacesOf(model, piece, primitives, [joined]);
-    const frame = frames.get(node)!;
-    const instances =
-      copies === 1
-        ? [frame]
-        : instanceFrames(json, node, primitives.plain).map((instance) => compose(frame, instance));
-    return surfacesOf(
-      model,
-      piece,
-      primitives,
-      instances.map((instance) => () => instance),
-    );
+    if (copies === 1 && instanceAccessors(json, node).length === 0)
+      return surfacesOf(model, piece, primitives, [frame]);
+    const instances = instanceFrames(json, node, primitives.plain);
+    const placed = instances.map((instance) => compose(frame, instance));
+    return surfacesOf(model, piece, primitives, placed);
   });
   return { surfaces, warnings: [...warnings] };
 }
 
-/** The piece once for each frame; none where it has no triangles. */
+/** What takes a vertex into the scene: one frame for all, or one for each. */
+type Placing = Frame | ((vertex: number) => Frame);
+
+const frameOf = (placing: Placing, vertex: number): Frame =>
+  typeof placing === "function" ? placing(vertex) : placing;
+
+/** The piece once for each placing; none where it has no triangles. */
 function surfacesOf(
   { name, json }: Model,
   piece: Piece,
   primitives: Primitives,
-  frames: readonly ((vertex: number) => Frame)[],
+  placings: readonly Placing[],
 ): Surface[] {
   const { node, primitive, where } = piece;
   const { triangles, vertices } = primitives.triangles(primitive);
   if (triangles.length === 0) return [];
   const points = restPoints(piece, vertices, primitives);
   let turned: Uint32Array | undefined;
-  return frames.map((frameOf) => {
+  return placings.map((placing) => {
     const positions = new Float64Array(points.length);
-    vertices.forEach((vertex, i) => {
-      const point: Vec3 = [points[3 * i], points[3 * i + 1], points[3 * i + 2]];
-      const [x, y, z] = applyFrame(frameOf(vertex), point);
-      positions[3 * i] = x;
-      positions[3 * i + 1] = y;
-      positions[3 * i + 2] = z;
-    });
-    const infinite = positions.findIndex((value) => !Number.isFinite(value));
-    if (infinite >= 0)
-      throw new ModelError(
-        name,
-        `${where} has a position that is ${positions[infinite]} (vertex ${vertices[Math.floor(infinite / 3)]})`,
-        "it must be finite",
-      );
-    const mirrored = determinant(frameOf(vertices[0]).linear) < 0;
+    for (let i = 0; i < vertices.length; i++) {
+      placeInto(positions, 3 * i, points, frameOf(placing, vertices[i]));
+      for (let axis = 0; axis < 3; axis++)
+        if (!Number.isFinite(positions[3 * i + axis]))
+          throw new ModelError(
+            name,
+            `${where} has a position that is ${positions[3 * i + axis]} (vertex ${vertices[i]})`,
+            "it must be finite",
+          );
+    }
+    const mirrored = determinant(frameOf(placing, vertices[0]).linear) < 0;
     if (mirrored) turned ??= turnedRound(triangles);
     return {
       nodeName: json.nodes![node].name ?? "",
@@ -104,23 +100,38 @@ function restPoints(
   vertices: Uint32Array,
   primitives: Primitives,
 ): Float64Array {
-  const positions = primitives.accessor(primitive, primitive.attributes.POSITION);
-  const targets = (primitive.targets ?? []).flatMap(({ POSITION }, t) =>
-    weights[t] && POSITION !== undefined
-      ? [{ weight: weights[t], moves: primitives.accessor(primitive, POSITION) }]
-      : [],
-  );
   const points = new Float64Array(3 * vertices.length);
-  const element: number[] = [];
-  vertices.forEach((vertex, i) => {
-    positions.getElement(vertex, element);
-    for (let axis = 0; axis < 3; axis++) points[3 * i + axis] = element[axis];
-    for (const { weight, moves } of targets) {
-      moves.getElement(vertex, element);
-      for (let axis = 0; axis < 3; axis++) points[3 * i + axis] += weight * element[axis];
-    }
+  addPoints(points, vertices, primitives.numbers(primitive, primitive.attributes.POSITION), 1);
+  (primitive.targets ?? []).forEach(({ POSITION }, t) => {
+    if (weights[t] && POSITION !== undefined)
+      addPoints(points, vertices, primitives.numbers(primitive, POSITION), weights[t]);
   });
   return points;
+}
+
+function addPoints(
+  points: Float64Array,
+  vertices: Uint32Array,
+  numbers: ArrayLike<number>,
+  weight: number,
+): void {
+  for (let i = 0; i < vertices.length; i++) {
+    const from = 3 * vertices[i];
+    points[3 * i] += weight * numbers[from];
+    points[3 * i + 1] += weight * numbers[from + 1];
+    points[3 * i + 2] += weight * numbers[from + 2];
+  }
+}
+
+/** The same as `applyFrame` without making anything: there may be millions of vertices. */
+function placeInto(out: Float64Array, at: number, points: Float64Array, { linear, origin }: Frame): void {
+  const x = points[at];
+  const y = points[at + 1];
+  const z = points[at + 2];
+  const [rowX, rowY, rowZ] = linear;
+  out[at] = rowX[0] * x + rowX[1] * y + rowX[2] * z + origin[0];
+  out[at + 1] = rowY[0] * x + rowY[1] * y + rowY[2] * z + origin[1];
+  out[at + 2] = rowZ[0] * x + rowZ[1] * y + rowZ[2] * z + origin[2];
 }
 
 function turnedRound(triangles: Uint32Array): Uint32Array {

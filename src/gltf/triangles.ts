@@ -1,7 +1,6 @@
-/** Primitive modes that have triangles (glTF 2.0, 3.7.2.1). */
+/** Primitive modes that have triangles (glTF 2.0, 3.7.2.1); the third and last are fans. */
 const TRIANGLES = 4;
 const STRIP = 5;
-const FAN = 6;
 
 /** Whether a primitive of that mode has triangles: points and lines have none. */
 export const hasTriangles = (mode: number): boolean => mode >= TRIANGLES;
@@ -19,21 +18,22 @@ export function triangleList(
   const length = indices ? indices.length : vertexCount;
   const count = mode === TRIANGLES ? Math.floor(length / 3) : Math.max(0, length - 2);
   const list = new Uint32Array(count * 3);
-  const vertex = (i: number): number => (indices ? indices[i] : i);
   let used = 0;
   for (let i = 0; i < count; i++) {
     // Orders of corners as the specification states them.
     const odd = i & 1;
-    const [a, b, c] =
-      mode === STRIP
-        ? [vertex(i), vertex(i + 1 + odd), vertex(i + 2 - odd)]
-        : mode === FAN
-          ? [vertex(i + 1), vertex(i + 2), vertex(0)]
-          : [vertex(3 * i), vertex(3 * i + 1), vertex(3 * i + 2)];
+    let a = mode === TRIANGLES ? 3 * i : mode === STRIP ? i : i + 1;
+    let b = mode === TRIANGLES ? a + 1 : mode === STRIP ? i + 1 + odd : i + 2;
+    let c = mode === TRIANGLES ? a + 2 : mode === STRIP ? i + 2 - odd : 0;
+    if (indices) {
+      a = indices[a];
+      b = indices[b];
+      c = indices[c];
+    }
     if (a === b || b === c || c === a) continue;
     list[used++] = a;
     list[used++] = b;
     list[used++] = c;
   }
-  return list.slice(0, used);
+  return list.subarray(0, used);
 }
