@@ -52,9 +52,7 @@ export function carlsonJ(x0: number, y0: number, z0: number, p0: number): number
   const mean = (x + y + z + 2 * p) / 5;
   let delta = (p - x) * (p - y) * (p - z);
   let a = mean;
-  let q =
-    SPREAD_J *
-    Math.max(Math.abs(mean - x), Math.abs(mean - y), Math.abs(mean - z), Math.abs(mean - p));
+  let q = SPREAD_J * Math.max(Math.abs(mean - x), Math.abs(mean - y), Math.abs(mean - z), Math.abs(mean - p));
   let power = 1;
   let sum = 0;
   while (q >= a) {

@@ -16,6 +16,8 @@ export interface Polhode {
   sign: number;
   /** 2E/L² = m·Jm. */
   energy: number;
+  /** J_a. */
+  ownInverse: number;
   /** Rate of the elliptic functions' argument. */
   rate: number;
   /** k², and k'² = 1 − k² with its own digits. */
@@ -44,6 +46,7 @@ export function polhodeThrough(body: ReducedBody, m: Vec3): Polhode {
       other: 0,
       sign: m[2] < 0 ? -1 : 1,
       energy,
+      ownInverse: inverse[2],
       rate: Math.sqrt(underMost * d23),
       modulus: (d12 * overLeast) / (d23 * underMost),
       complement: (-d13 * overMiddle) / (d23 * underMost),
@@ -56,6 +59,7 @@ export function polhodeThrough(body: ReducedBody, m: Vec3): Polhode {
     other: 2,
     sign: m[0] < 0 ? -1 : 1,
     energy,
+    ownInverse: inverse[0],
     rate: Math.sqrt(overLeast * d12),
     modulus: (d23 * underMost) / (d12 * overLeast),
     complement: (d13 * overMiddle) / (d12 * overLeast),
@@ -104,12 +108,13 @@ export function passage(body: ReducedBody, m: Vec3, end: Mat3): Passage | undefi
   const stop = amplitudeAt(body, polhode, m1);
   const { complement, spread, rate } = polhode;
   const quarterF = carlsonF(0, complement, 1);
-  const quarterPi = spread === 0 ? quarterF : quarterF - (spread / 3) * carlsonJ(0, complement, 1, 1 + spread);
+  const quarterPi =
+    spread === 0 ? quarterF : quarterF - (spread / 3) * carlsonJ(0, complement, 1, 1 + spread);
   const from = integrals(polhode, start.sin, start.cos, quarterF, quarterPi);
   const to = integrals(polhode, stop.sin, stop.cos, quarterF, quarterPi);
   const time = (to[0] - from[0]) / rate;
   const period = (4 * quarterF) / rate;
-  const own = body.inverse[polhode.own];
+  const own = polhode.ownInverse;
   return {
     polhode,
     theta0: atan2(start.sin, start.cos),
@@ -137,8 +142,7 @@ function integrals(
   const halves = cos < 0 ? (sin < 0 ? -2 : 2) : 0;
   const f = s * carlsonF(c, d, 1);
   const { spread } = polhode;
-  const pi =
-    spread === 0 ? f : f - (spread / 3) * s * s * s * carlsonJ(c, d, 1, 1 + spread * s * s);
+  const pi = spread === 0 ? f : f - (spread / 3) * s * s * s * carlsonJ(c, d, 1, 1 + spread * s * s);
   return [f + halves * quarterF, pi + halves * quarterPi];
 }
 

@@ -24,7 +24,9 @@ export function momentumCone(body: ReducedBody, end: Mat3): Cone | undefined {
   const { values, vectors } = eigenSymmetric(form);
   // the lone sign's axis runs through the nappe; λ is then (−, +, +) or its negative
   const turned = values[1] < 0;
-  const [lone, middle, last] = turned ? [values[2], -values[1], -values[0]] : [-values[0], values[1], values[2]];
+  const [lone, middle, last] = turned
+    ? [values[2], -values[1], -values[0]]
+    : [-values[0], values[1], values[2]];
   const near = Math.max(0, middle);
   return {
     form,

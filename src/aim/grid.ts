@@ -39,6 +39,13 @@ const MOST_PHASE = 2;
 /** A bound on the work for bodies that no other bound foresees. */
 const MOST_SAMPLES = 20000;
 
+/** What ways are looked for: 2ET/(2π|L|) from least to most, and at most so much of ∫|ω|dt/2π. */
+export interface Bounds {
+  leastTurns: number;
+  mostTurns: number;
+  mostTurning: number;
+}
+
 /** The start of a search along a curve: the passage that begins at an angle. */
 export type SampleAt = (angle: number) => Sample | undefined;
 
@@ -52,9 +59,9 @@ export function sampler(body: ReducedBody, end: Mat3, curve: Curve): SampleAt {
 
 /**
  * Cells that cover the whole curve, ascending, so fine that nothing turns by more than about a radian within one. A cell is left out where no
- * number of periods keeps the turns within `mostTurns`, or where start and end lie on different branches.
+ * number of periods keeps the turns within the bounds, or where start and end lie on different branches.
  */
-export function cells(curve: Curve, sampleAt: SampleAt, mostTurns: number, even = EVEN): Cell[] {
+export function cells(curve: Curve, sampleAt: SampleAt, bounds: Bounds, even = EVEN): Cell[] {
   const found: Cell[] = [];
   let budget = MOST_SAMPLES;
   const divide = (a: number, b: number, left?: Sample, right?: Sample): void => {
@@ -62,7 +69,7 @@ export function cells(curve: Curve, sampleAt: SampleAt, mostTurns: number, even 
     if (width <= NARROWEST) return;
     if (left && right) {
       if (left.polhode.own === right.polhode.own && left.polhode.sign === right.polhode.sign) {
-        const cell = cellBetween(left, right, mostTurns);
+        const cell = cellBetween(left, right, bounds);
         if (cell.windings[0] > cell.windings[1]) return;
         if (!isRough(cell)) {
           found.push(cell);
@@ -94,24 +101,32 @@ function startingAngles(curve: Curve, even: number): number[] {
   for (let i = 0; i <= even + 1; i++) angles.push(i * step);
   for (const crossing of curve.crossings)
     for (const side of [-1, 1])
-      for (let i = 0, far = step; i < TOWARDS_CROSSING; i++, far /= 4) angles.push(into(crossing + side * far));
+      for (let i = 0, far = step; i < TOWARDS_CROSSING; i++, far /= 4)
+        angles.push(into(crossing + side * far));
   const ascending = angles.sort((a, b) => a - b);
   return ascending.filter((angle, i) => i === 0 || angle > ascending[i - 1]);
 }
 
-function cellBetween(left: Sample, right: Sample, mostTurns: number): Cell {
+function cellBetween(left: Sample, right: Sample, bounds: Bounds): Cell {
   const link = linkBetween(left, right);
-  const [leastLeft, mostLeft] = windingsWithin(left, mostTurns);
-  const [leastRight, mostRight] = windingsWithin(right, mostTurns);
+  const [leastLeft, mostLeft] = windingsWithin(left, bounds);
+  const [leastRight, mostRight] = windingsWithin(right, bounds);
   const least = Math.ceil(Math.min(leastLeft, leastRight - link.winding));
   const most = Math.floor(Math.max(mostLeft, mostRight - link.winding));
   return { left, right, link, windings: [least, most] };
 }
 
-/** The real range of periods for which the turns |energy·time/2π| are within the bound. */
-function windingsWithin(sample: Sample, mostTurns: number): [number, number] {
-  const longest = (TURN * mostTurns) / sample.polhode.energy;
-  return [(-longest - sample.time) / sample.period, (longest - sample.time) / sample.period];
+/** The real range of periods for which the turns, energy·time/2π, are within the bound, and those about the polhode's own axis alone. */
+function windingsWithin(sample: Sample, bounds: Bounds): [number, number] {
+  const { energy, own, ownInverse, amplitude, rate } = sample.polhode;
+  const longest = (TURN * bounds.mostTurns) / energy;
+  const past = sample.theta1 - sample.theta0;
+  // ∫|ω|dt ≥ |∫ω_a dt|, and ω_a is in proportion to the amplitude's rate
+  const farthest = (TURN * bounds.mostTurning * rate) / (ownInverse * amplitude[own]);
+  return [
+    Math.max((-longest - sample.time) / sample.period, (-farthest - past) / TURN),
+    Math.min((longest - sample.time) / sample.period, (farthest - past) / TURN),
+  ];
 }
 
 /** How the right sample continues the left one, amplitudes and azimuth each moving by less than half a turn. */

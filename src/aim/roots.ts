@@ -1,6 +1,6 @@
 import { findRoot } from "../math/roots.js";
 import { scale, type Vec3 } from "../math/vec3.js";
-import { type Cell, lead, linkBetween, type Sample, type SampleAt } from "./grid.js";
+import { type Bounds, type Cell, lead, linkBetween, type Sample, type SampleAt } from "./grid.js";
 
 const TURN = 2 * Math.PI;
 
@@ -15,8 +15,7 @@ const GOLDEN = (Math.sqrt(5) - 1) / 2;
 export function momenta(
   cells: readonly Cell[],
   sampleAt: SampleAt,
-  leastTurns: number,
-  mostTurns: number,
+  { leastTurns, mostTurns }: Bounds,
 ): Vec3[] {
   const found: Vec3[] = [];
   const keep = (cell: Cell, winding: number, target: number, from: number, to: number): void => {
@@ -33,7 +32,8 @@ export function momenta(
       const end = lead(cell.right, winding + cell.link.winding) - cell.link.azimuth;
       const [low, high] = start < end ? [start, end] : [end, start];
       for (let k = Math.ceil(low / TURN); k * TURN <= high; k++)
-        if (k * TURN !== end || start === end) keep(cell, winding, k * TURN, cell.left.angle, cell.right.angle);
+        if (k * TURN !== end || start === end)
+          keep(cell, winding, k * TURN, cell.left.angle, cell.right.angle);
       const next = cells[i + 1];
       if (next?.left === cell.right) overCrest(cell, next, winding, start, end, sampleAt, keep);
     }
