@@ -5,7 +5,8 @@ import { RequestError } from "../math/request-error.js";
 import { length, type Vec3 } from "../math/vec3.js";
 import { readModelFile } from "../node/model-files.js";
 import { openThrowFile } from "../node/throw-file.js";
-import { type AxisBehaviour, kindOf } from "../prop/kind.js";
+import { type AxisBehaviour, kindOf, WOBBLE_DEGREES } from "../prop/kind.js";
+import { nearestModelAxis } from "../prop/model-axis.js";
 import { weigh } from "../prop/prop.js";
 import { formatRecord } from "../record/format.js";
 import { propRecord } from "../record/record-of.js";
@@ -59,29 +60,37 @@ async function weighAll(path: string): Promise<Map<string, LoadedProp>> {
   return loadProps(file, new Set(file.props.keys()), models);
 }
 
-const facts = (loaded: LoadedProp) => ({
-  ...propRecord(loaded),
-  size: loaded.prop.size,
-  names: loaded.prop.names,
-  ...kindOf(loaded.prop.principal.moments),
-  points: loaded.prop.points,
-});
+const AXES = ["long", "middle", "short"] as const;
+
+const facts = (loaded: LoadedProp) => {
+  const { prop } = loaded;
+  return {
+    ...propRecord(loaded),
+    size: prop.size,
+    fromOrigin: length(prop.centerOfMass),
+    names: prop.names,
+    modelAxes: Object.fromEntries(AXES.map((name) => [name, nearestModelAxis(prop.names[name])])),
+    wobbleDegrees: WOBBLE_DEGREES,
+    ...kindOf(prop.principal.moments),
+    points: prop.points,
+  };
+};
 
 function describe({ prop, source }: LoadedProp): string {
   const { kind, axes } = kindOf(prop.principal.moments);
   const fromOrigin = length(prop.centerOfMass) * 1000;
-  const axisLine = (name: "long" | "middle" | "short", i: number) => [
-    `${name} axis`,
-    `${list(prop.names[name])}, ${short(prop.principal.moments[i])} kg m²: ${behaviour(axes[name])}`,
-  ];
   const rows = [
     ["mass", `${short(prop.mass)} kg`],
     ["size", `${prop.size.map(short).join(" × ")} m; reaches ${short(prop.reach)} m from its centre of mass`],
     ["centre of mass", `${list(prop.centerOfMass)} m, ${short(fromOrigin)} mm from the model's origin`],
     ["kind of body", kind],
-    axisLine("long", 0),
-    axisLine("middle", 1),
-    axisLine("short", 2),
+    ...AXES.flatMap((name, i) => [
+      [
+        `${name} axis`,
+        `${list(prop.names[name])}, ${alongModel(prop.names[name])}, ${short(prop.principal.moments[i])} kg m²`,
+      ],
+      ["", `a throw about it ${behaviour(axes[name])}`],
+    ]),
     ...Object.entries(prop.points).map(([name, point]) => [`point ${name}`, `${list(point.position)} m`]),
     ...prop.warnings.map((text) => ["warning", text]),
   ];
@@ -92,14 +101,22 @@ function describe({ prop, source }: LoadedProp): string {
   ].join("\n");
 }
 
+function alongModel(direction: Vec3): string {
+  const { axis, degrees } = nearestModelAxis(direction);
+  return degrees < 0.05 ? `the model's ${axis}` : `${degrees.toFixed(1)}° off the model's ${axis}`;
+}
+
 function behaviour(axis: AxisBehaviour): string {
+  const wobble = `a wobble of ${WOBBLE_DEGREES}°`;
   switch (axis.behaviour) {
     case "steady":
-      return `a throw about it is steady; a small wobble goes round ${short(axis.wobblesPerTurn)} times a turn`;
+      return `is steady: a small wobble goes round ${short(axis.wobblesPerTurn)} times a turn, one of ${WOBBLE_DEGREES}° ${short(axis.wobblesPerTurnAtWobble)} times`;
     case "tumbles":
-      return `a throw about it tumbles; a small wobble grows ${short(axis.growthPerTurn)} times a turn`;
+      return `tumbles: a small wobble grows ${short(axis.growthPerTurn)} times a turn; with ${wobble} it turns over every ${short(axis.turnsPerFlip)} turns, round the ${axis.turnsRound} axis`;
+    case "leans":
+      return `is steady without a wobble only: ${wobble} leans the spin to the ${axis.turnsRound} axis, round which it turns over every ${short(axis.turnsPerFlip)} turns`;
     case "drifts":
-      return "one of several equal axes: a throw about it is steady, but drifts round the odd one when it wobbles";
+      return `drifts: with ${wobble} it turns over slowly, every ${short(axis.turnsPerFlip)} turns, round the ${axis.turnsRound} axis`;
   }
 }
 

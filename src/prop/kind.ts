@@ -1,18 +1,34 @@
 import { exp } from "../math/elementary.js";
 import type { Vec3 } from "../math/vec3.js";
 import { NAMES_TIE, tieGroups } from "./principal.js";
+import { typicalWobble } from "./wobble.js";
 
 /** What a body is to mechanics; moments within 1 % count as equal. */
 export type BodyKind = "spherical top" | "oblate symmetric top" | "prolate symmetric top" | "asymmetric top";
 
-/** What becomes of a spin about a principal axis that was tilted a little at the start. */
+/** The axis that a body turns about while another of its axes turns over. */
+type TurnsRound = "long" | "short";
+
+/** What a throw about a principal axis does. "At the wobble": with the angular momentum tilted by `WOBBLE_DEGREES`. */
 export type AxisBehaviour =
-  /** The axis circles the angular momentum, that often per turn, and stays as near to it as it began. */
-  | { readonly behaviour: "steady"; readonly wobblesPerTurn: number }
-  /** The tilt grows by this factor per turn, until the body turns over. */
-  | { readonly behaviour: "tumbles"; readonly growthPerTurn: number }
-  /** One of several axes of equal moment: the body turns slowly round its own odd axis, at a rate that grows with the tilt. */
-  | { readonly behaviour: "drifts" };
+  /** The axis circles the angular momentum and stays as near to it as it began. */
+  | {
+      readonly behaviour: "steady";
+      /** How often it goes round per turn, for a tilt near zero, and at the wobble. */
+      readonly wobblesPerTurn: number;
+      readonly wobblesPerTurnAtWobble: number;
+    }
+  /** Any tilt grows by this factor per turn, until the body turns over: at the wobble every so many turns. */
+  | {
+      readonly behaviour: "tumbles";
+      readonly growthPerTurn: number;
+      readonly turnsPerFlip: number;
+      readonly turnsRound: TurnsRound;
+    }
+  /** Steady without a wobble only: at the wobble the spin leans to another axis, round which this one turns over soon. */
+  | { readonly behaviour: "leans"; readonly turnsPerFlip: number; readonly turnsRound: TurnsRound }
+  /** As good as steady for a while: at the wobble it turns over after more than ten turns. */
+  | { readonly behaviour: "drifts"; readonly turnsPerFlip: number; readonly turnsRound: TurnsRound };
 
 export interface Kind {
   readonly kind: BodyKind;
@@ -23,38 +39,55 @@ export interface Kind {
   };
 }
 
+/** The default of `spin.wobble` about a middle axis. */
+export const WOBBLE_DEGREES = 3;
+/** What turns over within so many turns at the wobble is not steady. */
+const SOON = 10;
+/** Growth per turn from which a tilt of its own makes a body turn over; below it is the lean of a slender one. */
+const GROWS = 2;
+
+/** The kind of body with these principal moments (ascending, all above 0), and what a throw about each axis does. */
+export function kindOf(moments: Vec3): Kind {
+  return {
+    kind: bodyKind(moments),
+    axes: { long: behaviourOf(moments, 0), middle: behaviourOf(moments, 1), short: behaviourOf(moments, 2) },
+  };
+}
+
+function bodyKind(moments: Vec3): BodyKind {
+  const groups = tieGroups(moments, NAMES_TIE);
+  if (groups.length === 1) return "spherical top";
+  if (groups.length === 3) return "asymmetric top";
+  return groups[0].length === 2 ? "oblate symmetric top" : "prolate symmetric top";
+}
+
 /**
- * The kind of body with these principal moments (ascending, all above 0), and what a throw about each axis does, in the limit
- * of a small tilt.
- *
- * Near a steady axis a the angular momentum goes round it in the body at κ times the spin, κ² = (I_a − I_b)(I_a − I_c) / (I_b I_c),
+ * In the small: near a steady axis a the angular momentum goes round it in the body at κ times the spin, κ² = (I_a − I_b)(I_a − I_c) / (I_b I_c),
  * the way the body turns where I_a is the greatest moment and the other way where it is the least (Landau & Lifshitz, Mechanics, §37,
  * small oscillations about the axes). Seen from outside the axis therefore goes round it 1 + κ or 1 − κ times per turn; for a
  * symmetric top both are I_a / I_b, the regular precession of §33: rate L / I_b where the spin is L / I_a. Near the middle axis the
  * tilt grows as exp(γ × angle), γ² = (I2 − I1)(I3 − I2) / (I1 I3).
  */
-export function kindOf(moments: Vec3): Kind {
-  const groups = tieGroups(moments, NAMES_TIE);
+function behaviourOf(moments: Vec3, axis: 0 | 1 | 2): AxisBehaviour {
   const [a, b, c] = moments;
-  const long: AxisBehaviour = {
-    behaviour: "steady",
-    wobblesPerTurn: 1 - Math.sqrt(((b - a) * (c - a)) / (b * c)),
-  };
-  const short: AxisBehaviour = {
-    behaviour: "steady",
-    wobblesPerTurn: 1 + Math.sqrt(((c - a) * (c - b)) / (a * b)),
-  };
-  if (groups.length === 1) {
-    const any: AxisBehaviour = { behaviour: "steady", wobblesPerTurn: 1 };
-    return { kind: "spherical top", axes: { long: any, middle: any, short: any } };
+  const { turnsPerFlip, round, wobblesPerTurn } = typicalWobble(
+    moments,
+    axis,
+    (WOBBLE_DEGREES * Math.PI) / 180,
+  );
+  if (turnsPerFlip === Number.POSITIVE_INFINITY) {
+    const kappa =
+      axis === 0
+        ? -Math.sqrt(((b - a) * (c - a)) / (b * c))
+        : axis === 2
+          ? Math.sqrt(((c - a) * (c - b)) / (a * b))
+          : 0;
+    return { behaviour: "steady", wobblesPerTurn: 1 + kappa, wobblesPerTurnAtWobble: wobblesPerTurn };
   }
-  const drifts: AxisBehaviour = { behaviour: "drifts" };
-  if (groups.length === 3) {
-    const rate = Math.sqrt(((b - a) * (c - b)) / (a * c));
-    const middle: AxisBehaviour = { behaviour: "tumbles", growthPerTurn: exp(2 * Math.PI * rate) };
-    return { kind: "asymmetric top", axes: { long, middle, short } };
-  }
-  return groups[0].length === 2
-    ? { kind: "oblate symmetric top", axes: { long: drifts, middle: drifts, short } }
-    : { kind: "prolate symmetric top", axes: { long, middle: drifts, short: drifts } };
+  const turnsRound = round === 0 ? "long" : "short";
+  if (turnsPerFlip > SOON) return { behaviour: "drifts", turnsPerFlip, turnsRound };
+  const growthPerTurn = axis === 1 ? exp(2 * Math.PI * Math.sqrt(((b - a) * (c - b)) / (a * c))) : 1;
+  return growthPerTurn < GROWS
+    ? { behaviour: "leans", turnsPerFlip, turnsRound }
+    : { behaviour: "tumbles", growthPerTurn, turnsPerFlip, turnsRound };
 }
