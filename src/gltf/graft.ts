@@ -55,9 +55,17 @@ export type SamplerType = "SCALAR" | "VEC3" | "VEC4";
 
 export const outputType = (path: ClipChannel["path"]): SamplerType => (path === "rotation" ? "VEC4" : "VEC3");
 
-/** The same for arrays that may share an accessor. */
-export const contentKey = (array: Float32Array | Int16Array, type: SamplerType): string =>
-  `${type} ${array instanceof Float32Array} ${array.join()}`;
+/** The same for arrays that may share an accessor: their type and their bytes, two a character. */
+export function contentKey(array: Float32Array | Int16Array, type: SamplerType): string {
+  const pairs = new Uint16Array(array.buffer, array.byteOffset, array.byteLength / 2);
+  let key = `${type} ${array instanceof Float32Array} `;
+  for (let i = 0; i < pairs.length; i += MOST_ARGUMENTS)
+    key += String.fromCharCode.apply(null, pairs.subarray(i, i + MOST_ARGUMENTS) as unknown as number[]);
+  return key;
+}
+
+/** Engines limit how many a call may have. */
+const MOST_ARGUMENTS = 8192;
 
 /** Players find a clip by its name: throws ModelError where two would have the same. */
 export function checkClipNames(model: string, own: Iterable<string | undefined>, clips: NewClip[]): void {

@@ -37,11 +37,11 @@ export class SamplerPack {
   /** Little-endian, as glTF has it. */
   write(bytes: Uint8Array, start: number): void {
     const view = new DataView(bytes.buffer, bytes.byteOffset + start, this.byteLength);
-    for (const { at, array } of this.#arrays)
-      array.forEach((value, i) => {
-        if (array instanceof Int16Array) view.setInt16(at + 2 * i, value, true);
-        else view.setFloat32(at + 4 * i, value, true);
-      });
+    for (const { at, array } of this.#arrays) {
+      if (array instanceof Int16Array)
+        for (let i = 0; i < array.length; i++) view.setInt16(at + 2 * i, array[i], true);
+      else for (let i = 0; i < array.length; i++) view.setFloat32(at + 4 * i, array[i], true);
+    }
   }
 
   #add(array: Float32Array | Int16Array, type: SamplerType): number {
