@@ -4,6 +4,11 @@ import { assets, run, THROWS, Workplace } from "./folder.js";
 
 // Exit codes: 0 no drift, 1 drift, 2 a wrong request: the project's own choice. What drifts is what each test changes.
 
+/** The engine's x, y, z are glTF's z, x, y; centimetres. */
+const HOSTED = THROWS.replace("seed: 1", "seed: 1\nhost: { axes: [z, x, y], unit: 0.01 }")
+  .replace("[0, 1, 0]", "[0, 0, 100]")
+  .replace("[0, 1, 3]", "[300, 0, 100]");
+
 /** Bakes, then lets something happen, then verifies; the rows without the one about the throw file. */
 async function verifiedAfter(happening: (place: Workplace) => unknown) {
   const place = new Workplace();
@@ -73,6 +78,14 @@ describe("verify says what drifted", () => {
     expect(rows).toHaveLength(5);
     for (const text of rows)
       expect(text).toMatch(/^(lob|toss)_0\d arrives 14 mm further.*, turns 0.2 more, leaves /);
+  });
+
+  it("in metres where the throw file's numbers are a host's", async () => {
+    const place = new Workplace(HOSTED);
+    await run("bake", place.throwFile, "-o", place.out);
+    place.edit("lob.throws.yaml", "[300, 0, 100]", "[320, 0, 100]");
+    const { out } = await run("verify", place.throwFile, "-o", place.out);
+    expect(out).toMatch("lob_01 arrives 200 mm further");
   });
 
   it("where a material became denser", async () => {
@@ -179,6 +192,17 @@ describe("verify --against", () => {
     expect(code).toBe(0);
   });
 
+  it("finds an edit by hand in either folder", async () => {
+    const place = await twoFolders(() => {});
+    const folders = [place.out, place.path("before")];
+    place.edit("out/takes.json", '"format": 1,', '"format":1,');
+    for (const [folder, other] of [folders, [...folders].reverse()]) {
+      const { code, out } = await run("verify", "-o", folder, "--against", other);
+      expect(code).toBe(1);
+      expect(out).toMatch("takes.json was edited by hand: no value differs, but line 2");
+    }
+  });
+
   it("tells what changed from the other folder to this one", async () => {
     const place = await twoFolders((p) => p.edit("lob.throws.yaml", "[0, 1, 3]", "[0, 1, 3.2]"));
     const forth = await run("verify", "-o", place.out, "--against", place.path("before"));
@@ -199,11 +223,7 @@ describe("verify --against", () => {
   });
 
   it("asks for the throw file where the numbers are a host's, and then tells metres", async () => {
-    const place = new Workplace(
-      THROWS.replace("seed: 1", "seed: 1\nhost: { axes: [z, x, y], unit: 0.01 }")
-        .replace("[0, 1, 0]", "[0, 0, 100]")
-        .replace("[0, 1, 3]", "[300, 0, 100]"),
-    );
+    const place = new Workplace(HOSTED);
     await run("bake", place.throwFile, "-o", place.path("before"));
     place.edit("lob.throws.yaml", "[300, 0, 100]", "[320, 0, 100]");
     await run("bake", place.throwFile, "-o", place.out);

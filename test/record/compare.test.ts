@@ -1,4 +1,5 @@
 import { describe, expect, it } from "vitest";
+import type { Drift } from "../../src/record/compare.js";
 import { driftLines } from "../../src/record/compare-report.js";
 import { drift, LOB } from "./lob.js";
 
@@ -160,6 +161,12 @@ describe("a host's numbers", () => {
     expect(found[0].text).toMatch(/^lob_01 arrives 200 mm further, 100 mm to the left, 300 mm higher /);
   });
 
+  it("tell a rise in metres too", async () => {
+    const [first] = await rows(hosted, changed("after: 1 }", "after: 1.1 }", hosted));
+    // as above
+    expect(first.text).toMatch("rises 257 mm higher");
+  });
+
   it("are not taken for motion when the host changes", async () => {
     const metres = changed("unit: 0.01", "unit: 1", hosted)
       .replace("[0, 0, 100]", "[0, 0, 1]")
@@ -181,6 +188,21 @@ describe("a long list", () => {
     expect(lines[1]).toMatch(/^lob: 3 takes drifted, most of all lob_0\d arrives 100 mm further/);
     // the throw file's row and 31 throws, 20 of them told
     expect(lines[20]).toBe("and 12 more (--json lists all)");
+  });
+
+  it("tells of a throw the take that moved most, whichever that is", () => {
+    const takes = Array.from({ length: 21 }, (_, i): Drift => {
+      const displacement = i === 7 ? 0.5 : 0.1;
+      return {
+        kind: "take",
+        what: "changed",
+        name: `lob_${i}`,
+        text: `lob_${i} …`,
+        throw: "lob",
+        displacement,
+      };
+    });
+    expect(driftLines(takes)).toEqual(["lob: 21 takes drifted, most of all lob_7 …"]);
   });
 
   it("is told take by take while it is short", async () => {
