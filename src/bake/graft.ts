@@ -41,7 +41,6 @@ export function oneNodeGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
 const channel = (path: "translation" | "rotation", track: Track): ClipChannel => ({
   target: { added: 0 },
   path,
-  interpolation: track.interpolation,
   ...track[path],
 });
 

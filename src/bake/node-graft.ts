@@ -34,7 +34,6 @@ export function nodeGraft(node: MovedNode, factor: number, clips: readonly Named
         (path): ClipChannel => ({
           target: { node: node.index },
           path,
-          interpolation: track.interpolation,
           ...track[path],
         }),
       ),

@@ -1,7 +1,8 @@
 import type { Flight } from "../flight/flight.js";
 import { length } from "../math/vec3.js";
 import type { Body } from "./body.js";
-import { timeGrid } from "./time-grid.js";
+import { bendSurcharge } from "./sampled-motion.js";
+import { fromOrigin, timeGrid } from "./time-grid.js";
 
 /** Distance between neighbouring float32 numbers, as a part of the number (at most). */
 const FLOAT32 = 1 / 0x80_00_00;
@@ -14,8 +15,11 @@ const FLOAT32 = 1 / 0x80_00_00;
  * One float32 step is what rounding a rotation key may move a point by (1.2e-7 rad), 0.87 what rounding a translation key
  * may; the other two leave the search some room.
  */
-export const leastTolerance = (flight: Flight, body: Body): number =>
-  4 * FLOAT32 * greatestCoordinate(flight, body) + 5 * timeGrid(flight, body, 0).surcharge;
+export function leastTolerance(flight: Flight, body: Body): number {
+  const { surcharge, interval } = timeGrid(flight, body, 0);
+  const played = bendSurcharge(fromOrigin(body) * flight.greatestRate * flight.greatestRate, interval);
+  return 4 * FLOAT32 * greatestCoordinate(flight, body) + 5 * (surcharge + played);
+}
 
 /** Greatest coordinate, m, of any point of the prop or of the model's origin during the flight. */
 export function greatestCoordinate(flight: Flight, body: Body): number {

@@ -1,92 +1,140 @@
 import { longestSegments } from "./longest-segments.js";
 import type { NodePath } from "./node-path.js";
-import type { SampledFlight } from "./sampled-flight.js";
-import { STRIDE } from "./time-grid.js";
+import type { SampledMotion } from "./sampled-motion.js";
+import { spreadSamples } from "./spread-samples.js";
+import { firstAfter, lastBefore, type TranslationKeys } from "./translation-keys.js";
 
-/** Translation keys on the times of a flight's grid. */
-export interface TranslationKeys {
-  /** Grid index of each key. */
-  indices: number[];
-  /** As stored, 3 numbers a key. */
-  values: Float32Array;
-  /** Greatest displacement of any point, by both channels together, at the times compared and the keys, m. */
-  error: number;
-}
+/** Samples that a segment is fitted to, at most, its end apart; and how often they are weighted again. */
+const FITTED = 11;
+const REWEIGHTINGS = 6;
 
 /**
- * The fewest translation keys found with which no point is further than `limit` m from the true motion at any time
- * compared, the rotation being played as `path` says; undefined where not even a key on every time of the grid does it.
- * Each key is where the node has to be, rounded to float32.
+ * Few translation keys, straight lines between them, with which no point is further than `limit` m from the true motion,
+ * the rotation being played as `path` says; undefined where not even a key on every time of the grid does it. The first and
+ * the last key are where the node has to be, rounded to float32; the others, with `offCurve`, beside that, chosen as the
+ * linear rotation keys are.
  *
  * The displacement of the worst point is at most |Δc| + 2·reach·sin(θ/2): Δc that of the played centre of mass, θ the
  * angle between played and true rotation. It is that much where Δc is square to the axis of θ.
  */
-export function translationKeys(
-  flight: SampledFlight,
+export function linearTranslationKeys(
+  motion: SampledMotion,
   path: NodePath,
   limit: number,
+  offCurve: boolean,
 ): TranslationKeys | undefined {
-  const { time, last } = flight;
-  const { count, times, wanted } = path;
-  // The segment in hand: its key, its whole way, its time and speed, and the first time compared in it.
+  const { time, last } = motion;
+  const { times, wanted } = path;
   const from = new Float64Array(4);
-  const to = new Float64Array(4);
-  const way = new Float64Array(3);
-  let fromIndex = -1;
-  let start = 0;
-  let rate = 0;
-  let begin = 0;
+  const target = new Float64Array(4);
+  const to = new Float64Array(3);
+  const good = new Float64Array(3);
+  const chosen = new Int32Array(FITTED);
+  const residuals = new Float64Array(3 * (FITTED + 1));
+  const shares = new Float64Array(FITTED + 1);
+  const radii = new Float64Array(FITTED + 1);
+  const weights = new Float64Array(FITTED + 1);
+  const values: number[] = [];
+  let error = 0;
+  let worst = 0;
+  let goodWorst = 0;
 
-  /** Takes the segment from grid index `a` to `b` in hand; returns the displacement at `b`. */
-  const enter = (a: number, b: number): number => {
-    if (a !== fromIndex) {
-      path.wantedInto(a, from);
-      for (let i = 0; i < 3; i++) from[i] = Math.fround(from[i]);
-      fromIndex = a;
-      start = time(a);
-      if (a === 0) begin = 0;
-      while (times[begin] < start) begin++;
+  /** Moves `to` from the target to where the segment's greatest error, as a part of what is allowed, is least. */
+  const fitEnd = (start: number, duration: number, low: number, high: number): void => {
+    const count = spreadSamples(low, high, FITTED, chosen);
+    for (let n = 0; n < count; n++) {
+      const k = chosen[n];
+      const share = (times[k] - start) / duration;
+      for (let i = 0; i < 3; i++)
+        residuals[3 * n + i] = from[i] + share * (target[i] - from[i]) - wanted[4 * k + i];
+      shares[n] = share;
+      radii[n] = Math.max(1e-9, limit - wanted[4 * k + 3]);
+      weights[n] = 1;
     }
-    path.wantedInto(b, to);
-    let square = 0;
-    for (let i = 0; i < 3; i++) {
-      const stored = Math.fround(to[i]);
-      way[i] = stored - from[i];
-      square += (stored - to[i]) * (stored - to[i]);
+    residuals.fill(0, 3 * count, 3 * count + 3);
+    shares[count] = 1;
+    radii[count] = Math.max(1e-9, limit - target[3]);
+    weights[count] = 1;
+    let x = 0;
+    let y = 0;
+    let z = 0;
+    for (let round = 0; ; round++) {
+      let sum = 0;
+      x = y = z = 0;
+      for (let n = 0; n <= count; n++) {
+        const w = (weights[n] * shares[n]) / (radii[n] * radii[n]);
+        sum += w * shares[n];
+        x -= w * residuals[3 * n];
+        y -= w * residuals[3 * n + 1];
+        z -= w * residuals[3 * n + 2];
+      }
+      x /= sum;
+      y /= sum;
+      z /= sum;
+      if (round === REWEIGHTINGS) break;
+      let greatest = 0;
+      for (let n = 0; n <= count; n++) {
+        const dx = residuals[3 * n] + shares[n] * x;
+        const dy = residuals[3 * n + 1] + shares[n] * y;
+        const dz = residuals[3 * n + 2] + shares[n] * z;
+        weights[n] *= Math.sqrt(dx * dx + dy * dy + dz * dz) / radii[n];
+        greatest = Math.max(greatest, weights[n]);
+      }
+      if (!(greatest > 0)) break;
+      for (let n = 0; n <= count; n++) weights[n] /= greatest;
     }
-    rate = 1 / (time(b) - start);
-    return Math.sqrt(square) + to[3];
-  };
-
-  const displacement = (k: number): number => {
-    const share = (times[k] - start) * rate;
-    const x = from[0] + share * way[0] - wanted[4 * k];
-    const y = from[1] + share * way[1] - wanted[4 * k + 1];
-    const z = from[2] + share * way[2] - wanted[4 * k + 2];
-    return Math.sqrt(x * x + y * y + z * z) + wanted[4 * k + 3];
+    to[0] = target[0] + x;
+    to[1] = target[1] + y;
+    to[2] = target[2] + z;
   };
 
   const fits = (a: number, b: number): boolean => {
-    if (enter(a, b) > limit) return false;
-    const end = time(b);
+    const start = time(a);
+    const duration = time(b) - start;
+    const low = firstAfter(path, start);
+    const high = lastBefore(path, time(b));
+    path.wantedInto(b, target);
+    to.set(target.subarray(0, 3));
+    if (offCurve && b < last && low <= high) fitEnd(start, duration, low, high);
+    let square = 0;
+    for (let i = 0; i < 3; i++) {
+      to[i] = Math.fround(to[i]);
+      square += (to[i] - target[i]) * (to[i] - target[i]);
+    }
+    worst = Math.sqrt(square) + target[3];
+    if (worst > limit) return false;
+    const displacement = (k: number): number => {
+      const share = (times[k] - start) / duration;
+      const x = from[0] + share * (to[0] - from[0]) - wanted[4 * k];
+      const y = from[1] + share * (to[1] - from[1]) - wanted[4 * k + 1];
+      const z = from[2] + share * (to[2] - from[2]) - wanted[4 * k + 2];
+      return Math.sqrt(x * x + y * y + z * z) + wanted[4 * k + 3];
+    };
     // Half the segments tried are too long; most of those show it about the middle.
-    const middle = Math.min(count - 1, begin + Math.floor((b - a) / (2 * STRIDE)));
-    if (times[middle] < end && displacement(middle) > limit) return false;
-    for (let k = begin; k < count && times[k] < end; k++) if (displacement(k) > limit) return false;
+    if (low <= high && displacement((low + high) >> 1) > limit) return false;
+    for (let k = low; k <= high; k++) {
+      worst = Math.max(worst, displacement(k));
+      if (worst > limit) return false;
+    }
+    good.set(to);
+    goodWorst = worst;
     return true;
   };
 
-  const indices = longestSegments(last, fits);
-  if (!indices) return undefined;
-
-  const values = new Float32Array(3 * indices.length);
-  let error = 0;
-  for (let key = 1; key < indices.length; key++) {
-    error = Math.max(error, enter(indices[key - 1], indices[key]));
-    const end = time(indices[key]);
-    for (let k = begin; k < count && times[k] <= end; k++) error = Math.max(error, displacement(k));
-    if (key === 1) values.set(from.subarray(0, 3));
-    values.set(to.subarray(0, 3), 3 * key);
+  path.wantedInto(0, from);
+  let square = 0;
+  for (let i = 0; i < 3; i++) {
+    const stored = Math.fround(from[i]);
+    square += (stored - from[i]) * (stored - from[i]);
+    from[i] = stored;
   }
-  return { indices, values, error };
+  error = Math.sqrt(square) + from[3];
+  if (error > limit) return undefined;
+  values.push(from[0], from[1], from[2]);
+  const indices = longestSegments(last, fits, () => {
+    from.set(good);
+    values.push(...good);
+    error = Math.max(error, goodWorst);
+  });
+  return indices && { indices, interpolation: "LINEAR", values: Float32Array.from(values), error };
 }

@@ -1,7 +1,7 @@
 /**
  * Cuts 0 … `last` into few segments: from each end on, the longest one that `fits`, found by gallop from the length of
- * the one before and then bisection. Returns the ends in order, 0 and `last` among them; undefined where a segment of a
- * single step does not fit.
+ * the one before and then bisection. `taken` is told of each segment once it is settled; it is then the last one that did
+ * fit. Returns the ends in order, 0 and `last` among them; undefined where a segment of a single step does not fit.
  *
  * Greedy is optimal where a part of a fitting segment always fits. With keys on the curve that is nearly so: on the
  * flights this was planned with, dynamic programming found as many keys.
@@ -9,6 +9,7 @@
 export function longestSegments(
   last: number,
   fits: (from: number, to: number) => boolean,
+  taken: (from: number, to: number) => void = () => undefined,
 ): number[] | undefined {
   const ends = [0];
   let length = 1;
@@ -30,6 +31,7 @@ export function longestSegments(
       else bad = middle;
     }
     if (good === from) return undefined;
+    taken(from, good);
     ends.push(good);
     length = good - from;
   }

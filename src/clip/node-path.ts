@@ -1,41 +1,36 @@
-import { cos, sin } from "../math/elementary.js";
-import { GreatCircle } from "./great-circle.js";
-import type { RotationKeys } from "./linear-rotation.js";
-import type { SampledFlight } from "./sampled-flight.js";
+import type { RotationKeys } from "./rotation-keys.js";
+import type { SampledMotion } from "./sampled-motion.js";
 
 /**
  * What the rotation keys leave to the translation: where the node (the model's origin) has to be for the *played* centre
  * of mass to lie on the true one, o = c − R̂·(centre of mass in the model), and how far the rotation alone moves points.
  */
 export interface NodePath {
-  /** How often the motion is compared: at the flight's samples and the rotation keys. */
+  /** How often the motion is compared: at its samples and the rotation keys. */
   count: number;
   /** s, ascending. */
   times: Float64Array;
-  /** 4 numbers each: the node's place, world frame, m; greatest displacement by the rotation, m. */
+  /** 4 numbers each: the node's place, world frame, m; greatest displacement by the rotation then or near by, m. */
   wanted: Float64Array;
   /** The same 4 numbers at any time of the grid. */
   wantedInto(index: number, out: Float64Array): void;
 }
 
 /** The node's path under `keys`. */
-export function nodePath(flight: SampledFlight, keys: RotationKeys): NodePath {
-  const { body, positions, rotations, time, samples, sampleIndex, last } = flight;
-  const { indices: keyIndices, played } = keys;
+export function nodePath(motion: SampledMotion, keys: RotationKeys): NodePath {
+  const { body, positions, rotations, time, samples, sampleIndex, last } = motion;
+  const { indices: keyIndices, surcharges } = keys;
   const [cx, cy, cz] = body.centerOfMass;
   const diameter = 2 * body.reach;
-  const circle = new GreatCircle();
   const pose = new Float64Array(7);
+  const q = new Float64Array(4);
   let segment = -1;
-  let start = 0;
-  let speed = 0;
+  let played: ReturnType<RotationKeys["played"]>;
 
   const enter = (key: number): void => {
     if (key === segment) return;
     segment = key;
-    start = time(keyIndices[key]);
-    circle.set(played, 4 * key, played, 4 * (key + 1));
-    speed = circle.angle / (time(keyIndices[key + 1]) - start);
+    played = keys.played(key);
   };
 
   const wantedAt = (
@@ -44,16 +39,15 @@ export function nodePath(flight: SampledFlight, keys: RotationKeys): NodePath {
     p: number,
     rotation: Float64Array,
     r: number,
+    surcharge: number,
     out: Float64Array,
     o: number,
   ): void => {
-    const { from, side } = circle;
-    const c = cos((t - start) * speed);
-    const s = sin((t - start) * speed);
-    const x = c * from[0] + s * side[0];
-    const y = c * from[1] + s * side[1];
-    const z = c * from[2] + s * side[2];
-    const w = c * from[3] + s * side[3];
+    played(t, q);
+    const x = q[0];
+    const y = q[1];
+    const z = q[2];
+    const w = q[3];
     const dx = x - rotation[r];
     const dy = y - rotation[r + 1];
     const dz = z - rotation[r + 2];
@@ -67,8 +61,12 @@ export function nodePath(flight: SampledFlight, keys: RotationKeys): NodePath {
     out[o + 1] = position[p + 1] - (cy + w * ty + z * tx - x * tz);
     out[o + 2] = position[p + 2] - (cz + w * tz + x * ty - y * tx);
     // 2·reach·sin(θ/2) from the chord 2·sin(θ/4).
-    out[o + 3] = diameter * Math.sqrt(chord * (1 - chord / 4));
+    out[o + 3] = diameter * Math.sqrt(chord * Math.max(0, 1 - chord / 4)) + surcharge;
   };
+
+  /** At a time that belongs to two segments, what either may add counts. */
+  const surchargeAt = (index: number, key: number): number =>
+    index === keyIndices[key] && key > 0 ? Math.max(surcharges[key - 1], surcharges[key]) : surcharges[key];
 
   const wantedInto = (index: number, out: Float64Array): void => {
     let low = 0;
@@ -78,8 +76,8 @@ export function nodePath(flight: SampledFlight, keys: RotationKeys): NodePath {
       else high = middle;
     }
     enter(low);
-    flight.poseInto(index, pose);
-    wantedAt(time(index), pose, 0, pose, 3, out, 0);
+    motion.poseInto(index, pose);
+    wantedAt(time(index), pose, 0, pose, 3, surchargeAt(index, low), out, 0);
   };
 
   const times = new Float64Array(samples + keyIndices.length);
@@ -97,7 +95,7 @@ export function nodePath(flight: SampledFlight, keys: RotationKeys): NodePath {
     enter(key);
     for (; sampleIndex(sample) < keyIndices[key + 1]; sample++) {
       const i = sampleIndex(sample);
-      wantedAt(time(i), positions, 3 * sample, rotations, 4 * sample, wanted, 4 * count);
+      wantedAt(time(i), positions, 3 * sample, rotations, 4 * sample, surcharges[key], wanted, 4 * count);
       times[count++] = time(i);
     }
   }

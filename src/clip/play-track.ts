@@ -1,36 +1,60 @@
 import { acos, sin } from "../math/elementary.js";
 import { dotQuat, normalize, type Quat } from "../math/quat.js";
 import type { Vec3 } from "../math/vec3.js";
+import { hermiteWeights } from "./hermite.js";
 import type { Channel, Track } from "./track.js";
 
-/** Where a player puts the node. */
+/** What a player shows of a track's two channels. */
 export interface PlayedPose {
-  /** World frame, m. */
+  /** World frame, m; zero of a track that has no translation. */
   translation: Vec3;
   /** Unit quaternion. */
   rotation: Quat;
 }
 
 /**
- * The pose of the animated node at time `t` in s, as a player of the file shows it: glTF 2.0 specification, Appendix C
- * (Interpolation Modes), linear for the translation, spherical linear for the rotation; before the first and after the
- * last key it stands still.
+ * The values of both channels at time `t` in s, as a player of the file has them: glTF 2.0 specification, Appendix C
+ * (Interpolation Modes); before the first and after the last key they stand still.
  */
 export function playTrack(track: Track, t: number): PlayedPose {
-  return { translation: playTranslation(track.translation, t), rotation: playRotation(track.rotation, t) };
+  const { translation, rotation } = track;
+  return {
+    translation:
+      translation.times.length > 0 ? (components(translation, 3, t) as unknown as Vec3) : [0, 0, 0],
+    rotation:
+      rotation.interpolation === "LINEAR"
+        ? slerpRotation(rotation, t)
+        : normalize(components(rotation, 4, t) as unknown as Quat),
+  };
 }
 
-function playTranslation(channel: Channel, t: number): Vec3 {
-  const { values } = channel;
-  const { key, next, share } = locate(channel.times, t);
-  const component = (i: number) => values[3 * key + i] * (1 - share) + values[3 * next + i] * share;
-  return [component(0), component(1), component(2)];
+/** Each component for itself. */
+function components(channel: Channel, size: number, t: number): number[] {
+  const { times, values, interpolation } = channel;
+  const { key, next, share } = locate(times, t);
+  if (interpolation === "LINEAR")
+    return Array.from(
+      { length: size },
+      (_, i) => values[size * key + i] * (1 - share) + values[size * next + i] * share,
+    );
+  const weights = new Float64Array(4);
+  hermiteWeights(share, weights);
+  const duration = times[next] - times[key];
+  const at = (k: number, part: number, i: number) => values[size * (3 * k + part) + i];
+  return Array.from(
+    { length: size },
+    (_, i) =>
+      weights[0] * at(key, 1, i) +
+      weights[1] * duration * at(key, 2, i) +
+      weights[2] * at(next, 1, i) +
+      weights[3] * duration * at(next, 0, i),
+  );
 }
 
-function playRotation(channel: Channel, t: number): Quat {
+function slerpRotation(channel: Channel, t: number): Quat {
   const { key, next, share } = locate(channel.times, t);
-  const a = rotationAt(channel.values, key);
-  const b = rotationAt(channel.values, next);
+  const a = rotationAt(channel, key);
+  const b = rotationAt(channel, next);
   const d = dotQuat(a, b);
   const angle = acos(Math.min(1, Math.abs(d)));
   // Close to no step the two sines lose their digits and, as the appendix says, slerp turns into lerp (to angle³/30).
@@ -42,8 +66,8 @@ function playRotation(channel: Channel, t: number): Quat {
   return normalize([component(0), component(1), component(2), component(3)]);
 }
 
-/** A stored rotation; float32 leaves it up to 1e-7 off unit length. */
-function rotationAt(values: Float32Array, key: number): Quat {
+/** A stored rotation; numbers of a file leave it a little off unit length, int16 ones 32767 times as long. */
+function rotationAt({ values }: Channel, key: number): Quat {
   const i = 4 * key;
   return normalize([values[i], values[i + 1], values[i + 2], values[i + 3]]);
 }

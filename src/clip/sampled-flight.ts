@@ -1,35 +1,39 @@
 import type { Flight } from "../flight/flight.js";
 import { conjugate, type Quat } from "../math/quat.js";
 import type { Body } from "./body.js";
-import { STRIDE, type TimeGrid, timeGrid } from "./time-grid.js";
+import type { SampledMotion } from "./sampled-motion.js";
+import { STRIDE, timeGrid } from "./time-grid.js";
 
-/** A flight looked at on its time grid: every `STRIDE`-th pose is kept, those between are worked out when asked for. */
-export interface SampledFlight extends TimeGrid {
-  body: Body;
-  /** Of the grid, s. */
-  time(index: number): number;
-  /** Number of samples. */
-  samples: number;
-  /** Grid index of a sample. */
-  sampleIndex(sample: number): number;
-  /** Centre of mass at each sample, 3 numbers each, world frame, m. */
-  positions: Float64Array;
-  /** Turns the model from as modelled; 4 numbers a sample, unit, continuous in sign. */
-  rotations: Float64Array;
-  /** The same two at any time of the grid, 3 + 4 numbers. */
-  poseInto(index: number, out: Float64Array): void;
+/** A flight on its time grid: the samples' poses are kept, those between are worked out when asked for. */
+export interface SampledFlight extends SampledMotion {
+  /** From one time of the grid to the next, s. */
+  step: number;
 }
 
 /** Samples `flight` on the grid for `toleranceMetres`. Throws a RangeError for a flight that lasts no time. */
 export function sampleFlight(flight: Flight, body: Body, toleranceMetres: number): SampledFlight {
-  const { duration } = flight;
   const grid = timeGrid(flight, body, toleranceMetres);
-  const { step, last } = grid;
+  const time = (index: number) => index * grid.step;
+  return { ...grid, ...sampleOn(flight, body, { ...grid, stride: STRIDE, time }) };
+}
+
+/**
+ * Samples `flight` on times of any kind; the last is always the duration rounded to float32 and stands for the flight's own end.
+ *
+ * @param grid `time` is not asked for the last; the prop turns by a radian at most from sample to sample
+ */
+export function sampleOn(
+  flight: Flight,
+  body: Body,
+  grid: Pick<SampledMotion, "last" | "stride" | "time" | "interval" | "surcharge">,
+): SampledMotion {
+  const { duration } = flight;
+  const { last, stride, interval, surcharge } = grid;
   const end = Math.fround(duration);
-  const time = (index: number) => (index < last ? index * step : end);
-  const trueTime = (index: number) => (index < last ? index * step : duration);
-  const samples = Math.ceil(last / STRIDE) + 1;
-  const sampleIndex = (sample: number) => Math.min(sample * STRIDE, last);
+  const time = (index: number) => (index < last ? grid.time(index) : end);
+  const trueTime = (index: number) => (index < last ? grid.time(index) : duration);
+  const samples = Math.ceil(last / stride) + 1;
+  const sampleIndex = (sample: number) => Math.min(sample * stride, last);
 
   const positions = new Float64Array(3 * samples);
   const rotations = new Float64Array(4 * samples);
@@ -49,11 +53,24 @@ export function sampleFlight(flight: Flight, body: Body, toleranceMetres: number
     out[0] = c[0];
     out[1] = c[1];
     out[2] = c[2];
-    const nearest = Math.min(samples - 1, Math.round(index / STRIDE));
+    const nearest = Math.min(samples - 1, Math.round(index / stride));
     rotationInto(flight, fromModel, t, out, 3, 4 * nearest, rotations);
   };
 
-  return { ...grid, body, time, samples, sampleIndex, positions, rotations, poseInto };
+  return {
+    body,
+    flying: true,
+    last,
+    stride,
+    interval,
+    surcharge,
+    time,
+    samples,
+    sampleIndex,
+    positions,
+    rotations,
+    poseInto,
+  };
 }
 
 /** Rotation of the model at time `t`, on the side of the hypersphere of the quaternion in `near` at `nearOffset`. */

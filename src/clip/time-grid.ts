@@ -1,6 +1,7 @@
 import type { Flight } from "../flight/flight.js";
 import { length } from "../math/vec3.js";
 import type { Body } from "./body.js";
+import { bendSurcharge } from "./sampled-motion.js";
 
 /**
  * Times k·`step`, a power of two, which float32 holds exactly; the last is the duration rounded to float32 and stands
@@ -11,7 +12,9 @@ export interface TimeGrid {
   step: number;
   /** Index of the last time. */
   last: number;
-  /** How much further any point can be from the true motion between times where it was compared than at those, m. */
+  /** Longest time between neighbours of the times compared, s. */
+  interval: number;
+  /** How much the true motion's bend can add between times compared, and the rounding of its end, m. */
   surcharge: number;
 }
 
@@ -23,30 +26,21 @@ const SURCHARGE_SHARE = 0.02;
 const MOST_SAMPLES = 1 << 20;
 /** Radians the prop may turn from one sample to the next, so that the quaternion's sign can be followed. */
 const LARGEST_TURN = 1;
-/** Radians by which rounding both ends to float32 can lengthen a step of the rotation. */
-const ROUNDED_TURN = 5e-7;
 
 /**
- * A grid so fine that the surcharge is about 2 % of `toleranceMetres` or less, unless that takes over 2²⁰ samples. Throws
- * a RangeError for a flight that lasts no time.
- *
- * The surcharge: a twice differentiable vector function is no further from its chord than M·h²/8 on an interval of length h,
- * M a bound of its second derivative (linear interpolation's error, e.g. Davis, Interpolation and Approximation, 1963,
- * §3.1), and a chord is no longer anywhere than at its longer end. Here the function is the displacement of any one
- * point of the prop: M = |g| + r(|ω|² + |dω/dt|) from the true motion (r the reach) and R·ω² from slerp, R the furthest
- * point's distance from the model's origin. The translation's lerp adds nothing.
+ * A grid so fine that its surcharge and that of slerp along the true rotation (M = R·ω², R the furthest point's distance from
+ * the model's origin; the translation's lerp adds nothing) are about 2 % of `toleranceMetres` or less, unless that takes
+ * over 2²⁰ samples. Throws a RangeError for a flight that lasts no time.
  */
 export function timeGrid(flight: Flight, body: Body, toleranceMetres: number): TimeGrid {
-  const { duration, launch, greatestRate } = flight;
+  const { duration, greatestRate } = flight;
   const end = Math.fround(duration);
   if (end === 0) throw new RangeError(`a flight of ${duration} s cannot be a clip: it must last some time`);
-  const fromOrigin = body.reach + length(body.centerOfMass);
-  const trueBend =
-    length(launch.gravity) + body.reach * (greatestRate * greatestRate + flight.greatestAngularAcceleration);
-  const playedBend = fromOrigin * greatestRate * greatestRate;
+  const bend = trueBend(flight, body);
+  const playedBend = fromOrigin(body) * greatestRate * greatestRate;
 
   const widest = Math.min(
-    Math.sqrt((8 * SURCHARGE_SHARE * toleranceMetres) / (trueBend + playedBend)),
+    Math.sqrt((8 * SURCHARGE_SHARE * toleranceMetres) / (bend + playedBend)),
     LARGEST_TURN / greatestRate,
     end / 4,
   );
@@ -54,14 +48,20 @@ export function timeGrid(flight: Flight, body: Body, toleranceMetres: number): T
 
   // In the last interval the true motion is stretched from the flight's own end to the float32 one …
   const stretch = 1 + Math.abs(end - duration) / (step / 2);
-  const roundedRate = greatestRate + ROUNDED_TURN / (step / 2);
-  const bend = trueBend * stretch * stretch + fromOrigin * roundedRate * roundedRate;
   const interval = (STRIDE + 0.5) * step;
-  // … which moves no point by more than `endShift`.
-  const surcharge = (bend * interval * interval) / 8 + endShift(flight, body);
+  const surcharge = bendSurcharge(bend * stretch * stretch, interval) + endShift(flight, body);
   // The last step is half a step to one and a half.
-  return { step, last: Math.round(end / step), surcharge };
+  return { step, last: Math.round(end / step), interval, surcharge };
 }
+
+/** m/s²: never exceeded by the acceleration of any point of the prop, |g| + r(|ω|² + |dω/dt|), r the reach. */
+export const trueBend = (
+  { launch, greatestRate, greatestAngularAcceleration }: Flight,
+  { reach }: Body,
+): number => length(launch.gravity) + reach * (greatestRate * greatestRate + greatestAngularAcceleration);
+
+/** m: distance of the furthest point from the model's origin, at most. */
+export const fromOrigin = (body: Body): number => body.reach + length(body.centerOfMass);
 
 /** m: how far any point can get in the time by which the flight's duration differs from its float32 value. */
 export function endShift(flight: Flight, body: Body): number {

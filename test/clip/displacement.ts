@@ -31,3 +31,19 @@ export function worstDisplacement(track: Track, flight: Flight, body: Body, t: n
   }
   return worst;
 }
+
+/** A fixed row of numbers spread over 0 to 1: the golden ratio's multiples. */
+const spread = (n: number, salt: number): number =>
+  ((n + 1) * 0.6180339887498949 + salt * 0.7548776662466927) % 1;
+const someDirection = (n: number): Vec3 =>
+  normalize([spread(n, 1) - 0.5, spread(n * 3, 2) - 0.5, spread(n * 7, 3) - 0.5]);
+
+/** The same at `times` times all over the track. */
+export function worstOf(track: Track, flight: Flight, body: Body, times: number): number {
+  let worst = 0;
+  for (let n = 0; n < times; n++) {
+    const t = spread(n, 0) * track.duration;
+    worst = Math.max(worst, worstDisplacement(track, flight, body, t, someDirection(n)));
+  }
+  return worst;
+}

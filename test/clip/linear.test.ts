@@ -15,8 +15,9 @@ import {
   rotate,
 } from "../../src/math/quat.js";
 import { RequestError } from "../../src/math/request-error.js";
-import { normalize as direction, distance, subtract, type Vec3 } from "../../src/math/vec3.js";
-import { worstDisplacement } from "./displacement.js";
+import { distance, subtract } from "../../src/math/vec3.js";
+import { anyThrow } from "./any-throw.js";
+import { worstDisplacement, worstOf } from "./displacement.js";
 import { plannedFlights, thrown } from "./flights.js";
 
 const centered: Body = { centerOfMass: [0, 0, 0], axes: [0, 0, 0, 1], reach: 0.15 };
@@ -25,62 +26,6 @@ const offCenter: Body = {
   axes: normalize([0.3, -0.2, 0.5, 0.7]),
   reach: 0.15,
 };
-
-const component = fc.integer({ min: -1_000_000, max: 1_000_000 }).map((n) => n / 1_000_000);
-const vector = fc.tuple(component, component, component);
-const quaternion = fc
-  .tuple(component, component, component, component)
-  .filter((q) => Math.hypot(...q) > 0.1)
-  .map((q): Quat => normalize(q));
-
-/** Bodies and throws of all sorts, and a tolerance from 0.1 to 50 mm. */
-const anyThrow = fc
-  .record({
-    logTolerance: fc.double({ min: Math.log(0.0001), max: Math.log(0.05), noNaN: true }),
-    reach: fc.double({ min: 0.02, max: 1.5, noNaN: true }),
-    center: vector,
-    far: fc.constantFrom(0, 0, 1, 30),
-    axes: quaternion,
-    orientation: quaternion,
-    spin: vector,
-    rate: fc.constantFrom(0, 3, 12, 40),
-    velocity: vector,
-    gravity: fc.constantFrom(0, 3, 9.80665),
-    logMoments: vector,
-    duration: fc.double({ min: 0.05, max: 3, noNaN: true }),
-  })
-  .map((x) => {
-    const body: Body = { centerOfMass: scaled(x.center, x.reach), axes: x.axes, reach: x.reach };
-    const m = x.logMoments.map(Math.exp);
-    const flight = thrown({
-      centerOfMass: scaled([0.3, 1, -0.5], x.far),
-      velocity: scaled(x.velocity, 8),
-      gravity: [0, -x.gravity, 0],
-      orientation: x.orientation,
-      spin: scaled(x.spin, x.rate),
-      // Any body: each moment less than the other two together.
-      moments: [m[1] + m[2], m[2] + m[0], m[0] + m[1]],
-      duration: x.duration,
-    });
-    return { body, flight, tolerance: Math.exp(x.logTolerance) };
-  });
-
-const scaled = (v: Vec3, s: number): Vec3 => [v[0] * s, v[1] * s, v[2] * s];
-
-/** A fixed row of numbers spread over 0 to 1: the golden ratio's multiples. */
-const spread = (n: number, salt: number): number =>
-  ((n + 1) * 0.6180339887498949 + salt * 0.7548776662466927) % 1;
-const someDirection = (n: number): Vec3 =>
-  direction([spread(n, 1) - 0.5, spread(n * 3, 2) - 0.5, spread(n * 7, 3) - 0.5]);
-
-function worstOf(track: Track, flight: Flight, body: Body, times: number): number {
-  let worst = 0;
-  for (let n = 0; n < times; n++) {
-    const t = spread(n, 0) * track.duration;
-    worst = Math.max(worst, worstDisplacement(track, flight, body, t, someDirection(n)));
-  }
-  return worst;
-}
 
 describe("the proved error", () => {
   it("is never exceeded by a point of the prop, nor above the tolerance, whatever is thrown", () => {
@@ -213,8 +158,8 @@ describe("the keys", () => {
     const tolerance = 0.001;
     const flight = thrown({ duration: 1.2 });
     const track = linearTrack(flight, centered, tolerance);
-    // The chord error of a parabola, g·h²/8 = tolerance: h = 28.6 ms.
-    const fewest = Math.ceil(1.2 / Math.sqrt((8 * tolerance) / 9.80665)) + 1;
+    // The chord error of a parabola, g·h²/8: a chord between keys one tolerance outside may sag by two.
+    const fewest = Math.ceil(1.2 / Math.sqrt((16 * tolerance) / 9.80665)) + 1;
     expect(track.translation.times.length).toBeGreaterThanOrEqual(fewest);
     expect(track.translation.times.length).toBeLessThanOrEqual(fewest * 1.05);
     expect(track.rotation.times).toHaveLength(2);
@@ -233,8 +178,8 @@ describe("the keys", () => {
     const body: Body = { centerOfMass: [0.3, 0, 0], axes: [0, 0, 0, 1], reach: 0.3 };
     const tolerance = 0.003;
     const track = linearTrack(flight, body, tolerance);
-    // Chords of a circle of 0.3 m whose sagitta r(1 − cos(θ/2)) is the tolerance.
-    const chord = 2 * Math.acos(1 - tolerance / 0.3);
+    // Chords from circle to circle one tolerance outside 0.3 m, that touch the one a tolerance inside.
+    const chord = 2 * Math.acos((0.3 - tolerance) / (0.3 + tolerance));
     const fewest = Math.ceil(20 / chord) + 1;
     expect(track.translation.times.length).toBeGreaterThanOrEqual(fewest);
     expect(track.translation.times.length).toBeLessThanOrEqual(fewest * 1.05);

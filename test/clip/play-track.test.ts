@@ -37,13 +37,17 @@ describe("a track is played", () => {
   const half = Math.SQRT1_2;
   const quarterTurn = (sign: number): Track => ({
     duration: 2,
-    translation: { times: Float32Array.of(0, 2), values: Float32Array.of(0, 1, 2, 4, 1, 0) },
+    translation: {
+      interpolation: "LINEAR",
+      times: Float32Array.of(0, 2),
+      values: Float32Array.of(0, 1, 2, 4, 1, 0),
+    },
     rotation: {
+      interpolation: "LINEAR",
       times: Float32Array.of(0, 2),
       values: Float32Array.of(0, 0, 0, 1, 0, sign * half, 0, sign * half),
     },
     error: 0,
-    interpolation: "LINEAR",
   });
 
   it("straight between two translations, at an even rate between two rotations", () => {
