@@ -1,9 +1,7 @@
 import { type Accessor, type GLTF, Logger, WebIO } from "@gltf-transform/core";
+import { greatestElements } from "./budget.js";
 import { unpackViews } from "./meshopt.js";
 import { type GltfJson, type Model, ModelError } from "./model.js";
-
-/** Elements read at most: many accessors may stand on the same bytes, so the file's size alone is no bound. */
-const GREATEST_TOTAL = 20_000_000;
 
 /**
  * Content of the accessors with the given indices, decoded by glTF-Transform (strides, sparse values, normalised
@@ -16,11 +14,12 @@ export async function decodeAccessors(
   const { accessors = [], bufferViews = [] } = model.json;
   const wanted = [...new Set(indices)];
   const total = wanted.reduce((sum, index) => sum + accessors[index].count, 0);
-  if (total > GREATEST_TOTAL)
+  const greatest = greatestElements(model);
+  if (total > greatest)
     throw new ModelError(
       model.name,
       `its meshes state ${total} vertices and indices`,
-      `at most ${GREATEST_TOTAL} are read`,
+      `of a file of this size at most ${greatest} are read`,
     );
   const unpacked = await unpackViews(
     model,

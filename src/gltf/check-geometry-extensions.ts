@@ -106,10 +106,7 @@ export function checkNodeExtensions(
   check: Checker,
 ): void {
   const lod = extension(node, LOD, where, check);
-  if (lod)
-    check.array(lod.ids, `${where}.extensions.${LOD}.ids`).forEach((id, i) => {
-      check.index(id, `${where}.extensions.${LOD}.ids[${i}]`, nodeCount, "nodes");
-    });
+  if (lod) check.indices(lod.ids, `${where}.extensions.${LOD}.ids`, nodeCount, "nodes");
   const visible = extension(node, VISIBILITY, where, check)?.visible;
   if (visible !== undefined && typeof visible !== "boolean")
     check.refuse(

@@ -107,11 +107,8 @@ function checkDepth(nodes: JsonObject[], parents: Int32Array, check: Checker): v
 /** A list of different node indices; empty where it is missing. */
 function indices(value: unknown, where: string, count: number, check: Checker): number[] {
   if (value === undefined) return [];
-  const list = check.array(value, where);
-  list.forEach((entry, i) => {
-    check.index(entry, `${where}[${i}]`, count, "nodes");
-  });
+  const list = check.indices(value, where, count, "nodes");
   if (new Set(list).size !== list.length)
     check.refuse(`${where} names a node twice`, "each may stand there once");
-  return list as number[];
+  return list;
 }

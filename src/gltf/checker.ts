@@ -55,6 +55,17 @@ export class Checker {
       );
   }
 
+  /** A list of indices. */
+  indices(value: unknown, where: string, count: number, what: string): number[] {
+    const list = this.array(value, where);
+    list.forEach((entry, i) => {
+      // Lists may be long, and a place is only named where something is wrong.
+      if (!Number.isSafeInteger(entry) || (entry as number) < 0 || (entry as number) >= count)
+        this.index(entry, `${where}[${i}]`, count, what);
+    });
+    return list as number[];
+  }
+
   /** `length` finite numbers, or any number of them. */
   numbers(value: unknown, where: string, length?: number): number[] {
     const list = this.array(value, where);

@@ -1,5 +1,6 @@
 import { Accessor, ComponentTypeToTypedArray, Document, type GLTF } from "@gltf-transform/core";
 import { COMPONENT_BYTES } from "./accessor-layout.js";
+import { greatestElements } from "./budget.js";
 import type { DracoDecoder, DracoMesh, DracoModule } from "./decoders.js";
 import { type Model, ModelError } from "./model.js";
 
@@ -18,9 +19,6 @@ export interface Unpacked {
   /** Those that the compressed data hold, by the index that the primitive gives them. */
   accessors: ReadonlyMap<number, Accessor>;
 }
-
-/** Vertices and corners that all compressed primitives of a model may have. */
-const GREATEST_TOTAL = 20_000_000;
 
 /** The attributes that say where a triangle lies. */
 const PLACING = /^(POSITION|JOINTS_\d+|WEIGHTS_\d+)$/;
@@ -47,7 +45,7 @@ export async function unpackPrimitives(
     );
   const draco = await model.decoders.draco();
   const decoder = new draco.Decoder();
-  let left = GREATEST_TOTAL;
+  let left = greatestElements(model);
   for (const [primitive, where] of compressed) {
     const mesh = new draco.Mesh();
     try {

@@ -1,6 +1,7 @@
 import type { GLTF } from "@gltf-transform/core";
+import { GREATEST_COPIES, tooMuch } from "./budget.js";
 import { INSTANCING, instanceCount } from "./instancing.js";
-import { type GltfJson, type Model, ModelError } from "./model.js";
+import type { GltfJson, Model } from "./model.js";
 import { hasTriangles } from "./triangles.js";
 
 /** A primitive with triangles that a node shows, once or as often as the node has instances. */
@@ -13,15 +14,6 @@ export interface Piece {
   weights: number[];
   copies: number;
 }
-
-const GREATEST_COPIES = 100_000;
-
-export const tooMuch = ({ name }: Model): ModelError =>
-  new ModelError(
-    name,
-    "its scene shows too much",
-    `at most 5 million triangles in ${GREATEST_COPIES} pieces are read: use a simpler model`,
-  );
 
 /** The pieces that the nodes show; counted as it goes, for a few bytes can name billions. */
 export function listPieces(model: Model, nodes: Iterable<number>, warnings: Set<string>): Piece[] {

@@ -1,9 +1,10 @@
 import type { Accessor, GLTF } from "@gltf-transform/core";
 import { decodeAccessors } from "./accessors.js";
+import { greatestElements, tooMuch } from "./budget.js";
 import { isDraco, unpackPrimitives } from "./draco.js";
 import { instanceAccessors } from "./instancing.js";
 import { type Model, ModelError } from "./model.js";
-import { type Piece, tooMuch } from "./pieces.js";
+import type { Piece } from "./pieces.js";
 import { skinAccessors } from "./skin.js";
 import { triangleList } from "./triangles.js";
 
@@ -26,9 +27,6 @@ export interface Primitives {
   /** Throws ModelError for numbers beyond the vertices. */
   triangles(primitive: GLTF.IMeshPrimitive): Triangles;
 }
-
-/** Corners of triangles over all copies and morph targets: a mesh may be shown by any number of nodes. */
-const GREATEST_CORNERS = 15_000_000;
 
 /** Reads all that says where the triangles of the pieces lie. */
 export async function readPrimitives(model: Model, pieces: readonly Piece[]): Promise<Primitives> {
@@ -75,14 +73,16 @@ export async function readPrimitives(model: Model, pieces: readonly Piece[]): Pr
     },
   };
 
+  /** Corners of triangles over all copies and morph targets. */
   function checkAmount(): void {
+    const greatest = greatestElements(model);
     let corners = 0;
     for (const { primitive, copies } of pieces) {
       const { mode = 4, indices, attributes, targets = [] } = primitive;
       const { count } = json.accessors![indices ?? attributes.POSITION];
       const each = unpacked.get(primitive)?.indices.length ?? (mode === 4 ? count : 3 * count);
       corners += copies * each * (1 + targets.length);
-      if (corners > GREATEST_CORNERS) throw tooMuch(model);
+      if (corners > greatest) throw tooMuch(model);
     }
   }
 

@@ -19,10 +19,10 @@ export function shownNodes(json: GltfJson, warnings: Set<string>, top?: number):
   for (const node of hidden)
     if ([...subtree(json, [node])].some((below) => nodes[below].mesh !== undefined))
       warnings.add(`the node "${nodes[node].name ?? node}" is hidden (${VISIBILITY}): left out`);
-  const lower = nodes.flatMap(
-    ({ extensions }) => (extensions?.[LOD] as { ids: number[] } | undefined)?.ids ?? [],
-  );
-  for (const node of subtree(json, [...hidden, ...lower])) frames.delete(node);
+  const leftOut = new Set(hidden);
+  for (const { extensions } of nodes)
+    for (const id of (extensions?.[LOD] as { ids: number[] } | undefined)?.ids ?? []) leftOut.add(id);
+  for (const node of subtree(json, leftOut)) frames.delete(node);
   return frames;
 }
 

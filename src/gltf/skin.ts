@@ -1,5 +1,5 @@
 import type { Accessor, GLTF } from "@gltf-transform/core";
-import { add as addMatrices, scale as scaleMatrix } from "../math/mat3.js";
+import { add as addMatrices, type Mat3, scale as scaleMatrix } from "../math/mat3.js";
 import { addScaled, scale, type Vec3 } from "../math/vec3.js";
 import type { GltfJson } from "./model.js";
 import type { Primitives } from "./primitives.js";
@@ -26,33 +26,35 @@ export function skinFrames(
 ): (node: number, primitive: GLTF.IMeshPrimitive) => ((vertex: number) => Frame) | undefined {
   if (!json.skins?.length) return () => undefined;
   const frames = sceneFrames(json, treeRoots(json));
-  const jointsOf = new Map<GLTF.ISkin, Frame[]>();
+  const jointsOf = new Map<GLTF.ISkin, Map<number, Frame>>();
   return (node, primitive) => {
     const skin = skinOf(json, node);
     const sets = influences(primitive).map((pair) => pair.map((index) => accessor(primitive, index)));
     if (!skin || sets.length === 0) return undefined;
-    let joints = jointsOf.get(skin);
-    if (!joints) {
-      const inverse = plain.get(skin.inverseBindMatrices ?? -1);
-      joints = skin.joints.map((joint, i) => {
-        const frame = frames.get(joint)!;
-        return inverse ? compose(frame, matrixFrame(inverse.getElement(i, []))) : frame;
-      });
-      jointsOf.set(skin, joints);
-    }
-    return (vertex) => blend(joints, sets, vertex);
+    const inverse = plain.get(skin.inverseBindMatrices ?? -1);
+    const joints = jointsOf.get(skin) ?? new Map<number, Frame>();
+    jointsOf.set(skin, joints);
+    const jointFrame = (number: number): Frame | undefined => {
+      const known = joints.get(number);
+      const frame = frames.get(skin.joints[number]);
+      if (known || !frame) return known;
+      const made = inverse ? compose(frame, matrixFrame(inverse.getElement(number, []))) : frame;
+      joints.set(number, made);
+      return made;
+    };
+    return (vertex) => blend(jointFrame, sets, vertex);
   };
 }
 
-function blend(joints: Frame[], sets: Accessor[][], vertex: number): Frame {
-  let linear = scaleMatrix(joints[0].linear, 0);
+function blend(jointFrame: (number: number) => Frame | undefined, sets: Accessor[][], vertex: number): Frame {
+  let linear = NOTHING;
   let origin: Vec3 = [0, 0, 0];
   let total = 0;
   for (const [numbers, weights] of sets) {
     const weight = weights.getElement(vertex, []);
     numbers.getElement(vertex, []).forEach((number, i) => {
-      const joint = joints[number];
-      if (!joint || !weight[i]) return;
+      const joint = weight[i] ? jointFrame(number) : undefined;
+      if (!joint) return;
       total += weight[i];
       linear = addMatrices(linear, scaleMatrix(joint.linear, weight[i]));
       origin = addScaled(origin, joint.origin, weight[i]);
@@ -61,6 +63,12 @@ function blend(joints: Frame[], sets: Accessor[][], vertex: number): Frame {
   // Weights rounded to integers do not quite add up to 1.
   return { linear: scaleMatrix(linear, 1 / total), origin: scale(origin, 1 / total) };
 }
+
+const NOTHING: Mat3 = [
+  [0, 0, 0],
+  [0, 0, 0],
+  [0, 0, 0],
+];
 
 const skinOf = (json: GltfJson, node: number): GLTF.ISkin | undefined => {
   const { skin } = json.nodes![node];

@@ -53,7 +53,9 @@ async function readGuarded(path: string, shownAs: string): Promise<Uint8Array> {
     if (!status.isFile()) throw new ModelError(shownAs, "is not a file", "name a .glb or .gltf file");
     if (status.size > GREATEST_BYTES)
       throw new ModelError(shownAs, `has ${status.size} bytes`, "a model of less than 4 GB");
-    return new Uint8Array(await readFile(path));
+    const content = await readFile(path);
+    // The same memory: models are large.
+    return new Uint8Array(content.buffer, content.byteOffset, content.byteLength);
   } catch (error) {
     if (error instanceof ModelError) throw error;
     const code = (error as NodeJS.ErrnoException).code;

@@ -7,7 +7,7 @@ import type { Graft } from "../../src/gltf/graft.js";
 export const TETRAHEDRON = new Float32Array([0, 0, 0, 0.5, 0, 0, 0, 0.75, 0, 0, 0, 1]);
 export const FACES = new Uint16Array([0, 2, 1, 0, 1, 3, 0, 3, 2, 1, 2, 3]);
 
-export const bytesOf = (...arrays: (Float32Array | Uint16Array | Uint8Array)[]): Uint8Array => {
+export const bytesOf = (...arrays: (Float32Array | Uint32Array | Uint16Array | Uint8Array)[]): Uint8Array => {
   const parts = arrays.map((array) => new Uint8Array(array.buffer, array.byteOffset, array.byteLength));
   const all = new Uint8Array(parts.reduce((sum, part) => sum + part.length, 0));
   let at = 0;

@@ -303,6 +303,32 @@ describe("JSON that does not fit together", () => {
     expect(await complaint(bytes)).toContain("its scene shows too much");
   });
 
+  it("as many triangles as refused of a few bytes are read where the file really holds them", async () => {
+    const corners = 1_800_000;
+    const indices = Uint32Array.from({ length: corners }, (_, i) => [0, 2, 1, 0, 1, 3][i % 6]);
+    const file = (held: boolean) => {
+      let glb = new Uint8Array();
+      tetrahedron((json) => {
+        json.bufferViews[1].byteLength = 4 * corners;
+        json.accessors[1] = {
+          ...(held && { bufferView: 1 }),
+          componentType: 5125,
+          count: corners,
+          type: "SCALAR",
+        };
+        json.buffers[0].byteLength = 48 + 4 * corners;
+        if (!held) json.bufferViews.pop();
+        if (!held) json.buffers[0].byteLength = 72;
+        glb = new Uint8Array(glbOf(json, bytesOf(TETRAHEDRON, held ? indices : FACES)));
+      });
+      return glb;
+    };
+    expect(await complaint(file(true))).toBe("nothing");
+    expect(await complaint(file(false))).toContain(
+      "its scene shows too much; of a file of this size at most",
+    );
+  });
+
   it("appearance extensions, a zero scale and unknown optional extensions are no faults", async () => {
     const bytes = tetrahedron((json) => {
       json.nodes[0].scale = [1, 0, 1];
