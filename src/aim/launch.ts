@@ -49,13 +49,18 @@ export function solveLaunch(wish: LaunchWish, body: AimedBody): AimedLaunch {
   const centred = evaluate(wish, body, { travel: undefined, duration: undefined }, 0);
   const holdsPoint = isOff(wish.releaseOffset) || (wish.arc.to !== undefined && isOff(wish.arrivalOffset));
   if (!holdsPoint && !wish.usesTravel) return centred;
-  // with the time stated nothing goes round in a circle
-  if (wish.arc.after !== undefined && !wish.usesTravel)
-    return evaluate(wish, body, { travel: centred.arc.velocity, duration: wish.arc.after }, 1);
-  const unknowns = (arc: Arc) => (wish.usesTravel ? [arc.duration, ...arc.velocity] : [arc.duration]);
+  // with the time stated, or left open, nothing goes round in a circle
+  const isOpen = wish.arc.openEnd === true;
+  const stated = isOpen ? Number.POSITIVE_INFINITY : wish.arc.after;
+  if (stated !== undefined && !wish.usesTravel)
+    return evaluate(wish, body, { travel: centred.arc.velocity, duration: stated }, 1);
+  const unknowns = (arc: Arc) => [
+    ...(isOpen ? [] : [arc.duration]),
+    ...(wish.usesTravel ? arc.velocity : []),
+  ];
   const course = (x: readonly number[], arc: Arc) => ({
-    duration: x[0],
-    travel: wish.usesTravel ? ([x[1], x[2], x[3]] as const) : arc.velocity,
+    duration: isOpen ? Number.POSITIVE_INFINITY : x[0],
+    travel: wish.usesTravel ? (x.slice(-3) as unknown as Vec3) : arc.velocity,
   });
   const solution = holdsPoint
     ? continueToOne(

@@ -9,6 +9,7 @@ import { throwFileError } from "../throwfile/errors.js";
 import { type ThrowEntry, type ThrowFile, takeNumbers } from "../throwfile/types.js";
 import { oneNodeGraft } from "./graft.js";
 import { hostFrame } from "./host.js";
+import { UnheldLimits } from "./limits.js";
 import { type MotionState, motionState, turnTimes } from "./motion.js";
 import { type Nearest, nearestFinder } from "./nearest.js";
 import { nodeGraft } from "./node-graft.js";
@@ -37,7 +38,10 @@ export interface BakedThrow {
 export interface Bake {
   /** The props that were used, in the throw file's order. */
   props: Map<string, LoadedProp>;
+  /** Those of which there is a take. */
   throws: BakedThrow[];
+  /** Takes left out, as none of their candidates holds the throw's limits: the name of the clip that would have been, and why. */
+  unheld: { name: string; reason: UnheldLimits }[];
 }
 
 export interface BakeOptions {
@@ -60,12 +64,12 @@ export async function bake(file: ThrowFile, source: ModelSource, options: BakeOp
   const props = await loadProps(file, new Set(chosen.map(({ entry }) => entry.prop)), source);
   const total = chosen.reduce((sum, { numbers }) => sum + numbers.length, 0);
   let done = 0;
-  const throws = chosen.map(({ entry, numbers }) =>
-    bakeThrow(file, entry, numbers, props.get(entry.prop) as LoadedProp, () =>
-      options.onTake?.(++done, total),
-    ),
-  );
-  return { props, throws };
+  const unheld: Bake["unheld"] = [];
+  const throws = chosen.flatMap(({ entry, numbers }) => {
+    const onTake = () => options.onTake?.(++done, total);
+    return bakeThrow(file, entry, numbers, props.get(entry.prop) as LoadedProp, unheld, onTake) ?? [];
+  });
+  return { props, throws, unheld };
 }
 
 function selectThrows(file: ThrowFile, only?: readonly string[]): ThrowEntry[] {
@@ -103,15 +107,19 @@ function bakeThrow(
   entry: ThrowEntry,
   numbers: readonly number[],
   { prop, model }: LoadedProp,
+  unheld: Bake["unheld"],
   onTake: () => void,
-): BakedThrow {
+): BakedThrow | undefined {
   const nearest = nearestFinder(prop.reach);
   try {
-    const takes = numbers.map((number) => {
+    const takes = numbers.flatMap((number) => {
       const baked = bakeTake(file, entry, prop, number, nearest);
       onTake();
-      return baked;
+      if (!(baked instanceof UnheldLimits)) return [baked];
+      unheld.push({ name: clipName(entry, number), reason: baked });
+      return [];
     });
+    if (takes.length === 0) return undefined;
     const clips = takes.map((baked) => ({
       name: baked.name,
       track: baked.track,
@@ -133,13 +141,13 @@ function bakeTake(
   prop: Prop,
   number: number,
   nearest: ReturnType<typeof nearestFinder>,
-): BakedTake {
-  const take = solveTake(file, entry, prop, number);
+): BakedTake | UnheldLimits {
+  const take = attempt(() => solveTake(file, entry, prop, number));
+  if (take instanceof UnheldLimits) return take;
   const { flight } = take;
   const host = hostFrame(file.host).fromWorld;
   return {
-    // two digits, or as many as the number has
-    name: `${entry.name}_${String(number).padStart(2, "0")}`,
+    name: clipName(entry, number),
     take,
     track: cutTake(file, prop, take),
     release: motionState(flight, prop, 0, host),
@@ -147,6 +155,19 @@ function bakeTake(
     nearest: nearest(number, flight),
   };
 }
+
+function attempt(solve: () => Take): Take | UnheldLimits {
+  try {
+    return solve();
+  } catch (error) {
+    if (error instanceof UnheldLimits) return error;
+    throw error;
+  }
+}
+
+/** Two digits, or as many as the number has. */
+const clipName = (entry: ThrowEntry, number: number): string =>
+  `${entry.name}_${String(number).padStart(2, "0")}`;
 
 /** What an engine needs to take over from the clip, or to hang sounds on it. */
 const clipExtras = (entry: ThrowEntry, { take, release, arrival }: BakedTake) => ({

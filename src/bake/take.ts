@@ -7,13 +7,18 @@ import type { Track } from "../clip/track.js";
 import { candidateOrder } from "../draw/candidate-order.js";
 import { drawThrow } from "../draw/draw-throw.js";
 import type { DrawnThrow } from "../draw/drawn-throw.js";
+import type { FlyingBody } from "../flight/clearance.js";
 import { type Flight, fly } from "../flight/flight.js";
 import { RequestError } from "../math/request-error.js";
 import type { Prop } from "../prop/prop.js";
+import { propSupport, type Support } from "../prop/support.js";
 import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
-import { hostFrame } from "./host.js";
+import { type Conversion, hostFrame } from "./host.js";
+import { brokenLimits, UnheldLimits } from "./limits.js";
+import { modelRotation } from "./motion.js";
 import { cutInParentFrame } from "./parent-frame.js";
-import { launchWish, mayWobble } from "./wish.js";
+import { gapAtArrival, touchDown } from "./touch-down.js";
+import { launchWish, mayWobble, turningAxis } from "./wish.js";
 
 export interface Take {
   number: number;
@@ -23,31 +28,39 @@ export interface Take {
   wish: LaunchWish;
   aimed: AimedLaunch;
   flight: Flight;
+  /** Where a floor ends the flight: how far above it the prop then is, m. */
+  gap?: number;
 }
 
 /**
  * Solves a take; nothing of any other take is needed.
  *
- * @throws RequestError, path from the throw inwards, where no candidate has a flight: the first one's reason
+ * @throws RequestError, path from the throw inwards, where no candidate has a flight: the first one's reason; UnheldLimits where some have,
+ *   but none that holds the throw's limits
  */
 export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number: number): Take {
   const wobblesByDefault = mayWobble(entry, prop);
   const stream = { seed: file.seed, throwName: entry.name, take: number, wobblesByDefault };
   const host = hostFrame(file.host).toWorld;
+  const broken = new Map<string, number>();
   let first: RequestError | undefined;
+  let flightless = 0;
   let tried = 0;
   for (const candidate of candidateOrder(entry, stream)) {
+    tried++;
     const drawn = drawThrow(entry, { ...stream, candidate });
     try {
-      const wish = launchWish(drawn, prop, file.gravity, host);
-      const aimed = solveLaunch(wish, prop.principal);
-      return { number, candidate, drawn, wish, aimed, flight: fly(aimed.launch) };
+      const flown = flyDrawn(file, drawn, prop, host);
+      const faults = limitFaults(file, drawn, prop, flown, host);
+      if (faults.length === 0) return { number, candidate, drawn, ...flown };
+      for (const key of faults) broken.set(key, (broken.get(key) ?? 0) + 1);
     } catch (error) {
       if (!(error instanceof RequestError)) throw error;
       first ??= error;
-      tried++;
+      flightless++;
     }
   }
+  if (broken.size > 0) throw new UnheldLimits(number, tried, flightless, broken);
   const reason = first as RequestError;
   if (tried === 1) throw reason;
   throw new RequestError(
@@ -55,6 +68,45 @@ export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number
     `take ${number}: none of ${tried} draws has a flight; the first: ${reason.fault}`,
     reason.remedy,
   );
+}
+
+type Flown = Pick<Take, "wish" | "aimed" | "flight" | "gap">;
+
+/** The flight of a drawn throw: the arc, and then its end by a touch where it is open. */
+function flyDrawn(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversion): Flown {
+  const wish = launchWish(drawn, prop, file.gravity, host);
+  const open = solveLaunch(wish, prop.principal);
+  const { floor } = drawn.arrive;
+  if (floor === undefined) return { wish, aimed: open, flight: fly(open.launch) };
+  const body = bodyOf(file, drawn.prop, prop);
+  const aimed = touchDown(open, wish, body, floor, host);
+  const flight = fly(aimed.launch);
+  return { wish, aimed, flight, gap: gapAtArrival({ ...body, flight }, host.length(floor)) };
+}
+
+function limitFaults(
+  file: ThrowFile,
+  drawn: DrawnThrow,
+  prop: Prop,
+  { wish, aimed, flight }: Flown,
+  host: Conversion,
+): string[] {
+  if (!drawn.limits) return [];
+  const axis = () =>
+    turningAxis(drawn, prop, modelRotation(flight, prop, 0), {
+      ahead: wish.ahead,
+      travel: aimed.arc.velocity,
+    });
+  return brokenLimits(drawn.limits, { ...bodyOf(file, drawn.prop, prop), flight }, axis, host);
+}
+
+/** A mesh's points are put in order once. */
+const supports = new WeakMap<Prop, Support>();
+
+function bodyOf(file: ThrowFile, name: string, prop: Prop): Omit<FlyingBody, "flight"> {
+  const support = supports.get(prop) ?? propSupport(prop, file.props.get(name)?.shape);
+  supports.set(prop, support);
+  return { support, axes: prop.principal.axes, reach: prop.reach };
 }
 
 /**

@@ -44,6 +44,7 @@ export function launchWish(drawn: DrawnThrow, prop: Prop, gravity: number, host:
           ? { free: UP }
           : [0, drawn.gravity === undefined ? -strength : -host.length(strength), 0],
       after: arrive.after,
+      openEnd: arrive.floor !== undefined,
       apex: arc.apex === undefined ? undefined : host.length(arc.apex),
       through: arc.through && host.vector(arc.through),
       speed: arc.speed === undefined ? undefined : host.length(arc.speed),
@@ -110,13 +111,10 @@ function spinOf(drawn: DrawnThrow, prop: Prop, host: Conversion): LaunchWish["sp
   // without an arrival pose to be met, a checked throw file states the axis, and turns or rate
   if (!spin) return () => ZERO;
   return (pose, duration, course) => {
-    const axis = rotateBack(
-      axes,
-      within(["spin", "axis"], () => spinAxis(spin.axis as string | Vec3, prop, pose, course)),
-    );
+    const axis = turningAxis(drawn, prop, pose, course);
     return spinAtRelease(
       {
-        axis: normalizeVector(axis),
+        axis,
         turnsPerSecond: spin.rate ?? (spin.turns as number) / duration,
         wobble: spin.wobble ?? defaultWobble(axis, moments),
         phase: spin.phase,
@@ -124,6 +122,17 @@ function spinOf(drawn: DrawnThrow, prop: Prop, host: Conversion): LaunchWish["sp
       moments,
     );
   };
+}
+
+/**
+ * The unit vector in the principal frame that `spin.axis` names; asks for a throw that states one.
+ *
+ * @param pose at release
+ */
+export function turningAxis(drawn: DrawnThrow, prop: Prop, pose: Quat, course: ThrowCourse): Vec3 {
+  const stated = drawn.spin?.axis as string | Vec3;
+  const axis = within(["spin", "axis"], () => spinAxis(stated, prop, pose, course));
+  return normalizeVector(rotateBack(prop.principal.axes, axis));
 }
 
 /**

@@ -60,7 +60,9 @@ export const bakeCommand = (answer: (code: number) => void) =>
         await writeFiles(options.output, files);
       }
       process.stdout.write(options.json ? formatRecord(fresh) : report(fresh, options));
-      if (fresh.clips.some(missed)) answer(ExitCode.checkFailed);
+      for (const { name, reason } of baked.unheld)
+        process.stderr.write(`${name} is left out: ${reason.message}\n`);
+      if (fresh.clips.some(missed) || baked.unheld.length > 0) answer(ExitCode.checkFailed);
     });
 
 function takeRange(text: string): [number, number] {

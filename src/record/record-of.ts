@@ -76,10 +76,10 @@ function clipRecord(
   };
 }
 
-/** m from the mark to where the arrival point really is at the end; null without a mark. */
-function missedBy({ flight, wish }: Take, prop: Prop): number | null {
+/** m from the mark to where the arrival point really is at the end, or from the floor to the prop; null without either. */
+function missedBy({ flight, wish, gap }: Take, prop: Prop): number | null {
   const { to } = wish.arc;
-  if (!to) return null;
+  if (!to) return gap === undefined ? null : Math.abs(gap);
   const arm = rotate(modelRotation(flight, prop, flight.duration), wish.arrivalOffset);
   return distance(add(flight.centerOfMass(flight.duration), arm), to);
 }
