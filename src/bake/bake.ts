@@ -1,13 +1,13 @@
 /** The one place that runs the line: draw, aim, fly, cut, splice. */
 
 import type { Track } from "../clip/track.js";
-import { spliceGlb } from "../gltf/splice.js";
+import { type Graft, spliceGlb } from "../gltf/splice.js";
 import { RequestError } from "../math/request-error.js";
 import { rounded } from "../math/rounded.js";
 import type { Prop } from "../prop/prop.js";
 import { throwFileError } from "../throwfile/errors.js";
 import { type ThrowEntry, type ThrowFile, takeNumbers } from "../throwfile/types.js";
-import { oneNodeGraft } from "./graft.js";
+import { type NamedTrack, oneNodeGraft, twoNodeGraft } from "./graft.js";
 import { hostFrame } from "./host.js";
 import { UnheldLimits } from "./limits.js";
 import { type MotionState, motionState, turnTimes } from "./motion.js";
@@ -125,14 +125,18 @@ function bakeThrow(
       track: baked.track,
       extras: rounded(clipExtras(entry, baked)),
     }));
-    const graft = prop.node ? nodeGraft(prop.node, prop.scale, clips) : oneNodeGraft(prop, clips);
-    const content = spliceGlb(model, graft);
+    const content = spliceGlb(model, graftOf(file, prop, clips));
     return { entry, takes, file: { name: `${entry.name}.glb`, content } };
   } catch (error) {
     if (!(error instanceof RequestError)) throw error;
     const path = error.path[0] === "bake" ? error.path : ["throws", entry.name, ...error.path];
     throw throwFileError(file, new RequestError(path, error.fault, error.remedy));
   }
+}
+
+function graftOf(file: ThrowFile, prop: Prop, clips: NamedTrack[]): Graft {
+  if (prop.node) return nodeGraft(prop.node, prop.scale, clips);
+  return file.bake.layout === "two-node" ? twoNodeGraft(prop, clips) : oneNodeGraft(prop, clips);
 }
 
 function bakeTake(

@@ -3,7 +3,7 @@
 import type { Channel, Track } from "../clip/track.js";
 import type { ClipChannel, Graft } from "../gltf/splice.js";
 import type { Quat } from "../math/quat.js";
-import type { Vec3 } from "../math/vec3.js";
+import { negate, type Vec3 } from "../math/vec3.js";
 import type { Prop } from "../prop/prop.js";
 
 export interface NamedTrack {
@@ -12,12 +12,14 @@ export interface NamedTrack {
   extras: object;
 }
 
+type Target = ClipChannel["target"];
+
 /**
  * One animated node over the whole scene, named after the prop. It rests as modelled, or, where the file holds one clip, at that clip's first
  * key: players differ in what they show before it.
  */
 export function oneNodeGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
-  const only = clips.length === 1 ? clips[0].track : undefined;
+  const only = onlyTrack(clips);
   return {
     nodes: [
       {
@@ -26,24 +28,69 @@ export function oneNodeGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
           translation: firstKey<Vec3>(only.translation),
           rotation: firstKey<Quat>(only.rotation),
         }),
-        ...(prop.scale !== 1 && { scale: [prop.scale, prop.scale, prop.scale] as const }),
+        ...scaled(prop),
         holdsScene: true,
       },
     ],
-    clips: clips.map(({ name, track, extras }) => ({
-      name,
-      extras,
-      channels: [channel("translation", track), channel("rotation", track)],
-    })),
+    clips: newClips(clips, { translation: { added: 0 }, rotation: { added: 0 } }),
   };
 }
 
-const channel = (path: "translation" | "rotation", track: Track): ClipChannel => ({
-  target: { added: 0 },
-  path,
-  ...track[path],
-});
+/**
+ * Over the whole scene a node named after the prop whose translation is that of the centre of mass, in it one that turns about it, and in that a
+ * still one moved by minus the centre of mass. They rest as the single node does.
+ */
+export function twoNodeGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
+  const only = onlyTrack(clips);
+  return {
+    nodes: [
+      {
+        name: prop.name,
+        translation: only ? firstKey<Vec3>(only.translation) : prop.centerOfMass,
+        children: [1],
+      },
+      {
+        name: `${prop.name}-turning`,
+        ...(only && { rotation: firstKey<Quat>(only.rotation) }),
+        children: [2],
+      },
+      {
+        name: `${prop.name}-centred`,
+        translation: negate(prop.centerOfMass),
+        ...scaled(prop),
+        holdsScene: true,
+      },
+    ],
+    clips: newClips(clips, { translation: { added: 0 }, rotation: { added: 1 } }),
+  };
+}
+
+/** The track of a file's single clip. */
+export const onlyTrack = (clips: readonly NamedTrack[]): Track | undefined =>
+  clips.length === 1 ? clips[0].track : undefined;
+
+/** Clips whose channels move these nodes. */
+export const newClips = (
+  clips: readonly NamedTrack[],
+  targets: Record<ClipChannel["path"], Target>,
+): Graft["clips"] =>
+  clips.map(({ name, track, extras }) => ({
+    name,
+    extras,
+    channels: (["translation", "rotation"] as const).map((path) => ({
+      target: targets[path],
+      path,
+      ...track[path],
+    })),
+  }));
+
+const scaled = ({ scale }: Prop) => (scale === 1 ? {} : { scale: [scale, scale, scale] as const });
 
 /** The value of a channel's first key. */
-export const firstKey = <T extends Vec3 | Quat>({ times, values }: Channel): T =>
-  Array.from(values.subarray(0, values.length / times.length)) as unknown as T;
+export function firstKey<T extends Vec3 | Quat>({ interpolation, times, values }: Channel): T {
+  const size = values.length / times.length;
+  const key =
+    interpolation === "CUBICSPLINE" ? values.subarray(size / 3, (2 * size) / 3) : values.subarray(0, size);
+  const first = Array.from(key);
+  return (values instanceof Int16Array ? first.map((c) => c / 32767) : first) as unknown as T;
+}

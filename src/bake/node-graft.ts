@@ -1,10 +1,10 @@
 /** The clips that a file of takes adds to a prop that is a node of its model: they move that node itself. */
 
-import type { ClipChannel, Graft, Rest } from "../gltf/splice.js";
+import type { Graft, Rest } from "../gltf/splice.js";
 import type { MovedNode } from "../gltf/surfaces.js";
 import { type Quat, rotateBack } from "../math/quat.js";
 import { scale, subtract, type Vec3 } from "../math/vec3.js";
-import { firstKey, type NamedTrack } from "./graft.js";
+import { firstKey, type NamedTrack, newClips, onlyTrack } from "./graft.js";
 
 /**
  * The node keeps its own scale, times the model's factor. It rests as modelled, or, where the file holds one clip, at that
@@ -13,7 +13,7 @@ import { firstKey, type NamedTrack } from "./graft.js";
  * @param factor on the whole model
  */
 export function nodeGraft(node: MovedNode, factor: number, clips: readonly NamedTrack[]): Graft {
-  const only = clips.length === 1 ? clips[0].track : undefined;
+  const only = onlyTrack(clips);
   const rest: Rest | undefined = only
     ? {
         node: node.index,
@@ -27,17 +27,7 @@ export function nodeGraft(node: MovedNode, factor: number, clips: readonly Named
   return {
     nodes: [],
     ...(rest && { rests: [rest] }),
-    clips: clips.map(({ name, track, extras }) => ({
-      name,
-      extras,
-      channels: (["translation", "rotation"] as const).map(
-        (path): ClipChannel => ({
-          target: { node: node.index },
-          path,
-          ...track[path],
-        }),
-      ),
-    })),
+    clips: newClips(clips, { translation: { node: node.index }, rotation: { node: node.index } }),
   };
 }
 

@@ -1,8 +1,9 @@
 /** One take: the first of its candidates that has a flight, flown and cut into keys. */
 
 import { type AimedLaunch, type LaunchWish, solveLaunch } from "../aim/launch.js";
+import type { Body } from "../clip/body.js";
+import { clipTrack } from "../clip/clip-track.js";
 import { defaultTolerance } from "../clip/default-tolerance.js";
-import { linearTrack } from "../clip/linear.js";
 import type { Track } from "../clip/track.js";
 import { candidateOrder } from "../draw/candidate-order.js";
 import { drawThrow } from "../draw/draw-throw.js";
@@ -117,9 +118,18 @@ function bodyOf(file: ThrowFile, name: string, prop: Prop): Omit<FlyingBody, "fl
 export function cutTake(file: ThrowFile, prop: Prop, take: Take): Track {
   const body = { centerOfMass: prop.centerOfMass, axes: prop.principal.axes, reach: prop.reach };
   const tolerance = toleranceOf(file, prop);
+  const { keys, layout, pack } = file.bake;
+  if (prop.node && layout === "two-node")
+    throw new RequestError(
+      ["bake", "layout"],
+      `"${prop.name}" is a node of its model and moved itself, not by two nodes over it (found two-node)`,
+      `one-node, or no props.${prop.name}.node`,
+    );
+  const cut = (flight: Flight, seen: Body, within: number) =>
+    clipTrack(flight, seen, within, { keys, layout, pack, frameRate: file.frameRate });
   return prop.node
-    ? cutInParentFrame(take.flight, body, tolerance, prop.node, prop.scale, linearTrack)
-    : linearTrack(take.flight, body, tolerance);
+    ? cutInParentFrame(take.flight, body, tolerance, prop.node, prop.scale, cut)
+    : cut(take.flight, body, tolerance);
 }
 
 export const toleranceOf = (file: ThrowFile, prop: Prop): number =>

@@ -169,7 +169,13 @@ async function played(glb: Uint8Array, takes: readonly Take[], body: Body) {
 }
 
 function greatestDisplacement(clip: ClipChannels, flight: Flight, body: Body): number {
-  const track: Track = { ...clip, duration: flight.duration, error: 0, interpolation: "LINEAR" };
+  const interpolation = "LINEAR";
+  const track: Track = {
+    translation: { interpolation, ...clip.translation },
+    rotation: { interpolation, ...clip.rotation },
+    duration: flight.duration,
+    error: 0,
+  };
   let greatest = 0;
   const count = Math.ceil(flight.duration * LOOKS_PER_SECOND);
   for (let i = 0; i <= count; i++)

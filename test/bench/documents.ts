@@ -2,7 +2,12 @@
 
 import { type Animation, type Document, type Node, NodeIO } from "@gltf-transform/core";
 import { ALL_EXTENSIONS } from "@gltf-transform/extensions";
-import type { Channel } from "../../src/clip/track.js";
+
+/** Linear keys. */
+export interface Channel {
+  times: Float32Array;
+  values: Float32Array | Int16Array;
+}
 
 export interface ClipChannels {
   translation: Channel;
@@ -35,7 +40,7 @@ function addChannel(
   { times, values }: Channel,
 ): void {
   const buffer = document.getRoot().listBuffers()[0];
-  const accessor = (array: Float32Array, type: "SCALAR" | "VEC3" | "VEC4") =>
+  const accessor = (array: Channel["values"], type: "SCALAR" | "VEC3" | "VEC4") =>
     document
       .createAccessor()
       .setArray(array as Float32Array<ArrayBuffer>)
