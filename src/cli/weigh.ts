@@ -52,7 +52,12 @@ const isModel = (path: string) => [".glb", ".gltf"].includes(extname(path).toLow
 async function weighModel(path: string, density?: number): Promise<Map<string, LoadedProp>> {
   const { model, sha256 } = await readModelFile(path, path);
   const name = basename(path, extname(path));
-  return new Map([[name, { prop: await weigh(name, model, { density }), model, source: path, sha256 }]]);
+  try {
+    return new Map([[name, { prop: await weigh(name, model, { density }), model, source: path, sha256 }]]);
+  } catch (error) {
+    if (!(error instanceof RequestError) || error.path[0] !== "model") throw error;
+    throw new RequestError([path], error.fault, error.remedy);
+  }
 }
 
 async function weighAll(path: string): Promise<Map<string, LoadedProp>> {
@@ -112,12 +117,18 @@ function behaviour(axis: AxisBehaviour): string {
     case "steady":
       return `is steady: a small wobble goes round ${short(axis.wobblesPerTurn)} times a turn, one of ${WOBBLE_DEGREES}° ${short(axis.wobblesPerTurnAtWobble)} times`;
     case "tumbles":
-      return `tumbles: a small wobble grows ${short(axis.growthPerTurn)} times a turn; with ${wobble} it turns over every ${short(axis.turnsPerFlip)} turns, round the ${axis.turnsRound} axis`;
+      return `tumbles: a small wobble grows ${short(axis.growthPerTurn)} times a turn; with ${wobble} it ${turning(axis)}`;
     case "leans":
-      return `is steady without a wobble only: ${wobble} leans the spin to the ${axis.turnsRound} axis, round which it turns over every ${short(axis.turnsPerFlip)} turns`;
+      return `is steady without a wobble only: ${wobble} leans the spin to the ${axis.turnsRound} axis, and it ${turning(axis)}`;
     case "drifts":
-      return `drifts: with ${wobble} it turns over slowly, every ${short(axis.turnsPerFlip)} turns, round the ${axis.turnsRound} axis`;
+      return `drifts: with ${wobble} it ${turning(axis)}`;
   }
+}
+
+function turning({ turnsPerFlip, turnsRound }: Exclude<AxisBehaviour, { behaviour: "steady" }>): string {
+  return turnsPerFlip < 0.5
+    ? `rolls round the ${turnsRound} axis ${short(1 / (2 * turnsPerFlip))} times a turn`
+    : `turns over every ${short(turnsPerFlip)} turns, round the ${turnsRound} axis`;
 }
 
 const short = (value: number) => String(Number(value.toPrecision(4)));

@@ -33,7 +33,7 @@ export function withCaps(
   if (cracksOnly && openings.length > 0) return undefined;
   const capped = cap(part, loops);
   const volume = Math.abs(solidIntegrals(capped.positions, capped.triangles).volume);
-  if (!(volume > EMPTY * area * diagonal(boxOf(part.positions, part.triangles)))) return undefined;
+  if (!(volume > EMPTY * area * diagonal(boxOf(part.positions)))) return undefined;
   if (loops.reduce((sum, loop) => sum + loop.error, 0) > FLATNESS * volume) return undefined;
   const capArea = openings.reduce((sum, loop) => sum + loop.area, 0);
   return { part: capped, openings: openings.length, share: capArea / (area + capArea) };

@@ -1,21 +1,15 @@
-import type { Surface } from "../gltf/surfaces.js";
 import { isClosed, type Part, split } from "./split.js";
 import { pick, type Triangles, weld } from "./weld.js";
 
 /**
- * The parts that surfaces are made of, vertices at the same place made one. A part open in its own surface is joined with
- * what is open in the others (a solid painted with two materials, or split over two nodes). Triangles without an area are
- * passed over, unless more would be open without them (one can lie in a crack between edges of different length).
+ * The parts that meshes are made of. A part open in its own mesh is joined with what is open in the others (a solid painted
+ * with two materials, or split over two nodes). Triangles without an area are passed over, unless more would be open without
+ * them (one can lie in a crack between edges of different length).
  *
- * @param surfaces in the order in which `owners` count them; places that are to be one must be equal to the last bit
+ * @param meshes each welded; places of several that are to be one must be equal to the last bit
  */
-export function findParts(surfaces: readonly Pick<Surface, "positions" | "triangles">[]): {
-  closed: Part[];
-  open: Part[];
-} {
-  const parts = surfaces.flatMap((surface, owner) =>
-    connectedParts(weld([{ ...surface, owners: new Uint32Array(surface.triangles.length / 3).fill(owner) }])),
-  );
+export function findParts(meshes: readonly Triangles[]): { closed: Part[]; open: Part[] } {
+  const parts = meshes.flatMap(connectedParts);
   const closed = parts.filter(isClosed);
   const open = parts.filter((part) => !isClosed(part));
   if (new Set(open.map((part) => part.owners[0])).size < 2) return { closed, open };
@@ -44,13 +38,14 @@ const SLIVER = 1e-14;
 
 /** The mesh without the triangles whose three corners lie on a line. */
 function withoutSlivers(mesh: Triangles): Triangles {
+  const { positions, triangles } = mesh;
   const keep = new Uint32Array(mesh.owners.length);
   let count = 0;
-  for (let t = 0; t < keep.length; t++) if (!isSliver(mesh, t)) keep[count++] = t;
+  for (let t = 0; t < keep.length; t++) if (!isSliver(positions, triangles, t)) keep[count++] = t;
   return count === keep.length ? mesh : pick(mesh, keep.subarray(0, count));
 }
 
-function isSliver({ positions, triangles }: Triangles, t: number): boolean {
+function isSliver(positions: Float64Array, triangles: Uint32Array, t: number): boolean {
   const a = 3 * triangles[3 * t];
   const b = 3 * triangles[3 * t + 1];
   const c = 3 * triangles[3 * t + 2];
@@ -64,5 +59,5 @@ function isSliver({ positions, triangles }: Triangles, t: number): boolean {
   const ny = uz * vx - ux * vz;
   const nz = ux * vy - uy * vx;
   const longer = Math.max(ux * ux + uy * uy + uz * uz, vx * vx + vy * vy + vz * vz);
-  return Math.sqrt(nx * nx + ny * ny + nz * nz) <= SLIVER * longer;
+  return nx * nx + ny * ny + nz * nz <= SLIVER * SLIVER * longer * longer;
 }

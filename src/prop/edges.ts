@@ -11,10 +11,18 @@ export function eachEdge(
 ): void {
   const link = new Int32Array(triangles.length);
   const head = new Int32Array(vertexCount).fill(-1);
-  for (let h = triangles.length - 1; h >= 0; h--) {
-    const low = Math.min(triangles[h], triangles[after(h)]);
-    link[h] = head[low];
-    head[low] = h;
+  for (let h = triangles.length - 1; h >= 0; h -= 3) {
+    // Corner h is the third of its triangle.
+    const [a, b, c] = [triangles[h - 2], triangles[h - 1], triangles[h]];
+    const third = Math.min(a, c);
+    link[h] = head[third];
+    head[third] = h;
+    const second = Math.min(b, c);
+    link[h - 1] = head[second];
+    head[second] = h - 1;
+    const first = Math.min(a, b);
+    link[h - 2] = head[first];
+    head[first] = h - 2;
   }
   const seenBy = new Int32Array(vertexCount).fill(-1);
   const last = new Int32Array(vertexCount);

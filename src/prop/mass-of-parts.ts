@@ -37,7 +37,7 @@ export function massOfParts(
     const integrals = solidIntegrals(part.positions, part.triangles);
     const { surface, area, mixed } = mainSurface(part, substances);
     const { density, label } = substances[surface];
-    const box = boxOf(part.positions, part.triangles);
+    const box = boxOf(part.positions);
     if (!(Math.abs(integrals.volume) > FLAT * area * diagonal(box))) {
       flat.push(part);
       continue;

@@ -1,4 +1,3 @@
-import type { Surface } from "../gltf/surfaces.js";
 import { RequestError } from "../math/request-error.js";
 import { cross, dot, normalize, subtract } from "../math/vec3.js";
 import { findParts } from "./closed-parts.js";
@@ -24,17 +23,17 @@ export interface Solidity {
 /** m */
 export const USUAL_WALL = 0.002;
 
-type Triangulation = readonly Pick<Surface, "positions" | "triangles">[];
 type LabelOf = (mesh: Triangles) => string;
 
 /**
  * Mass properties of surfaces, and warnings about all that is not plainly a solid.
  *
- * @param substances of the surfaces, in their order
+ * @param meshes of the surfaces, each welded
+ * @param substances by surface, as `owners` of the meshes count them
  * @throws RequestError at ["model"] for what is flat throughout and no `wall` stated, and for cavities larger than what is around them
  */
 export function massOfSurfaces(
-  surfaces: Triangulation,
+  meshes: readonly Triangles[],
   substances: readonly Substance[],
   solidity: Solidity,
 ): { body: MassProperties; warnings: string[] } {
@@ -44,8 +43,8 @@ export function massOfSurfaces(
   const labelOf: LabelOf = ({ owners }) => substances[owners[0]].label;
   const { bodies, walls } =
     solidity.solid === "surface"
-      ? { bodies: [], walls: [{ mesh: oneLayer(surfaces, labelOf, notes), share: 1 }] }
-      : solidsAndWalls(surfaces, substances, solidity.isWallStated, labelOf, notes);
+      ? { bodies: [], walls: [{ mesh: oneLayer(meshes, labelOf, notes), share: 1 }] }
+      : solidsAndWalls(meshes, substances, solidity.isWallStated, labelOf, notes);
   const all = [...bodies, ...massOfWalls(walls, substances, solidity.wall)];
   const body = all.length > 0 ? combine(all) : undefined;
   if (!body || !(body.mass > 0))
@@ -65,13 +64,8 @@ export function massOfSurfaces(
 }
 
 /** All triangles, each place once. */
-function oneLayer(surfaces: Triangulation, labelOf: LabelOf, notes: Notes): Triangles {
-  const mesh = weld(
-    surfaces.map((surface, owner) => ({
-      ...surface,
-      owners: new Uint32Array(surface.triangles.length / 3).fill(owner),
-    })),
-  );
+function oneLayer(meshes: readonly Triangles[], labelOf: LabelOf, notes: Notes): Triangles {
+  const mesh = weld(meshes);
   const found = withoutDoubles(mesh);
   if (!found) return mesh;
   const layer = weld([found.single, found.sheets]);
@@ -80,13 +74,13 @@ function oneLayer(surfaces: Triangulation, labelOf: LabelOf, notes: Notes): Tria
 }
 
 function solidsAndWalls(
-  surfaces: Triangulation,
+  meshes: readonly Triangles[],
   substances: readonly Substance[],
   isWallStated: boolean,
   labelOf: LabelOf,
   notes: Notes,
 ): { bodies: MassProperties[]; walls: Walls[] } {
-  const { closed, open } = findParts(surfaces);
+  const { closed, open } = findParts(meshes);
   const parts = closed.map((part) => withoutLayers(part));
   const layers = parts.flatMap((part) => part.layers);
   parts.forEach(({ repeats }, n) => {
@@ -125,7 +119,7 @@ function refuseFlat(meshes: readonly Triangles[]): void {
   const [a, b, c] = [0, 1, 2].map((k) => vertex(first.positions, first.triangles[k]));
   const normal = normalize(cross(subtract(b, a), subtract(c, a)));
   for (const { positions, triangles } of meshes) {
-    const tolerance = FLATNESS * diagonal(boxOf(positions, triangles));
+    const tolerance = FLATNESS * diagonal(boxOf(positions));
     for (const v of triangles)
       if (Math.abs(dot(subtract(vertex(positions, v), a), normal)) > tolerance) return;
   }

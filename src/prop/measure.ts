@@ -3,18 +3,18 @@
 import type { Model } from "../gltf/model.js";
 import { readSurfaces, type Surface } from "../gltf/surfaces.js";
 import { RequestError } from "../math/request-error.js";
-import { distance, type Vec3 } from "../math/vec3.js";
+import type { Vec3 } from "../math/vec3.js";
 import { type Density, densities } from "./density.js";
 import { extremePoints } from "./extremes.js";
 import type { MassProperties } from "./mass.js";
-import type { Substance } from "./mass-of-parts.js";
 import { massOfSurfaces, type Solidity } from "./mass-of-surfaces.js";
 import { shapeModel } from "./shape.js";
 import { shapeReach, shapeSize } from "./shape-extent.js";
 import { checkShape, type Shape } from "./shape-kind.js";
 import { shapeMass } from "./shape-mass.js";
 import { shapeMesh } from "./shape-mesh.js";
-import { boxOf, vertex } from "./vertex.js";
+import { boxOf } from "./vertex.js";
+import { type Triangles, weld } from "./weld.js";
 
 export interface Measured {
   /** None for a mesh that is not a solid. */
@@ -46,23 +46,19 @@ export async function measureModel(
   top?: number,
 ): Promise<Measured> {
   const { surfaces, warnings } = await readSurfaces(model, top);
-  const extremes = extremePoints(surfaces);
+  const meshes = surfaces.map((surface, owner) => weld([meshOf(surface, owner)]));
+  const extremes = extremePoints(meshes);
   if (extremes.length === 0)
     throw top === undefined
       ? new RequestError(["model"], "has no triangles to weigh", "needs a mesh in its default scene")
       : new RequestError(["node"], "has no triangles to weigh", "needs a mesh in the node or below");
-  const weighed = attempt(() => weighSurfaces(surfaces, matter), isStated);
+  const weighed = attempt(() => weighMeshes(meshes, surfaces, matter), isStated);
   return {
     body: weighed?.body,
     size: sizeOf(extremes),
     extremes,
     warnings: [...warnings, ...(isStated ? [] : weighed!.warnings)],
-    reachFrom(place) {
-      let reach = 0;
-      for (let i = 0; i < extremes.length / 3; i++)
-        reach = Math.max(reach, distance(vertex(extremes, i), place));
-      return reach;
-    },
+    reachFrom: (place) => furthestFrom(place, extremes),
   };
 }
 
@@ -75,12 +71,12 @@ export async function measureShape(name: string, shape: Shape, matter: Matter): 
   // In closed form where it is solid as it is, else as a fine mesh.
   const weighed =
     matter.solid === "surface" || isHullOther
-      ? massOfSurfaces([fineMesh(shape)], [{ density: kilograms, label: name }], matter)
+      ? massOfSurfaces([weld([meshOf(fineMesh(shape), 0)])], [{ density: kilograms, label: name }], matter)
       : { body: shapeMass(shape, kilograms), warnings: [] };
   return {
     body: weighed.body,
     size: shapeSize(shape),
-    extremes: extremePoints(surfaces),
+    extremes: extremePoints([weld(surfaces.map(meshOf))]),
     warnings: weighed.warnings,
     reachFrom: (place) => shapeReach(shape, place),
   };
@@ -94,16 +90,34 @@ function fineMesh(shape: Shape) {
   return { positions: Float64Array.from(positions), triangles: Uint32Array.from(indices) };
 }
 
-function weighSurfaces(all: readonly Surface[], matter: Matter) {
-  const perSurface = densities(all, matter.density);
-  const heavy = (_: unknown, i: number) => perSurface[i] !== 0;
-  const surfaces = all.filter(heavy);
-  const substances: Substance[] = all
-    .map((surface, i) => ({ density: perSurface[i], label: labelOf(surface) }))
-    .filter(heavy);
-  if (surfaces.length === 0)
+const meshOf = (
+  { positions, triangles }: Pick<Surface, "positions" | "triangles">,
+  owner: number,
+): Triangles => ({
+  positions,
+  triangles,
+  owners: new Uint32Array(triangles.length / 3).fill(owner),
+});
+
+function weighMeshes(meshes: readonly Triangles[], surfaces: readonly Surface[], matter: Matter) {
+  const perSurface = densities(surfaces, matter.density);
+  const heavy = meshes.filter((_, i) => perSurface[i] !== 0);
+  if (heavy.length === 0)
     throw new RequestError(["density"], "is 0 throughout", "needs something that weighs: kg/m³ above 0");
-  return massOfSurfaces(surfaces, substances, matter);
+  const substances = surfaces.map((surface, i) => ({ density: perSurface[i], label: labelOf(surface) }));
+  return massOfSurfaces(heavy, substances, matter);
+}
+
+function furthestFrom([x, y, z]: Vec3, points: Float64Array): number {
+  let greatest = 0;
+  for (let i = 0; i < points.length; i += 3) {
+    const dx = points[i] - x;
+    const dy = points[i + 1] - y;
+    const dz = points[i + 2] - z;
+    const square = dx * dx + dy * dy + dz * dz;
+    if (square > greatest) greatest = square;
+  }
+  return Math.sqrt(greatest);
 }
 
 const labelOf = ({ nodeName, materialName }: Surface) =>

@@ -22,7 +22,7 @@ export interface Overlap {
  * Of what shares a place the densest counts once, and the rest is too much.
  */
 export function overlap(parts: readonly Filled[]): Overlap | undefined {
-  const boxes = parts.map(({ positions, triangles }) => boxOf(positions, triangles));
+  const boxes = parts.map(({ positions }) => boxOf(positions));
   const region = sharedRegion(boxes);
   if (!region) return undefined;
   const grid = gridOver(region.box);

@@ -1,4 +1,5 @@
 import { after, eachEdge } from "./edges.js";
+import { Groups } from "./groups.js";
 import { pick, type Triangles } from "./weld.js";
 
 /** Triangles that hang together by edges, one vertex at each place. */
@@ -19,46 +20,33 @@ export const isClosed = (part: Part): boolean => part.rim.length === 0;
 /** The parts of a welded mesh, in the order of their first triangles. */
 export function split(mesh: Triangles): Part[] {
   const { triangles, owners } = mesh;
-  const group = new Int32Array(owners.length);
-  for (let t = 0; t < group.length; t++) group[t] = t;
-  const root = (t: number): number => {
-    while (group[t] !== t) {
-      group[t] = group[group[t]];
-      t = group[t];
-    }
-    return t;
-  };
+  const group = new Groups(owners.length);
   // Edges that are not plain, as triples: a half edge, uses, balance.
   const odd: number[] = [];
   eachEdge(triangles, mesh.positions.length / 3, (first, link) => {
-    let uses = 0;
-    let balance = 0;
-    for (let h = first; h >= 0; h = link[h]) {
+    let uses = 1;
+    let balance = 1;
+    for (let h = link[first]; h >= 0; h = link[h]) {
       uses++;
       balance += triangles[h] === triangles[first] ? 1 : -1;
-      if (h === first) continue;
-      // The lower number is the root, so that parts come in the order of their first triangles.
-      const a = root(Math.trunc(h / 3));
-      const b = root(Math.trunc(first / 3));
-      if (a < b) group[b] = a;
-      else group[a] = b;
+      group.join(Math.trunc(first / 3), Math.trunc(h / 3));
     }
     if (uses !== 2 || balance !== 0) odd.push(first, uses, balance);
   });
-  const parts = new Map<number, { which: number[]; odd: number[] }>();
-  for (let t = 0; t < owners.length; t++) {
-    const part = parts.get(root(t));
-    if (part) part.which.push(t);
-    else parts.set(t, { which: [t], odd: [] });
+  const { firsts, which } = group.members();
+  if (firsts.length === 1) return [{ ...mesh, ...faultsOf(odd, triangles) }];
+  const oddOf = new Map<number, number[]>();
+  for (let n = 0; n < odd.length; n += 3) {
+    const first = group.first(Math.trunc(odd[n] / 3));
+    const list = oddOf.get(first);
+    if (list) list.push(odd[n], odd[n + 1], odd[n + 2]);
+    else oddOf.set(first, odd.slice(n, n + 3));
   }
-  for (let n = 0; n < odd.length; n += 3)
-    parts.get(root(Math.trunc(odd[n] / 3)))!.odd.push(odd[n], odd[n + 1], odd[n + 2]);
   const renumber = renumbering(mesh.positions.length / 3);
-  return Array.from(parts.values(), ({ which, odd }) => {
-    const faults = faultsOf(odd, triangles);
-    if (parts.size === 1) return { ...mesh, ...faults };
+  return firsts.map((first, n) => {
+    const faults = faultsOf(oddOf.get(first) ?? [], triangles);
     const number = renumber();
-    const part = pick(mesh, which);
+    const part = pick(mesh, which[n]);
     return {
       triangles: part.triangles.map(number),
       owners: part.owners,

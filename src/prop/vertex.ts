@@ -1,6 +1,6 @@
 /** Reading vertices and triangles out of arrays of 3 numbers each. */
 
-import { cross, length, subtract, type Vec3 } from "../math/vec3.js";
+import { length, type Vec3 } from "../math/vec3.js";
 
 export const vertex = (positions: Float64Array, index: number): Vec3 => [
   positions[3 * index],
@@ -10,10 +10,19 @@ export const vertex = (positions: Float64Array, index: number): Vec3 => [
 
 /** m² */
 export function triangleArea(positions: Float64Array, triangles: Uint32Array, t: number): number {
-  const a = vertex(positions, triangles[3 * t]);
-  const b = vertex(positions, triangles[3 * t + 1]);
-  const c = vertex(positions, triangles[3 * t + 2]);
-  return length(cross(subtract(b, a), subtract(c, a))) / 2;
+  const a = 3 * triangles[3 * t];
+  const b = 3 * triangles[3 * t + 1];
+  const c = 3 * triangles[3 * t + 2];
+  const ux = positions[b] - positions[a];
+  const uy = positions[b + 1] - positions[a + 1];
+  const uz = positions[b + 2] - positions[a + 2];
+  const vx = positions[c] - positions[a];
+  const vy = positions[c + 1] - positions[a + 1];
+  const vz = positions[c + 2] - positions[a + 2];
+  const nx = uy * vz - uz * vy;
+  const ny = uz * vx - ux * vz;
+  const nz = ux * vy - uy * vx;
+  return Math.sqrt(nx * nx + ny * ny + nz * nz) / 2;
 }
 
 export interface Box {
@@ -21,20 +30,22 @@ export interface Box {
   readonly high: readonly number[];
 }
 
-/** Bounding box of the vertices that `triangles` use; of a point list without. */
-export function boxOf(positions: Float64Array, triangles?: Uint32Array): Box {
-  const low = [Infinity, Infinity, Infinity];
-  const high = [-Infinity, -Infinity, -Infinity];
-  const count = triangles ? triangles.length : positions.length / 3;
-  for (let n = 0; n < count; n++) {
-    const at = 3 * (triangles ? triangles[n] : n);
-    for (let i = 0; i < 3; i++) {
-      const value = positions[at + i];
-      if (value < low[i]) low[i] = value;
-      if (value > high[i]) high[i] = value;
-    }
+/** Bounding box of a list of vertices. */
+export function boxOf(positions: Float64Array): Box {
+  let [lowX, lowY, lowZ] = [Infinity, Infinity, Infinity];
+  let [highX, highY, highZ] = [-Infinity, -Infinity, -Infinity];
+  for (let v = 0; v < positions.length; v += 3) {
+    const x = positions[v];
+    const y = positions[v + 1];
+    const z = positions[v + 2];
+    if (x < lowX) lowX = x;
+    if (x > highX) highX = x;
+    if (y < lowY) lowY = y;
+    if (y > highY) highY = y;
+    if (z < lowZ) lowZ = z;
+    if (z > highZ) highZ = z;
   }
-  return { low, high };
+  return { low: [lowX, lowY, lowZ], high: [highX, highY, highZ] };
 }
 
 /** Length of a box's diagonal. */

@@ -13,32 +13,21 @@ export interface Triangles {
 /** One mesh of all, one vertex at each place, without triangles of which two corners fall together. */
 export function weld(meshes: readonly Triangles[]): Triangles {
   const corners = meshes.reduce((sum, { triangles }) => sum + triangles.length, 0);
-  const lists = new Set(meshes.map(({ positions }) => positions));
-  const vertices = [...lists].reduce((sum, positions) => sum + positions.length / 3, 0);
-  const places = new Places(Math.min(vertices, corners));
-  // Meshes may share one list of vertices: what it became is looked up once.
-  const known = new Map<Float64Array, Int32Array>();
+  const places = new Places(meshes.reduce((sum, { positions }) => sum + positions.length / 3, 0));
   const welded = new Uint32Array(corners);
   const owners = new Uint32Array(corners / 3);
   let count = 0;
   for (const { positions, triangles, owners: from } of meshes) {
-    let numbers = known.get(positions);
-    if (!numbers) {
-      numbers = new Int32Array(positions.length / 3).fill(-1);
-      known.set(positions, numbers);
-    }
-    for (let corner = 0; corner < triangles.length; corner++) {
-      const vertex = triangles[corner];
-      let number = numbers[vertex];
-      if (number < 0) {
-        number = places.number(positions, vertex);
-        numbers[vertex] = number;
-      }
-      welded[3 * count + (corner % 3)] = number;
-      if (corner % 3 < 2) continue;
-      const [a, b] = [welded[3 * count], welded[3 * count + 1]];
-      if (a === b || b === number || number === a) continue;
-      owners[count++] = from[(corner - 2) / 3];
+    const numbers = places.numbers(positions);
+    for (let t = 0; t < from.length; t++) {
+      const a = numbers[triangles[3 * t]];
+      const b = numbers[triangles[3 * t + 1]];
+      const c = numbers[triangles[3 * t + 2]];
+      if (a === b || b === c || c === a) continue;
+      welded[3 * count] = a;
+      welded[3 * count + 1] = b;
+      welded[3 * count + 2] = c;
+      owners[count++] = from[t];
     }
   }
   return {

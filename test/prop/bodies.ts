@@ -6,6 +6,8 @@ import type { Vec3 } from "../../src/math/vec3.js";
 import type { MassProperties } from "../../src/prop/mass.js";
 import { massOfSurfaces, type Solidity } from "../../src/prop/mass-of-surfaces.js";
 
+import { type Triangles, weld } from "../../src/prop/weld.js";
+
 export interface Mesh {
   vertices: Vec3[];
   triangles: [number, number, number][];
@@ -94,6 +96,12 @@ export const surface = (mesh: Mesh, nodeName = "prop", materialName = "stuff"): 
   triangles: Uint32Array.from(mesh.triangles.flat()),
 });
 
+/** As the weighing takes them. */
+export const welded = (mesh: Mesh, owner = 0): Triangles => {
+  const { positions, triangles } = surface(mesh);
+  return weld([{ positions, triangles, owners: new Uint32Array(mesh.triangles.length).fill(owner) }]);
+};
+
 /** Weighs meshes, each a surface of its own of the density beside it (else 1000). */
 export function weighed(...meshes: (Mesh | [Mesh, number])[]): { body: MassProperties; warnings: string[] } {
   return weighedAs({}, ...meshes);
@@ -106,7 +114,7 @@ export function weighedAs(
 ): { body: MassProperties; warnings: string[] } {
   const listed = meshes.map((entry): [Mesh, number] => (Array.isArray(entry) ? entry : [entry, 1000]));
   return massOfSurfaces(
-    listed.map(([mesh]) => surface(mesh)),
+    listed.map(([mesh], owner) => welded(mesh, owner)),
     listed.map(([, density], i) => ({ density, label: `surface ${i}` })),
     { solid, wall: wall ?? 0.002, isWallStated: wall !== undefined },
   );

@@ -1,9 +1,9 @@
 import { describe, expect, test } from "vitest";
 import { findParts } from "../../src/prop/closed-parts.js";
-import { box, type Mesh, moved, surface, together } from "./bodies.js";
+import { box, type Mesh, moved, together, welded } from "./bodies.js";
 
 const cube = box([0, 0, 0], [1, 1, 1]);
-const parts = (...meshes: Mesh[]) => findParts(meshes.map((mesh) => surface(mesh)));
+const parts = (...meshes: Mesh[]) => findParts(meshes.map(welded));
 
 describe("parts of a mesh", () => {
   test("a cube is one closed part", () => {

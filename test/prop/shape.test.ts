@@ -12,6 +12,7 @@ import { type Shape, shapeModel } from "../../src/prop/shape.js";
 import { shapeReach } from "../../src/prop/shape-extent.js";
 import { shapeMass } from "../../src/prop/shape-mass.js";
 import { shapeMesh } from "../../src/prop/shape-mesh.js";
+import { weld } from "../../src/prop/weld.js";
 
 const validator = createRequire(import.meta.url)("gltf-validator");
 
@@ -99,15 +100,19 @@ describe("shapes in closed form", () => {
     });
 });
 
+const welded = ({ positions, triangles }: { positions: Float64Array; triangles: Uint32Array }) =>
+  weld([{ positions, triangles, owners: new Uint32Array(triangles.length / 3) }]);
+
 const SOLID = { solid: "auto", wall: 0.002, isWallStated: false } as const;
 
 describe("the meshes of shapes", () => {
   for (const [name, shape] of all) {
     test(`a ${name}'s mesh is closed, faces outwards and weighs nearly as much`, async () => {
       const { surfaces } = await readSurfaces(shapeModel(name, shape));
-      const { closed, open } = findParts(surfaces);
+      const meshes = surfaces.map(welded);
+      const { closed, open } = findParts(meshes);
       expect([closed.length, open.length]).toEqual([1, 0]);
-      const { body, warnings } = massOfSurfaces(surfaces, [{ density: 1000, label: name }], SOLID);
+      const { body, warnings } = massOfSurfaces(meshes, [{ density: 1000, label: name }], SOLID);
       expect(warnings).toEqual([]);
       const ideal = shapeMass(shape, 1000);
       const isRound = !("box" in shape);
@@ -129,7 +134,7 @@ describe("the meshes of shapes", () => {
         const losses = [64, 128].map((around) => {
           const { positions, indices } = shapeMesh(shape, around);
           const mesh = { positions: Float64Array.from(positions), triangles: Uint32Array.from(indices) };
-          const { body } = massOfSurfaces([mesh], [{ density: 1000, label: name }], SOLID);
+          const { body } = massOfSurfaces([welded(mesh)], [{ density: 1000, label: name }], SOLID);
           return [
             1 - body.volume / ideal.volume,
             1 - body.inertia[0][0] / ideal.inertia[0][0],
