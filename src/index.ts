@@ -11,9 +11,17 @@ export { type Arc, type ArcRequest, arcPosition, arcVelocity, solveArc } from ".
 export { type Flight, fly } from "./flight/flight.js";
 export type { Launch } from "./flight/launch.js";
 export { axisShares, turnsAboutMomentum } from "./flight/turns.js";
+export type { Decoders, DracoModule } from "./gltf/decoders.js";
 export { type Model, ModelError, type ResolveResource } from "./gltf/model.js";
 export { readModel } from "./gltf/read.js";
-export { type ClipChannel, type Graft, type NewClip, type NewNode, spliceGlb } from "./gltf/splice.js";
+export {
+  type ClipChannel,
+  type Graft,
+  type NewClip,
+  type NewNode,
+  type Rest,
+  spliceGlb,
+} from "./gltf/splice.js";
 export { throwClips } from "./gltf/throw-clips.js";
 export type { Mat3 } from "./math/mat3.js";
 export type { Quat } from "./math/quat.js";

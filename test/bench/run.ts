@@ -10,11 +10,13 @@ import { againstPipeline } from "./against-pipeline.js";
 import { evenness } from "./evenness.js";
 import { bakeForTable, manyTakes } from "./many-takes.js";
 import { vary } from "./vary.js";
+import { weighForTable, weighing } from "./weighing.js";
 
-const SECTIONS = [againstOdeSolver, againstEngine, againstPipeline, manyTakes, vary, evenness];
+const SECTIONS = [againstOdeSolver, againstEngine, againstPipeline, manyTakes, vary, evenness, weighing];
 
 const [first, ...rest] = process.argv.slice(2);
 if (first === "--bake") await bakeForTable(Number(rest[0]));
+else if (first === "--weigh") await weighForTable(rest[0]);
 else await printTables(process.argv.slice(2));
 
 async function printTables(names: readonly string[]): Promise<void> {
