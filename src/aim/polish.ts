@@ -77,7 +77,7 @@ function differences(turn: Turn, at: Attempt, growth: number): Mat3 {
 function damped(turn: Turn, at: Attempt, jacobian: Mat3): Attempt | undefined {
   const before = length(at.error);
   const goal = scale(at.error, -1);
-  const newton = solve(jacobian, goal);
+  const newton = limited(turn, at, solve(jacobian, goal));
   for (let halving = 0, size = 1; newton && halving < HALVINGS; halving++, size /= 2) {
     const next = attempt(turn, add(at.spin, scale(newton, size)));
     if (length(next.error) < before) return next;
@@ -88,12 +88,21 @@ function damped(turn: Turn, at: Attempt, jacobian: Mat3): Attempt | undefined {
   for (let damping = 1e-10 * trace; damping < trace; damping *= 1e3) {
     const normal = (a: number, b: number): number => dot(columns[a], columns[b]) + (a === b ? damping : 0);
     const row = (a: number): Vec3 => [normal(a, 0), normal(a, 1), normal(a, 2)];
-    const move = solve(
-      [row(0), row(1), row(2)],
-      [dot(columns[0], goal), dot(columns[1], goal), dot(columns[2], goal)],
+    const move = limited(
+      turn,
+      at,
+      solve([row(0), row(1), row(2)], [dot(columns[0], goal), dot(columns[1], goal), dot(columns[2], goal)]),
     );
     const next = move && attempt(turn, add(at.spin, move));
     if (next && length(next.error) < before) return next;
   }
   return undefined;
+}
+
+/** No step goes further than a turn within the flight, or half the spin: beyond that the derivatives say nothing. */
+function limited({ duration }: Turn, at: Attempt, move: Vec3 | undefined): Vec3 | undefined {
+  if (!move) return undefined;
+  const most = Math.max((2 * Math.PI) / duration, length(at.spin) / 2);
+  const size = length(move);
+  return size > most ? scale(move, most / size) : move;
 }

@@ -21,8 +21,10 @@ export interface Candidate {
 /**
  * All momenta that lead to the end pose within the bounds, before the last polish; for an exact family, those
  * of a scan through the wished axis (ordered principal frame).
+ *
+ * @param even points of the even grid on the curve that is searched, where not the usual number
  */
-export function search(problem: Problem, bounds: Bounds, axis?: Vec3): Candidate[] {
+export function search(problem: Problem, bounds: Bounds, axis?: Vec3, even?: number): Candidate[] {
   const { body, end } = problem;
   const found: Candidate[] = [];
   for (const seed of pureSpins(
@@ -38,7 +40,7 @@ export function search(problem: Problem, bounds: Bounds, axis?: Vec3): Candidate
   }
   for (const curve of curvesOf(problem, axis)) {
     const sampleAt = sampler(body, end, curve);
-    for (const momentum of momenta(cells(curve, sampleAt, bounds), sampleAt, bounds))
+    for (const momentum of momenta(cells(curve, sampleAt, bounds, even), sampleAt, bounds))
       found.push({ momentum, miss: 0 });
   }
   return distinct(found);
