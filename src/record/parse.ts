@@ -68,7 +68,7 @@ export function parseRecord(path: string, text: string): TakesRecord {
   } catch (error) {
     throw new RequestError(
       [path],
-      `is not JSON (${(error as Error).message})`,
+      `is not JSON (${onOneLine((error as Error).message)})`,
       "bake again, or restore it from version control",
     );
   }
@@ -82,3 +82,6 @@ export function parseRecord(path: string, text: string): TakesRecord {
     "bake again, or restore it from version control",
   );
 }
+
+/** The parser quotes the text it stumbled over, line ends and all. */
+const onOneLine = (message: string): string => message.replace(/\s+/g, " ");
