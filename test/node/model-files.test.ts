@@ -1,4 +1,4 @@
-import { mkdirSync, mkdtempSync, realpathSync, rmSync, symlinkSync, writeFileSync } from "node:fs";
+import { cpSync, mkdirSync, mkdtempSync, realpathSync, rmSync, symlinkSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { afterAll, describe, expect, it } from "vitest";
@@ -15,6 +15,9 @@ writeFileSync(join(root, "outside.bin"), bytes);
 writeFileSync(join(folder, "own one.bin"), bytes);
 writeFileSync(join(folder, "parts", "deep.bin"), bytes);
 symlinkSync(join(root, "outside.bin"), join(folder, "link.bin"));
+mkdirSync(join(root, "props-too"));
+writeFileSync(join(root, "props-too", "near.bin"), bytes);
+symlinkSync(join(root, "props-too", "near.bin"), join(folder, "near.bin"));
 symlinkSync(root, join(folder, "up"));
 symlinkSync(join(folder, "own one.bin"), join(folder, "inner.bin"));
 symlinkSync(join(folder, "nowhere.bin"), join(folder, "dangling.bin"));
@@ -43,6 +46,11 @@ describe("a model on disk", () => {
   it.each([
     ["a link out of the folder", "link.bin", 'names the file "link.bin" outside its own folder'],
     [
+      "a link into a folder whose name begins like its own",
+      "near.bin",
+      'names the file "near.bin" outside its own folder',
+    ],
+    [
       "a file through a linked folder",
       "up/outside.bin",
       'names the file "up/outside.bin" outside its own folder',
@@ -62,5 +70,15 @@ describe("a model on disk", () => {
       "none.glb: does not exist",
     );
     await expect(readModelFile(folder, "props")).rejects.toThrow("props: is not a file");
+  });
+
+  it("has a hash that covers every file it names, and nothing of where it lies", async () => {
+    const path = gltf("parts/deep.bin");
+    const { sha256 } = await readModelFile(path, "m.gltf");
+    cpSync(folder, join(root, "moved"), { recursive: true, verbatimSymlinks: true });
+    const moved = join(root, "moved", "m.gltf");
+    expect((await readModelFile(moved, "another name")).sha256).toBe(sha256);
+    writeFileSync(join(root, "moved", "parts", "deep.bin"), new Uint8Array(48).fill(1));
+    expect((await readModelFile(moved, "m.gltf")).sha256).not.toBe(sha256);
   });
 });
