@@ -1,8 +1,10 @@
 /** Numbers 0, 1, … in groups that are joined as it goes (union–find with path halving). */
 export class Groups {
   readonly #parent: Int32Array;
+  #groups: number;
 
   constructor(count: number) {
+    this.#groups = count;
     this.#parent = new Int32Array(count);
     for (let n = 0; n < count; n++) this.#parent[n] = n;
   }
@@ -19,10 +21,19 @@ export class Groups {
   }
 
   join(a: number, b: number): void {
+    const parent = this.#parent;
+    if (parent[a] === parent[b]) return;
     const one = this.first(a);
     const two = this.first(b);
-    if (one < two) this.#parent[two] = one;
-    else this.#parent[one] = two;
+    if (one === two) return;
+    this.#groups--;
+    if (one < two) parent[two] = one;
+    else parent[one] = two;
+  }
+
+  /** How many groups there are. */
+  get size(): number {
+    return this.#groups;
   }
 
   /** The groups in the order of their lowest numbers, and the numbers in each, ascending. */

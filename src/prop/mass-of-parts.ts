@@ -134,16 +134,14 @@ function mainSurface(
 ): { surface: number; area: number; mixed: boolean } {
   const areas = new Map<number, number>();
   let area = 0;
-  let ofOwner = 0;
-  owners.forEach((owner, t) => {
-    const triangle = triangleArea(positions, triangles, t);
-    area += triangle;
+  for (let t = 0; t < owners.length; ) {
+    const owner = owners[t];
     // Triangles of one surface follow each other.
-    ofOwner += triangle;
-    if (owners[t + 1] === owner) return;
-    areas.set(owner, (areas.get(owner) ?? 0) + ofOwner);
-    ofOwner = 0;
-  });
+    let run = 0;
+    for (; t < owners.length && owners[t] === owner; t++) run += triangleArea(positions, triangles, t);
+    areas.set(owner, (areas.get(owner) ?? 0) + run);
+    area += run;
+  }
   let surface = owners[0];
   for (const [owner, part] of areas) if (part > areas.get(surface)!) surface = owner;
   const { density } = substances[surface];

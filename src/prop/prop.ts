@@ -98,7 +98,7 @@ export async function weigh(name: string, source: Model | Shape, options: PropOp
     names: axisNames(body.inertia),
     reach,
     size: scaleVector(measured.size, scale),
-    extremes: measured.extremes.map((value) => value * scale),
+    extremes: scale === 1 ? measured.extremes : measured.extremes.map((value) => value * scale),
     points: namedPoints(options.points ?? {}, source, scale),
     scale,
     ...(node && { node }),

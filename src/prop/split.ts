@@ -29,12 +29,12 @@ export function split(mesh: Triangles): Part[] {
     for (let h = link[first]; h >= 0; h = link[h]) {
       uses++;
       balance += triangles[h] === triangles[first] ? 1 : -1;
-      group.join(Math.trunc(first / 3), Math.trunc(h / 3));
+      group.join((first / 3) | 0, (h / 3) | 0);
     }
     if (uses !== 2 || balance !== 0) odd.push(first, uses, balance);
   });
+  if (group.size === 1) return [{ ...mesh, ...faultsOf(odd, triangles) }];
   const { firsts, which } = group.members();
-  if (firsts.length === 1) return [{ ...mesh, ...faultsOf(odd, triangles) }];
   const oddOf = new Map<number, number[]>();
   for (let n = 0; n < odd.length; n += 3) {
     const first = group.first(Math.trunc(odd[n] / 3));
