@@ -35,13 +35,13 @@ export function massOfParts(
   const flat: Part[] = [];
   for (const part of parts) {
     const integrals = solidIntegrals(part.positions, part.triangles);
-    const { surface, area, mixed } = mainSurface(part, substances);
-    const { density, label } = substances[surface];
     const box = boxOf(part.positions);
-    if (!(Math.abs(integrals.volume) > FLAT * area * diagonal(box))) {
+    if (isFlat(part, integrals.volume, diagonal(box))) {
       flat.push(part);
       continue;
     }
+    const { surface, mixed } = mainSurface(part, substances);
+    const { density, label } = substances[surface];
     if (mixed) notes.add(`${label}, ${density} kg/m³`, MIXED);
     solids.push({ part, integrals, box, surface, density, sign: Math.sign(integrals.volume), within: [] });
   }
@@ -127,23 +127,26 @@ function noteOverlap(
   );
 }
 
+function isFlat({ positions, triangles, owners }: Part, volume: number, size: number): boolean {
+  // No triangle has more than half the square of the size: as a rule that says it without a look at them.
+  if (Math.abs(volume) > FLAT * owners.length * size * size * size) return false;
+  let area = 0;
+  for (let t = 0; t < owners.length; t++) area += triangleArea(positions, triangles, t);
+  return !(Math.abs(volume) > FLAT * area * size);
+}
+
 /** The surface that makes up most of a part, and whether the others are of another density. */
 function mainSurface(
   { positions, triangles, owners }: Part,
   substances: readonly Substance[],
-): { surface: number; area: number; mixed: boolean } {
+): { surface: number; mixed: boolean } {
+  if (owners.every((owner) => owner === owners[0])) return { surface: owners[0], mixed: false };
   const areas = new Map<number, number>();
-  let area = 0;
-  for (let t = 0; t < owners.length; ) {
-    const owner = owners[t];
-    // Triangles of one surface follow each other.
-    let run = 0;
-    for (; t < owners.length && owners[t] === owner; t++) run += triangleArea(positions, triangles, t);
-    areas.set(owner, (areas.get(owner) ?? 0) + run);
-    area += run;
-  }
+  owners.forEach((owner, t) => {
+    areas.set(owner, (areas.get(owner) ?? 0) + triangleArea(positions, triangles, t));
+  });
   let surface = owners[0];
-  for (const [owner, part] of areas) if (part > areas.get(surface)!) surface = owner;
+  for (const [owner, area] of areas) if (area > areas.get(surface)!) surface = owner;
   const { density } = substances[surface];
-  return { surface, area, mixed: [...areas.keys()].some((owner) => substances[owner].density !== density) };
+  return { surface, mixed: [...areas.keys()].some((owner) => substances[owner].density !== density) };
 }
