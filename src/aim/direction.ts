@@ -19,10 +19,10 @@ import {
 } from "../math/vec3.js";
 import { endOf, type Turn } from "./polish.js";
 import { momentumOf, type Problem, problemOf, spinOf } from "./problem.js";
-import { costOf, type OrderedWish, predictedRounding, type Ranked, rank } from "./ranking.js";
+import { costOf, type OrderedWish, type Ranked, rank } from "./ranking.js";
 import { search } from "./search.js";
 import { turningOf } from "./turning.js";
-import { type NearestWay, orderedWish, type Way, type WayWish } from "./ways.js";
+import { describeWay, MOST_MISS, type NearestWay, orderedWish, type WayWish, warningsFor } from "./way.js";
 
 export interface DirectionRequest {
   /** Principal moments in any order and unit. */
@@ -48,9 +48,8 @@ const SLIDES = 40;
 /** First and last step of a slide, rad within the flight. */
 const FIRST_SLIDE = 0.3;
 const LAST_SLIDE = 1e-3;
-/** A miss below this is left as it is, rad; one above the second is told. */
+/** A miss below this is left as it is, rad. */
 const GOOD = 1e-11;
-const MOST_MISS = 1e-9;
 const ROUNDS = 10;
 
 /**
@@ -60,7 +59,7 @@ const ROUNDS = 10;
 export function nearestDirectionWay(request: DirectionRequest, wish: WayWish): NearestWay {
   const turns = rolls(request);
   const problems = turns.map(problemOf);
-  const ordered = orderedWish(problems[0], wish);
+  const ordered = orderedWish(problems[0].body, wish);
   const wanted = ordered.turns ?? 0;
   let best: { problem: Problem; ranked: Ranked }[] = [];
   for (let reach = FIRST_REACH; reach < MOST_REACH && !(best[0]?.ranked.cost <= reach); reach *= 2) {
@@ -88,7 +87,7 @@ export function nearestDirectionWay(request: DirectionRequest, wish: WayWish): N
     throw new RangeError(
       "no free motion of this body turns the direction onto its target within the turns searched",
     );
-  return answer(request, problems[0], nearest);
+  return answer(request, problems[0], nearest, ordered);
 }
 
 /** The end poses that keep the direction along the target, with evenly spread rolls; the first by the smallest turn from release. */
@@ -191,19 +190,9 @@ function leastNorm([a, b]: [Vec3, Vec3], off: readonly [number, number]): Vec3 {
   return add(scale(a, u), scale(b, v));
 }
 
-function answer(request: DirectionRequest, { body }: Problem, found: Found): NearestWay {
+function answer(request: DirectionRequest, { body }: Problem, found: Found, wish: OrderedWish): NearestWay {
   const reached = problemOf({ ...request, end: found.end });
   const turning = turningOf(body, momentumOf(reached, found.spin), reached.end);
-  const [x, y, z] = body.fromOrdered(turning.share);
-  const way: Way = {
-    spin: found.spin,
-    turns: turning.turns,
-    turning: turning.turning,
-    share: [Math.abs(x), Math.abs(y), Math.abs(z)],
-    signedShare: body.fromOrdered(turning.signedShare),
-    miss: found.miss,
-    predictedRounding: predictedRounding(turning),
-  };
-  const warnings: string[] = [];
-  return { way, warnings };
+  const way = describeWay(body, found.spin, turning, found.miss);
+  return { way, warnings: warningsFor(way, wish) };
 }
