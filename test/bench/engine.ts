@@ -19,11 +19,7 @@ export class Engine {
   private constructor(private readonly world: RAPIER.World) {}
 
   static async load(): Promise<Engine> {
-    // its own loader passes parameters the old way and says so on every start
-    const { warn } = console;
-    console.warn = () => {};
     await RAPIER.init();
-    console.warn = warn;
     const world = new RAPIER.World({ x: 0, y: 0, z: 0 });
     world.timestep = 1 / STEPS_PER_SECOND;
     return new Engine(world);

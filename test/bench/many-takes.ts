@@ -49,7 +49,7 @@ export async function bakeForTable(count: number): Promise<void> {
     const varied = { ...withThrow(file, entry, { takes }), seed };
     const baked = await bake(varied, models);
     const record = formatRecord(await recordOf(varied, text, baked));
-    return baked.throws[0].file.content.length + record.length;
+    return baked.files[0].content.length + record.length;
   };
   await bytesOf(WARM_UP, "warm-up");
   const start = process.cpuUsage();
