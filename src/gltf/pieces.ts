@@ -2,6 +2,7 @@ import type { GLTF } from "@gltf-transform/core";
 import { GREATEST_COPIES, tooMuch } from "./budget.js";
 import { INSTANCING, instanceCount } from "./instancing.js";
 import type { GltfJson, Model } from "./model.js";
+import { isSkinned } from "./skin.js";
 import { hasTriangles } from "./triangles.js";
 
 /** A primitive with triangles that a node shows, once or as often as the node has instances. */
@@ -22,19 +23,18 @@ export function listPieces(model: Model, nodes: Iterable<number>, warnings: Set<
   const pieces: Piece[] = [];
   let total = 0;
   for (const node of nodes) {
-    const { mesh, skin, name, weights } = json.nodes![node];
+    const { mesh, name, weights } = json.nodes![node];
     if (mesh === undefined) continue;
-    let copies = instanceCount(json, node);
-    if (skin !== undefined && copies !== 1) {
-      warnings.add(`the node "${name ?? node}" is skinned and has instances (${INSTANCING}): read as one`);
-      copies = 1;
-    }
+    const instances = instanceCount(json, node);
     let primitives = shownBy.get(mesh);
     if (!primitives) {
       primitives = solidPrimitives(json, mesh, warnings);
       shownBy.set(mesh, primitives);
     }
     for (const { primitive, where } of primitives) {
+      const copies = isSkinned(json, node, primitive) ? 1 : instances;
+      if (copies !== instances)
+        warnings.add(`the node "${name ?? node}" is skinned and has instances (${INSTANCING}): read as one`);
       total += copies;
       if (total > GREATEST_COPIES) throw tooMuch(model);
       pieces.push({ node, primitive, where, copies, weights: weights ?? json.meshes![mesh].weights ?? [] });

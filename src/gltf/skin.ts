@@ -15,6 +15,10 @@ export function skinAccessors(json: GltfJson, node: number, primitive: GLTF.IMes
   ];
 }
 
+/** Whether joints place the primitive where that node shows it. */
+export const isSkinned = (json: GltfJson, node: number, primitive: GLTF.IMeshPrimitive): boolean =>
+  skinOf(json, node) !== undefined && influences(primitive).length > 0;
+
 /**
  * What places the vertices of skinned primitives: for a node and a primitive, the frame that takes a vertex into the scene,
  * the sum of its joints' frames, each after its inverse bind matrix, by weight (glTF 2.0, 3.7.3). Undefined where the

@@ -1,5 +1,6 @@
 import { readFileSync } from "node:fs";
 import fc from "fast-check";
+import { MeshoptEncoder } from "meshoptimizer/encoder";
 import { describe, expect, it } from "vitest";
 import { splitGlb } from "../../src/gltf/glb.js";
 import { ModelError } from "../../src/gltf/model.js";
@@ -7,8 +8,8 @@ import { readModel } from "../../src/gltf/read.js";
 import { spliceGlb } from "../../src/gltf/splice.js";
 import { readSurfaces } from "../../src/gltf/surfaces.js";
 import { DECODERS } from "../../src/node/draco.js";
-import { dracoGlb, meshoptGlb, open } from "./compressed.js";
-import { glbOf, graft } from "./models.js";
+import { dracoGlb, lossyMeshoptGlb, meshoptGlb, open } from "./compressed.js";
+import { bytesOf, FACES, glbOf, graft, TETRAHEDRON, tetrahedron } from "./models.js";
 import { volume } from "./volume.js";
 
 const file = (name: string) =>
@@ -46,6 +47,77 @@ describe("EXT_meshopt_compression", () => {
     },
   );
 
+  // Volume and area: test/data/props.json. 14 bits of an extent of 0.5 m at most, rounded to the nearest step.
+  it("club, quantised and filtered, holds the same within its rounding", async () => {
+    const packed = await lossyMeshoptGlb(await open(file("club")));
+    expect(new TextDecoder().decode(packed)).toMatch(
+      /KHR_mesh_quantization.*EXT_meshopt_compression|EXT_meshopt_compression.*KHR_mesh_quantization/s,
+    );
+    const moved = (Math.sqrt(3) / 2) * (0.5 / (2 ** 14 - 1));
+    expect(Math.abs((await volumeOf(packed)) - 0.0015235177307995546)).toBeLessThan(
+      0.11031648059097822 * moved,
+    );
+  });
+
+  it("undoes a filter, and reads plain sequences of indices", async () => {
+    // Halves and quarters have few digits: they come through the exponential filter exactly.
+    const filtered = MeshoptEncoder.encodeFilterExp(TETRAHEDRON, 4, 12, 15);
+    const positions = MeshoptEncoder.encodeVertexBuffer(filtered, 4, 12);
+    const indices = MeshoptEncoder.encodeIndexSequence(bytesOf(FACES), 12, 2);
+    const how = {
+      buffer: 0,
+      byteOffset: 0,
+      byteLength: positions.length,
+      byteStride: 12,
+      count: 4,
+      mode: "ATTRIBUTES",
+      filter: "EXPONENTIAL",
+    };
+    const sequence = {
+      buffer: 0,
+      byteOffset: positions.length,
+      byteLength: indices.length,
+      byteStride: 2,
+      count: 12,
+      mode: "INDICES",
+    };
+    let glb = new Uint8Array();
+    tetrahedron((json) => {
+      json.bufferViews[0] = {
+        buffer: 1,
+        byteLength: 48,
+        byteStride: 12,
+        extensions: { EXT_meshopt_compression: how },
+      };
+      json.bufferViews[1] = {
+        buffer: 1,
+        byteOffset: 48,
+        byteLength: 24,
+        extensions: { EXT_meshopt_compression: sequence },
+      };
+      json.buffers = [
+        { byteLength: positions.length + indices.length },
+        { byteLength: 72, extensions: { EXT_meshopt_compression: { fallback: true } } },
+      ];
+      glb = new Uint8Array(glbOf(json, bytesOf(positions, indices)));
+    });
+    // A sixth of the product of its three edges.
+    expect(await volumeOf(glb)).toBe((0.5 * 0.75 * 1) / 6);
+  });
+
+  it("whose first buffer has no content takes no clips: a GLB's first buffer has one", async () => {
+    const model = await readModel(
+      "m.gltf",
+      new TextEncoder().encode(
+        JSON.stringify({
+          asset: { version: "2.0" },
+          buffers: [{ byteLength: 4, extensions: { EXT_meshopt_compression: { fallback: true } } }],
+        }),
+      ),
+    );
+    expect(() => spliceGlb(model, graft())).toThrow("buffers[0] only keeps the place of compressed data");
+  });
+
   it("is read under its successor's name too", async () => {
     const renamed = changed(file("meshopt_lossless"), (json) => {
       const text = JSON.stringify(json).replaceAll("EXT_meshopt", "KHR_meshopt");
@@ -72,6 +144,13 @@ describe("EXT_meshopt_compression", () => {
     ["a stride that is no multiple of 4", (v) => (v.byteStride = 13), "byteStride is 13"],
     ["a stride of 4 GB", (v) => (v.byteStride = 2 ** 32), "byteStride is 4294967296"],
     ["another count", (v) => (v.count = 4609), "has 4609 elements"],
+    [
+      "triangles with two corners",
+      (_, json) => {
+        json.bufferViews[1].extensions.EXT_meshopt_compression.count -= 1;
+      },
+      "count is 27647; triangles have three corners each",
+    ],
     ["a range beyond its buffer", (v) => (v.byteLength = 60_000), "ends at byte 60000"],
     ["a buffer without content", (v) => (v.buffer = 1), "buffer is 1; that buffer has no content"],
     [
@@ -115,6 +194,18 @@ describe("KHR_draco_mesh_compression", () => {
       const moved = (Math.sqrt(3) / 2) * (extent / (2 ** bits - 1));
       expect(Math.abs((await volumeOf(packed)) - held)).toBeLessThan(1.001 * area * moved);
     }
+  });
+
+  it("holds integers, normalised or not", async () => {
+    const packed = await dracoGlb(await open(file("quantised_i16")), "SEQUENTIAL", 16);
+    expect(new TextDecoder().decode(packed)).toContain("KHR_draco_mesh_compression");
+    // Volume: test/data/props.json. Integers are kept.
+    expect((await volumeOf(packed)) / 0.0625).toBeCloseTo(1, 12);
+    const normalised = changed(packed, (json) => {
+      json.accessors[json.meshes[0].primitives[0].attributes.POSITION].normalized = true;
+    });
+    // 32767 is 1 (glTF 2.0, 3.11).
+    expect(((await volumeOf(normalised)) * 32767 ** 3) / 0.0625).toBeCloseTo(1, 12);
   });
 
   it("holds joints and weights", async () => {

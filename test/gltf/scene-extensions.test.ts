@@ -1,4 +1,6 @@
+import { readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
+import { splitGlb } from "../../src/gltf/glb.js";
 import { ModelError } from "../../src/gltf/model.js";
 import { readModel } from "../../src/gltf/read.js";
 import { readSurfaces } from "../../src/gltf/surfaces.js";
@@ -83,6 +85,37 @@ describe("EXT_mesh_gpu_instancing", () => {
   ])("with %s is refused", async (_, change, message) => {
     await expect(readInstanced(change)).rejects.toThrow(ModelError);
     await expect(readInstanced(change)).rejects.toThrow(message);
+  });
+
+  it("of a skinned mesh, which stands where its joints are, are one, and said", async () => {
+    const { json, binary } = splitGlb(
+      "m",
+      readFileSync(new URL("../data/props/skin_bind_pose.glb", import.meta.url)),
+    );
+    const changed = JSON.parse(new TextDecoder().decode(json));
+    const TRANSLATION = changed.accessors.push({ componentType: 5126, count: 3, type: "VEC3" }) - 1;
+    for (const node of changed.nodes)
+      if (node.skin !== undefined)
+        Object.assign(node, {
+          name: "arm",
+          extensions: { EXT_mesh_gpu_instancing: { attributes: { TRANSLATION } } },
+        });
+    const { surfaces, warnings } = await readSurfaces(await readModel("m", glbOf(changed, binary)));
+    // Volume: test/data/props.json.
+    expect(volume(surfaces) / 0.0390625).toBeCloseTo(1, 12);
+    expect(warnings).toEqual([
+      'the node "arm" is skinned and has instances (EXT_mesh_gpu_instancing): read as one',
+    ]);
+  });
+
+  it("of a node with a skin whose mesh has no joints are counted", async () => {
+    const { surfaces, warnings } = await readInstanced((json) => {
+      json.nodes.push({ name: "joint" });
+      json.skins = [{ joints: [1] }];
+      json.nodes[0].skin = 0;
+    });
+    expect(surfaces).toHaveLength(3);
+    expect(warnings).toEqual([]);
   });
 
   it("so many that they would fill the memory are refused", async () => {
