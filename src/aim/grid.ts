@@ -29,8 +29,8 @@ export interface Link {
 
 /** Points of the even grid over a whole period of the curve. */
 const EVEN = 96;
-/** Points drawn together towards a crossing of the separatrix, each a quarter as far from it as the one before. */
-const TOWARDS_CROSSING = 20;
+/** Points drawn together towards a crossing of the separatrix, each half as far from it as the one before. */
+const TOWARDS_CROSSING = 40;
 /** Below this width, rad, cells are not divided: an angle has no more digits. */
 const NARROWEST = 4e-15;
 /** What may change within a cell, rad: an amplitude, or the azimuth asked; and the azimuth reached. */
@@ -101,7 +101,7 @@ function startingAngles(curve: Curve, even: number): number[] {
   for (let i = 0; i <= even + 1; i++) angles.push(i * step);
   for (const crossing of curve.crossings)
     for (const side of [-1, 1])
-      for (let i = 0, far = step; i < TOWARDS_CROSSING; i++, far /= 4)
+      for (let i = 0, far = step; i < TOWARDS_CROSSING; i++, far /= 2)
         angles.push(into(crossing + side * far));
   const ascending = angles.sort((a, b) => a - b);
   return ascending.filter((angle, i) => i === 0 || angle > ascending[i - 1]);
