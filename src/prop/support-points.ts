@@ -3,15 +3,18 @@ import type { Support } from "./support.js";
 
 /** Points in a leaf: so few are quicker looked at than divided. */
 const LEAF = 12;
+/** Of a box's points, that either half has at least: so many levels at most, log 1e9 / log(8/7), and a few. */
+const LEAST_SHARE = 1 / 8;
+const MOST_DEPTH = 192;
 
 /**
  * The support of a cloud of points (3 numbers each, from the centre of mass): exactly the lowest of them all, found without looking at
- * most. The points are halved again and again along the longest side of their box; a box whose lowest corner lies no lower than the lowest point
+ * most. The points are divided again and again across the longest side of their box; a box whose lowest corner lies no lower than the lowest point
  * found is passed over (branch and bound).
  */
 export function pointsSupport(source: Float64Array): Support {
   const { points, nodes, boxes } = divide(source);
-  const stack = new Int32Array(64);
+  const stack = new Int32Array(MOST_DEPTH);
 
   return {
     lowest([x, y, z]): Vec3 {
@@ -70,8 +73,7 @@ function divide(source: Float64Array): Divided {
     boxes.push(...box);
     if (to - from <= LEAF) continue;
     const axis = box[3] >= box[4] && box[3] >= box[5] ? 0 : box[4] >= box[5] ? 1 : 2;
-    order.subarray(from, to).sort((a, b) => source[3 * a + axis] - source[3 * b + axis] || a - b);
-    const middle = (from + to) >>> 1;
+    const middle = from + halve(source, order.subarray(from, to), axis, box[axis]);
     nodes[3 * node + 2] = nodes.length / 3;
     nodes.push(from, middle, 0, middle, to, 0);
   }
@@ -84,6 +86,20 @@ function divide(source: Float64Array): Divided {
     nodes: Int32Array.from(nodes, (value, i) => (i % 3 === 2 ? value : 3 * value)),
     boxes: Float64Array.from(boxes),
   };
+}
+
+/** Puts those below a coordinate first and answers how many; where these or the others are few, the lower half. */
+function halve(source: Float64Array, order: Uint32Array, axis: number, coordinate: number): number {
+  let low = 0;
+  for (let i = 0; i < order.length; i++) {
+    const index = order[i];
+    if (source[3 * index + axis] >= coordinate) continue;
+    order[i] = order[low];
+    order[low++] = index;
+  }
+  if (Math.min(low, order.length - low) >= LEAST_SHARE * order.length) return low;
+  order.sort((a, b) => source[3 * a + axis] - source[3 * b + axis] || a - b);
+  return order.length >>> 1;
 }
 
 function boxOf(source: Float64Array, indices: Uint32Array): number[] {

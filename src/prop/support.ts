@@ -1,4 +1,5 @@
 import { length, scale, subtract, type Vec3 } from "../math/vec3.js";
+import { convexHull } from "./hull.js";
 import type { Prop } from "./prop.js";
 import type { Shape } from "./shape-kind.js";
 import { pointsSupport } from "./support-points.js";
@@ -13,7 +14,7 @@ export interface Support {
 }
 
 /**
- * The support of a weighed prop: exact for a shape (a sphere is a sphere, not its mesh; a ring its convex hull) and for a mesh that of its vertices.
+ * The support of a weighed prop: exact for a shape (a sphere is a sphere, not its mesh; a ring its convex hull), and for a mesh that of its vertices to 1e-13 of its size.
  *
  * @param shape what the prop was weighed from, where that was a shape
  */
@@ -21,7 +22,13 @@ export function propSupport(prop: Prop, shape?: Shape): Support {
   const { centerOfMass } = prop;
   if (!shape) {
     const points = prop.extremes.map((value, i) => value - centerOfMass[i % 3]);
-    return pointsSupport(points);
+    const hull = convexHull(points);
+    if (!hull) return pointsSupport(points);
+    const corners = new Float64Array(3 * hull.corners.length);
+    hull.corners.forEach((corner, i) => {
+      corners.set(points.subarray(3 * corner, 3 * corner + 3), 3 * i);
+    });
+    return pointsSupport(corners);
   }
   const lowest = shapeLowest(shape);
   return { lowest: (direction) => subtract(scale(lowest(direction), prop.scale), centerOfMass) };

@@ -81,10 +81,11 @@ describe("the support of a mesh", () => {
   it("is that of its lowest vertex", async () => {
     const prop = await weigh("egg", shapeModel("egg", { ellipsoid: [0.1, 0.2, 0.3] }));
     const next = random(4);
+    const support = propSupport(prop);
     const arms = prop.extremes.map((value, i) => value - prop.centerOfMass[i % 3]);
     for (let i = 0; i < 100; i++) {
       const d = anyDirection(next);
-      expect(dot(propSupport(prop).lowest(d), d)).toBe(brute(arms, d));
+      expect(dot(support.lowest(d), d)).toBeCloseTo(brute(arms, d), 13);
     }
   });
 
