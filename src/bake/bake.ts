@@ -1,18 +1,17 @@
 /** The one place that runs the line: draw, aim, fly, cut, splice. */
 
 import type { Track } from "../clip/track.js";
-import { type Graft, spliceGlb } from "../gltf/splice.js";
+import type { NamedFile } from "../gltf/splice.js";
 import { RequestError } from "../math/request-error.js";
 import { rounded } from "../math/rounded.js";
 import type { Prop } from "../prop/prop.js";
 import { throwFileError } from "../throwfile/errors.js";
 import { type ThrowEntry, type ThrowFile, takeNumbers } from "../throwfile/types.js";
-import { type NamedTrack, oneNodeGraft, twoNodeGraft } from "./graft.js";
+import { clipFiles, type FiledClip, fileName } from "./files.js";
 import { hostFrame } from "./host.js";
 import { UnheldLimits } from "./limits.js";
 import { type MotionState, motionState, turnTimes } from "./motion.js";
 import { type Nearest, nearestFinder } from "./nearest.js";
-import { nodeGraft } from "./node-graft.js";
 import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
 import { cutTake, solveTake, type Take } from "./take.js";
 
@@ -20,6 +19,8 @@ import { cutTake, solveTake, type Take } from "./take.js";
 export interface BakedTake {
   /** Of the clip. */
   name: string;
+  /** Name of the file that holds it. */
+  file: string;
   take: Take;
   track: Track;
   /** In the host's coordinates. */
@@ -31,8 +32,6 @@ export interface BakedTake {
 export interface BakedThrow {
   entry: ThrowEntry;
   takes: BakedTake[];
-  /** The file of the throw: its name within the output folder, and its bytes. */
-  file: { name: string; content: Uint8Array };
 }
 
 export interface Bake {
@@ -40,6 +39,8 @@ export interface Bake {
   props: Map<string, LoadedProp>;
   /** Those of which there is a take. */
   throws: BakedThrow[];
+  /** What is to be written, by names within the output folder. */
+  files: NamedFile[];
   /** Takes left out, as none of their candidates holds the throw's limits: the name of the clip that would have been, and why. */
   unheld: { name: string; reason: UnheldLimits }[];
 }
@@ -60,6 +61,7 @@ export interface BakeOptions {
  *   and for `takes` that no throw has
  */
 export async function bake(file: ThrowFile, source: ModelSource, options: BakeOptions = {}): Promise<Bake> {
+  checkWhole(file, options);
   const chosen = selectTakes(selectThrows(file, options.only), options.takes);
   const props = await loadProps(file, new Set(chosen.map(({ entry }) => entry.prop)), source);
   const total = chosen.reduce((sum, { numbers }) => sum + numbers.length, 0);
@@ -69,7 +71,17 @@ export async function bake(file: ThrowFile, source: ModelSource, options: BakeOp
     const onTake = () => options.onTake?.(++done, total);
     return bakeThrow(file, entry, numbers, props.get(entry.prop) as LoadedProp, unheld, onTake) ?? [];
   });
-  return { props, throws, unheld };
+  return { props, throws, files: filesOf(file, throws, props), unheld };
+}
+
+/** A file of all throws is made of all. */
+function checkWhole(file: ThrowFile, { only }: BakeOptions): void {
+  if (file.bake.files === "together" && only && only.length < file.throws.size)
+    throw new RequestError(
+      ["--only"],
+      "one file holds the clips of all throws (bake.files is together), so that some cannot be baked alone",
+      "leave --only out, or write per-throw",
+    );
 }
 
 function selectThrows(file: ThrowFile, only?: readonly string[]): ThrowEntry[] {
@@ -106,7 +118,7 @@ function bakeThrow(
   file: ThrowFile,
   entry: ThrowEntry,
   numbers: readonly number[],
-  { prop, model }: LoadedProp,
+  { prop }: LoadedProp,
   unheld: Bake["unheld"],
   onTake: () => void,
 ): BakedThrow | undefined {
@@ -119,14 +131,7 @@ function bakeThrow(
       unheld.push({ name: clipName(entry, number), reason: baked });
       return [];
     });
-    if (takes.length === 0) return undefined;
-    const clips = takes.map((baked) => ({
-      name: baked.name,
-      track: baked.track,
-      extras: rounded(clipExtras(entry, baked)),
-    }));
-    const content = spliceGlb(model, graftOf(file, prop, clips));
-    return { entry, takes, file: { name: `${entry.name}.glb`, content } };
+    return takes.length === 0 ? undefined : { entry, takes };
   } catch (error) {
     if (!(error instanceof RequestError)) throw error;
     const path = error.path[0] === "bake" ? error.path : ["throws", entry.name, ...error.path];
@@ -134,9 +139,23 @@ function bakeThrow(
   }
 }
 
-function graftOf(file: ThrowFile, prop: Prop, clips: NamedTrack[]): Graft {
-  if (prop.node) return nodeGraft(prop.node, prop.scale, clips);
-  return file.bake.layout === "two-node" ? twoNodeGraft(prop, clips) : oneNodeGraft(prop, clips);
+function filesOf(file: ThrowFile, throws: readonly BakedThrow[], props: Bake["props"]): NamedFile[] {
+  const clips = throws.flatMap(({ entry, takes }) =>
+    takes.map(
+      (baked): FiledClip => ({
+        name: baked.name,
+        track: baked.track,
+        extras: rounded(clipExtras(entry, baked)),
+        throwName: entry.name,
+        prop: props.get(entry.prop) as LoadedProp,
+      }),
+    ),
+  );
+  try {
+    return clipFiles(file, clips);
+  } catch (error) {
+    throw error instanceof RequestError ? throwFileError(file, error) : error;
+  }
 }
 
 function bakeTake(
@@ -148,10 +167,12 @@ function bakeTake(
 ): BakedTake | UnheldLimits {
   const take = attempt(() => solveTake(file, entry, prop, number));
   if (take instanceof UnheldLimits) return take;
+  const name = clipName(entry, number);
   const { flight } = take;
   const host = hostFrame(file.host).fromWorld;
   return {
-    name: clipName(entry, number),
+    name,
+    file: fileName(file, entry.name, name),
     take,
     track: cutTake(file, prop, take),
     release: motionState(flight, prop, 0, host),

@@ -48,10 +48,7 @@ export const bakeCommand = (answer: (code: number) => void) =>
       const fresh = await recordOf(file, text, baked);
       if (!options.dryRun) {
         const record = await mergeRecord(options.output, fresh, file);
-        const files = [
-          ...baked.throws.map((baked) => baked.file),
-          { name: "takes.json", content: formatRecord(record) },
-        ];
+        const files = [...baked.files, { name: "takes.json", content: formatRecord(record) }];
         await spareInputs(
           options.output,
           files.map(({ name }) => name),

@@ -69,7 +69,7 @@ async function compareWithBake(path: string, folder: string): Promise<Comparison
   const shown = progress();
   const baked = await bake(opened.file, opened.models, { onTake: shown.update }).finally(shown.end);
   const now = await recordOf(opened.file, opened.text, baked);
-  const contents = new Map(baked.throws.map(({ file }) => [file.name, file.content]));
+  const contents = new Map(baked.files.map(({ name, content }) => [name, content]));
   const files = [
     ...(await compareFiles([now, before.record], async (name) => contents.get(name), contentsOf(folder))),
     ...(await checkFolder(folder, now, modelsIn(folder, path, opened))),

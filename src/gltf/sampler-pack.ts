@@ -29,7 +29,8 @@ export class SamplerPack {
       samplers: clip.channels.map(({ path, interpolation, times, values }) => ({
         input: this.#add(times, "SCALAR"),
         output: this.#add(values, outputType(path)),
-        interpolation,
+        // What a reader takes where nothing is said (glTF 2.0, 5.5).
+        ...(interpolation !== "LINEAR" && { interpolation }),
       })),
     };
   }

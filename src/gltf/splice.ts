@@ -11,6 +11,12 @@ import { bytesDataUri, isDataUri } from "./uri.js";
 
 export type { ClipChannel, Graft, NewClip, NewNode, Rest } from "./graft.js";
 
+/** A file by its name within a folder. */
+export interface NamedFile {
+  name: string;
+  content: Uint8Array;
+}
+
 /**
  * The model with new nodes and clips, as a GLB that needs no other file. They are added at the ends of the model's lists,
  * their keys in one buffer view behind its bytes; of what was there, only this changes: the default scene's roots, the
@@ -20,6 +26,26 @@ export type { ClipChannel, Graft, NewClip, NewNode, Rest } from "./graft.js";
  * and scale, or an external image is of an unknown kind.
  */
 export function spliceGlb(model: Model, graft: Graft): Uint8Array {
+  const { text, binary } = splice(model, graft);
+  return joinGlb({
+    json: new TextEncoder().encode(text),
+    ...(binary.length > 0 && { binary }),
+    ...(model.otherChunks && { others: model.otherChunks }),
+  });
+}
+
+/**
+ * The same as a .gltf and a .bin beside it, `stem` their common name; what the model had in other files is in the .bin too. Chunks
+ * of a GLB that only its extensions know have no place in them and are left out.
+ */
+export function spliceGltf(model: Model, graft: Graft, stem: string): NamedFile[] {
+  const { text, binary } = splice(model, graft, `${encodeURIComponent(stem)}.bin`);
+  const json = { name: `${stem}.gltf`, content: new TextEncoder().encode(text) };
+  return binary.length > 0 ? [{ name: `${stem}.bin`, content: binary }, json] : [json];
+}
+
+/** The JSON's text and the bytes of buffer 0; `uri` is where these are to be found, if not in the same file. */
+function splice(model: Model, graft: Graft, uri?: string): { text: string; binary: Uint8Array } {
   const { json } = model;
   checkClipNames(
     model.name,
@@ -66,12 +92,8 @@ export function spliceGlb(model: Model, graft: Graft): Uint8Array {
     edit.replace(["images", i], "uri", { bufferView, ...(!json.images![i].mimeType && { mimeType }) });
   }
   edit.append("bufferViews", views);
-  embedBuffers(model, binary.byteLength, edit);
-  return joinGlb({
-    json: new TextEncoder().encode(edit.result()),
-    ...(binary.byteLength > 0 && { binary: binary.bytes() }),
-    ...(model.otherChunks && { others: model.otherChunks }),
-  });
+  embedBuffers(model, binary.byteLength, uri, edit);
+  return { text: edit.result(), binary: binary.bytes() };
 }
 
 function addNodes({ json }: Model, { nodes }: Graft, edit: JsonEdit): void {
@@ -128,16 +150,22 @@ function setRests({ json, name }: Model, { clips, rests = [] }: Graft, edit: Jso
   }
 }
 
-/** Buffer 0 is the GLB's binary chunk, with our bytes behind its own; other external ones are written out in the JSON. */
-function embedBuffers({ json, buffers }: Model, byteLength: number, edit: JsonEdit): void {
+/** Buffer 0 is the GLB's binary chunk or the file at `place`, with our bytes behind its own; other external ones are written out in the JSON. */
+function embedBuffers(
+  { json, buffers }: Model,
+  byteLength: number,
+  place: string | undefined,
+  edit: JsonEdit,
+): void {
   if (buffers.length === 0) {
-    if (byteLength > 0) edit.append("buffers", [{ byteLength }]);
+    if (byteLength > 0) edit.append("buffers", [{ ...(place && { uri: place }), byteLength }]);
     return;
   }
   json.buffers!.forEach(({ uri }, i) => {
     if (i === 0) {
       edit.set(["buffers", 0], "byteLength", byteLength);
-      if (uri !== undefined) edit.remove(["buffers", 0], "uri");
+      if (place !== undefined) edit.set(["buffers", 0], "uri", place);
+      else if (uri !== undefined) edit.remove(["buffers", 0], "uri");
     } else if (uri !== undefined && !isDataUri(uri))
       edit.set(["buffers", i], "uri", bytesDataUri(buffers[i]));
   });

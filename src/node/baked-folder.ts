@@ -46,7 +46,7 @@ export async function compareFiles(
 }
 
 /**
- * What a folder lacks of the files of a record, and the .glb files it holds beside those.
+ * What a folder lacks of the files of a record, and the .glb and .gltf files it holds beside those.
  *
  * @param known names of files that are others', such as the models thrown
  */
@@ -66,9 +66,15 @@ export async function checkFolder(
   return [
     ...[...wanted].filter((name) => !present.has(name)).map((name) => ({ name, state: "missing" as const })),
     ...[...present]
-      .filter((name) => name.endsWith(".glb") && !wanted.has(name) && !known.has(name))
+      .filter((name) => /\.gl(b|tf)$/.test(name) && !wanted.has(name) && !known.has(name))
       .map((name) => ({ name, state: "stray" as const })),
   ];
 }
 
-const filesOf = (record: TakesRecord): Set<string> => new Set(record.clips.map((clip) => clip.file));
+/** A .gltf has its bytes in a .bin of the same name. */
+const filesOf = (record: TakesRecord): Set<string> =>
+  new Set(
+    record.clips.flatMap(({ file }) =>
+      file.endsWith(".gltf") ? [file, file.replace(/\.gltf$/, ".bin")] : [file],
+    ),
+  );

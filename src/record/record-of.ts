@@ -44,12 +44,7 @@ export function propRecord({ prop, source, sha256 }: LoadedProp): PropRecord {
   };
 }
 
-function clipRecord(
-  file: ThrowFile,
-  prop: Prop,
-  { entry, file: { name } }: BakedThrow,
-  baked: BakedTake,
-): ClipRecord {
+function clipRecord(file: ThrowFile, prop: Prop, { entry }: BakedThrow, baked: BakedTake): ClipRecord {
   const { take, track, release, arrival, nearest } = baked;
   const { flight, aimed } = take;
   return {
@@ -57,7 +52,7 @@ function clipRecord(
     throw: entry.name,
     take: take.number,
     prop: entry.prop,
-    file: name,
+    file: baked.file,
     duration: flight.duration,
     turns: turnsAboutMomentum(flight),
     share: axisShares(flight),

@@ -12,8 +12,6 @@ interface NotYet {
   readonly key: string;
   /** What is missing. */
   readonly missing: string;
-  /** The one value that works already. */
-  readonly save?: unknown;
   /** The one value that does not work yet. */
   readonly alone?: unknown;
 }
@@ -24,9 +22,6 @@ export const NOT_YET: readonly NotYet[] = [
   { key: "throws.*.hold", missing: "no clip stands still before or after its flight" },
   { key: "chains", missing: "throws are not joined" },
   { key: "bake.layout", missing: "no throw is solved for its turning alone", alone: "turn-only" },
-  { key: "bake.files", missing: "clips are not spread over files in another way", save: "per-throw" },
-  { key: "bake.container", missing: "no .gltf is written", save: "glb" },
-  { key: "bake.mesh", missing: "the mesh is always written", save: true },
 ];
 
 export function checkNotYet(
@@ -34,14 +29,15 @@ export function checkNotYet(
   tell: (path: KeyPath, fault: string, remedy: string) => void,
   table: readonly NotYet[] = NOT_YET,
 ): void {
-  for (const { key, missing, save, alone } of table)
+  for (const { key, missing, alone } of table)
     for (const [path, node] of matches(root, key.split("."))) {
-      if (node.kind === "value" && (node.value === undefined || (save !== undefined && node.value === save)))
+      if (
+        node.kind === "value" &&
+        (node.value === undefined || (alone !== undefined && node.value !== alone))
+      )
         continue;
-      if (node.kind === "value" && alone !== undefined && node.value !== alone) continue;
       const found = node.kind === "value" ? ` (found ${shown(plain(node))})` : "";
-      const right = save === undefined ? "leave this key out" : `leave this key out, or write ${shown(save)}`;
-      tell(path, `not there yet: ${missing}${found}`, right);
+      tell(path, `not there yet: ${missing}${found}`, "leave this key out");
     }
 }
 

@@ -23,7 +23,7 @@ export async function baked(text: string, models: Record<string, Uint8Array> = {
   return {
     bake: made,
     record: await recordOf(file, text, made),
-    glb: (name) => made.throws.find(({ entry }) => entry.name === name)!.file.content,
+    glb: (name) => made.files.find((file) => file.name === `${name}.glb`)!.content,
   };
 }
 

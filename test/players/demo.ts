@@ -15,7 +15,7 @@ export async function bakeDemo() {
   return {
     file,
     props,
-    files: baked.throws.map((baked) => baked.file),
+    files: baked.files,
     record: await recordOf(file, text, baked),
   };
 }

@@ -73,7 +73,7 @@ describe.each([
   });
 
   it("is valid, and only that node moves", async () => {
-    const { content } = baked.throws[0].file;
+    const { content } = baked.files[0];
     const report = await validateBytes(new Uint8Array(content));
     expect(report.issues.messages.filter(({ severity }: { severity: number }) => severity <= 1)).toEqual([]);
     const { json } = await readModel("baked", content);
@@ -96,7 +96,7 @@ describe.each([
   it.each([three, babylon])(
     "$name shows every take within its stated error of the true flight",
     async (player) => {
-      const opened = await player.open(baked.throws[0].file.content);
+      const opened = await player.open(baked.files[0].content);
       const { prop } = baked.props.get("lamp")!;
       for (const { name, take, track } of baked.throws[0].takes) {
         const { flight } = take;
@@ -127,7 +127,7 @@ describe.each([
   );
 
   it("rests at the first key where there is one clip, as modelled where there are more", async () => {
-    const { scene } = await new GLTFLoader().parseAsync(baked.throws[0].file.content.slice().buffer, "");
+    const { scene } = await new GLTFLoader().parseAsync(baked.files[0].content.slice().buffer, "");
     scene.updateMatrixWorld(true);
     const shown = new Vector3(0, 0, 1).applyMatrix4(scene.getObjectByName("prop")!.matrixWorld).toArray();
     const { prop } = baked.props.get("lamp")!;

@@ -34,7 +34,7 @@ export async function bakeText(text: string): Promise<BakedLob> {
     file,
     record,
     text: formatRecord(record),
-    contents: new Map(baked.throws.map((baked) => [baked.file.name, baked.file.content])),
+    contents: new Map(baked.files.map(({ name, content }) => [name, content])),
   };
 }
 

@@ -1,0 +1,66 @@
+/** Which files the clips of a bake go into, and what those hold. */
+
+import { bareModel } from "../gltf/bare-model.js";
+import { type Graft, type NamedFile, spliceGlb, spliceGltf } from "../gltf/splice.js";
+import { RequestError } from "../math/request-error.js";
+import type { Prop } from "../prop/prop.js";
+import type { BakeSettings, ThrowFile } from "../throwfile/types.js";
+import { type NamedTrack, oneNodeGraft, twoNodeGraft } from "./graft.js";
+import { nodeGraft } from "./node-graft.js";
+import type { LoadedProp } from "./props.js";
+
+/** A clip, and what decides which file it is in. */
+export interface FiledClip extends NamedTrack {
+  throwName: string;
+  prop: LoadedProp;
+}
+
+/** Name of the file that a clip is in: of its throw, of itself, or of the throw file. */
+export function fileName(file: ThrowFile, throwName: string, clipName: string): string {
+  const { files, container } = file.bake;
+  const stem = { "per-throw": throwName, "per-take": clipName, together: throwFileStem(file) }[files];
+  return `${stem}.${container}`;
+}
+
+/**
+ * The files of these clips, in their order; a .gltf comes after its .bin.
+ *
+ * @throws ModelError where a model cannot take the clips; RequestError where clips of several props are to be together
+ */
+export function clipFiles(file: ThrowFile, clips: readonly FiledClip[]): NamedFile[] {
+  const groups = new Map<string, FiledClip[]>();
+  for (const clip of clips) {
+    const name = fileName(file, clip.throwName, clip.name);
+    groups.set(name, [...(groups.get(name) ?? []), clip]);
+  }
+  return Array.from(groups, ([name, group]) => written(file, name, group)).flat();
+}
+
+function written({ bake }: ThrowFile, name: string, clips: readonly FiledClip[]): NamedFile[] {
+  const [{ prop: loaded }] = clips;
+  const { prop } = loaded;
+  if (clips.some((clip) => clip.prop !== loaded))
+    throw new RequestError(
+      ["bake", "files"],
+      `throws of several props do not go into one file (found together and ${propNames(clips).join(", ")})`,
+      "per-throw, per-take, or a throw file for each prop",
+    );
+  const model = bake.mesh ? loaded.model : bareModel(loaded.model, prop.node !== undefined);
+  const graft = graftOf(bake, prop, clips);
+  return bake.container === "gltf"
+    ? spliceGltf(model, graft, name.slice(0, name.lastIndexOf(".")))
+    : [{ name, content: spliceGlb(model, graft) }];
+}
+
+const propNames = (clips: readonly FiledClip[]) => [
+  ...new Set(clips.map(({ prop }) => `"${prop.prop.name}"`)),
+];
+
+function graftOf({ layout }: BakeSettings, prop: Prop, clips: readonly NamedTrack[]): Graft {
+  if (prop.node) return nodeGraft(prop.node, prop.scale, clips);
+  return layout === "two-node" ? twoNodeGraft(prop, clips) : oneNodeGraft(prop, clips);
+}
+
+/** The throw file's name without its folder and endings: quay.throws.yaml is "quay". */
+const throwFileStem = ({ name }: ThrowFile): string =>
+  name.replace(/^.*[\\/]/, "").replace(/(\.throws)?\.(ya?ml|json)$/i, "");
