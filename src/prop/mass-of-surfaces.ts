@@ -4,6 +4,7 @@ import { findParts } from "./closed-parts.js";
 import { withoutDoubles } from "./doubles.js";
 import { withoutLayers } from "./layers.js";
 import { combine, type MassProperties } from "./mass.js";
+import { massOfHull } from "./mass-of-hull.js";
 import { massOfParts, type Substance } from "./mass-of-parts.js";
 import { massOfWalls, type Walls } from "./mass-of-walls.js";
 import { DOUBLED, mend } from "./mend.js";
@@ -37,14 +38,14 @@ export function massOfSurfaces(
   substances: readonly Substance[],
   solidity: Solidity,
 ): { body: MassProperties; warnings: string[] } {
-  if (solidity.solid === "hull")
-    throw new RequestError(["solid"], "hull is not worked out yet", "needs auto or surface");
   const notes = new Notes();
   const labelOf: LabelOf = ({ owners }) => substances[owners[0]].label;
   const { bodies, walls } =
-    solidity.solid === "surface"
-      ? { bodies: [], walls: [{ mesh: oneLayer(meshes, labelOf, notes), share: 1 }] }
-      : solidsAndWalls(meshes, substances, solidity.isWallStated, labelOf, notes);
+    solidity.solid === "hull"
+      ? { bodies: [massOfHull(meshes, substances, notes)], walls: [] }
+      : solidity.solid === "surface"
+        ? { bodies: [], walls: [{ mesh: oneLayer(meshes, labelOf, notes), share: 1 }] }
+        : solidsAndWalls(meshes, substances, solidity.isWallStated, labelOf, notes);
   const all = [...bodies, ...massOfWalls(walls, substances, solidity.wall)];
   const body = all.length > 0 ? combine(all) : undefined;
   if (!body || !(body.mass > 0))
@@ -56,9 +57,9 @@ export function massOfSurfaces(
       "make each cavity lie within the solid around it, or use a shape, or state mass, centerOfMass and inertia",
     );
   const warnings = notes.list();
-  if (solidity.solid === "auto" && solidity.isWallStated && walls.length === 0)
+  if (solidity.isWallStated && walls.length === 0)
     warnings.push(
-      "wall changes nothing: all parts are closed, and solid; solid: surface makes thin walls of them",
+      `wall changes nothing: ${solidity.solid === "hull" ? "the hull is" : "all parts are closed, and"} solid; solid: surface makes thin walls of the faces`,
     );
   return { body, warnings };
 }

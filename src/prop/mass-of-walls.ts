@@ -9,17 +9,19 @@ export interface Walls {
   readonly share: number;
 }
 
-/** Bodies of thin surfaces, one for each mesh and substance: mass = density × wall × area, inertia of the surface. `wall` in m. */
+/** Bodies of thin surfaces, one for each mesh and surface with an area: mass = density × wall × area, inertia of the surface. `wall` in m. */
 export function massOfWalls(
   walls: readonly Walls[],
   substances: readonly Substance[],
   wall: number,
 ): MassProperties[] {
-  return walls.flatMap(({ mesh, share }) =>
-    byOwner(mesh).map(({ positions, triangles, owners }) =>
-      scaleDensity(sheetIntegrals(positions, triangles), substances[owners[0]].density * wall * share),
-    ),
-  );
+  return walls
+    .flatMap(({ mesh, share }) =>
+      byOwner(mesh).map(({ positions, triangles, owners }) =>
+        scaleDensity(sheetIntegrals(positions, triangles), substances[owners[0]].density * wall * share),
+      ),
+    )
+    .filter(({ mass }) => mass > 0);
 }
 
 function byOwner(mesh: Triangles): Triangles[] {

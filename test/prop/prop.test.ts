@@ -130,7 +130,7 @@ describe("meshes that are no solids", () => {
   test("that are closed are no walls though a wall is stated, unless solid: surface says so", async () => {
     const prop = await weigh("L", ell, { wall: 0.004 });
     expect(prop.warnings).toEqual([
-      "wall changes nothing: all parts are closed, and solid; solid: surface makes thin walls of them",
+      "wall changes nothing: all parts are closed, and solid; solid: surface makes thin walls of the faces",
     ]);
     // 0.625 m²: test/data/props.json
     const hollow = await weigh("L", ell, { wall: 0.004, solid: "surface" });
