@@ -51,6 +51,15 @@ describe("a first touch against closed forms", () => {
     expect(firstTouch(body, floor(-0.5))).toBeCloseTo(Math.PI / 12, 12);
   });
 
+  it("a weight on a weightless arm, swung over the top, touches at the angle whose cosine is the floor's height", () => {
+    // Nothing sinks with a greater acceleration than this, rate² times arm, at the top: steps that are too long go through the floor.
+    const weight = { support: pointsSupport(Float64Array.of(0, 1, 0)), reach: 1 };
+    for (const height of [0.999, 0.9, 0.5, 0.01]) {
+      const body = flyingBody({ gravity: [0, 0, 0], spin: [0, 0, 3], duration: 2 }, weight);
+      expect(firstTouch(body, floor(height))).toBeCloseTo(Math.acos(height) / 3, 11);
+    }
+  });
+
   it("a rod that only grazes the floor touches, and one a billionth higher does not", () => {
     const graze = (height: number) =>
       firstTouch(
