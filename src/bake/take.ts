@@ -1,5 +1,6 @@
 /** One take: the first of its candidates that has a flight, flown and cut into keys. */
 
+import { type AimedArrival, type ArrivalWish, solveArrival } from "../aim/arrival.js";
 import { type AimedLaunch, type LaunchWish, solveLaunch } from "../aim/launch.js";
 import type { Body } from "../clip/body.js";
 import { clipTrack } from "../clip/clip-track.js";
@@ -19,15 +20,15 @@ import { brokenLimits, UnheldLimits } from "./limits.js";
 import { modelRotation } from "./motion.js";
 import { cutInParentFrame } from "./parent-frame.js";
 import { gapAtArrival, touchDown } from "./touch-down.js";
-import { launchWish, mayWobble, turningAxis } from "./wish.js";
+import { arrivalWish, launchWish, mayWobble, turningAxis } from "./wish.js";
 
 export interface Take {
   number: number;
   /** Which of the take's candidates it is. */
   candidate: number;
   drawn: DrawnThrow;
-  wish: LaunchWish;
-  aimed: AimedLaunch;
+  wish: LaunchWish | ArrivalWish;
+  aimed: AimedLaunch | AimedArrival;
   flight: Flight;
   /** Where a floor ends the flight: how far above it the prop then is, m. */
   gap?: number;
@@ -75,6 +76,12 @@ type Flown = Pick<Take, "wish" | "aimed" | "flight" | "gap">;
 
 /** The flight of a drawn throw: the arc, and then its end by a touch where it is open. */
 function flyDrawn(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversion): Flown {
+  const { facing } = drawn.arrive;
+  if (facing !== undefined) {
+    const wish = arrivalWish(drawn, facing, prop, file.gravity, host);
+    const aimed = solveArrival(wish, prop.principal);
+    return { wish, aimed, flight: fly(aimed.launch) };
+  }
   const wish = launchWish(drawn, prop, file.gravity, host);
   const open = solveLaunch(wish, prop.principal);
   const { floor } = drawn.arrive;

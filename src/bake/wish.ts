@@ -1,10 +1,17 @@
 /** A drawn throw in the words of the solver: host numbers become glTF's, names become directions, angles become poses. */
 
-import { facingRotation } from "../aim/facing.js";
+import type { ArrivalFacing, ArrivalWish } from "../aim/arrival.js";
+import { type DirectionPair, facingRotation } from "../aim/facing.js";
 import type { LaunchWish } from "../aim/launch.js";
 import { defaultWobble, spinAtRelease } from "../aim/spin.js";
 import { type ThrowCourse, UP, WORLD_WORDS, worldDirection } from "../aim/world-directions.js";
-import type { DrawnFacing, DrawnThrow } from "../draw/drawn-throw.js";
+import type {
+  DrawnArrivalFacing,
+  DrawnFacing,
+  DrawnPair,
+  DrawnScatter,
+  DrawnThrow,
+} from "../draw/drawn-throw.js";
 import { cosDegrees, sinDegrees } from "../math/degrees.js";
 import {
   conjugate,
@@ -13,6 +20,7 @@ import {
   multiply,
   normalize,
   type Quat,
+  rotate,
   rotateBack,
 } from "../math/quat.js";
 import { RequestError } from "../math/request-error.js";
@@ -23,17 +31,44 @@ import type { ThrowEntry } from "../throwfile/types.js";
 import type { Conversion } from "./host.js";
 
 /**
+ * A throw whose spin is stated.
+ *
  * @param gravity m/s², where the throw states none of its own
  * @param host from the throw file's numbers to glTF's
  */
 export function launchWish(drawn: DrawnThrow, prop: Prop, gravity: number, host: Conversion): LaunchWish {
+  return { ...conditions(drawn, prop, gravity, host), spin: spinOf(drawn, prop, host) };
+}
+
+/** A throw with an `arrive.facing`, whose spin is solved; parameters as above. */
+export function arrivalWish(
+  drawn: DrawnThrow,
+  facing: DrawnArrivalFacing,
+  prop: Prop,
+  gravity: number,
+  host: Conversion,
+): ArrivalWish {
+  return {
+    ...conditions(drawn, prop, gravity, host),
+    facing: arrivalFacing(facing, drawn.arrive.scatter, prop, host),
+    usesTravelAtEnd: namesFlight(facing),
+    turning: turningOf(drawn, prop),
+  };
+}
+
+/** What the two have in common. */
+function conditions(
+  drawn: DrawnThrow,
+  prop: Prop,
+  gravity: number,
+  host: Conversion,
+): Omit<LaunchWish, "spin"> {
   const { release, arrive, arc } = drawn;
   const releasePoint = pointOf(prop, release.point);
   const from = release.at ? host.vector(release.at) : releasePoint;
   const to = arrive.at && host.vector(arrive.at);
   const velocity = release.velocity && host.vector(release.velocity);
   const strength = drawn.gravity === undefined ? gravity : drawn.gravity;
-  const pose = poseOf(drawn, prop, host);
   return {
     arc: {
       from,
@@ -54,10 +89,9 @@ export function launchWish(drawn: DrawnThrow, prop: Prop, gravity: number, host:
     },
     releaseOffset: subtract(releasePoint, prop.centerOfMass),
     arrivalOffset: subtract(pointOf(prop, arrive.point ?? release.point), prop.centerOfMass),
-    pose,
+    pose: scattered(release.scatter, facingOf(release.facing, prop, host, "release")),
     usesTravel: namesFlight(release.facing) || drawn.spin?.axis === "flight",
     ahead: to ? subtract(to, from) : arc.heading === undefined ? velocity : headingDirection(arc.heading),
-    spin: spinOf(drawn, prop, host),
   };
 }
 
@@ -66,22 +100,46 @@ const headingDirection = (heading: number): Vec3 => [sinDegrees(heading), 0, cos
 const pointOf = (prop: Prop, name: string): Vec3 =>
   name === "centerOfMass" ? prop.centerOfMass : prop.points[name].position;
 
-const namesFlight = (facing: DrawnFacing | undefined): boolean =>
+const namesFlight = (facing: DrawnArrivalFacing | undefined): boolean =>
   Array.isArray(facing) && facing.some(([, world]) => world === "flight");
 
-function poseOf(drawn: DrawnThrow, prop: Prop, host: Conversion): LaunchWish["pose"] {
-  const { facing, scatter } = drawn.release;
-  const unscattered = facingOf(facing, prop, host);
-  if (!scatter) return unscattered;
-  const scattering = fromAxisAngle(scatter.axis, (scatter.angle * Math.PI) / 180);
-  return (course) => multiply(scattering, unscattered(course));
+const scattering = (scatter: DrawnScatter | undefined): Quat =>
+  scatter ? fromAxisAngle(scatter.axis, (scatter.angle * Math.PI) / 180) : IDENTITY;
+
+type Pose = (course: ThrowCourse) => Quat;
+
+function scattered(scatter: DrawnScatter | undefined, pose: Pose): Pose {
+  const turn = scattering(scatter);
+  return (course) => multiply(turn, pose(course));
+}
+
+function arrivalFacing(
+  facing: DrawnArrivalFacing,
+  scatter: DrawnScatter | undefined,
+  prop: Prop,
+  host: Conversion,
+): ArrivalFacing {
+  const turn = scattering(scatter);
+  if (facing === "release") return { kind: "pose", pose: (_, release) => multiply(turn, release) };
+  if ("rest" in facing)
+    throw new RequestError(["arrive", "facing"], "not there yet: rest", "name another orientation");
+  const pairs = Array.isArray(facing) ? (facing as readonly DrawnPair[]) : [];
+  if (pairs.length !== 1)
+    return { kind: "pose", pose: scattered(scatter, facingOf(facing, prop, host, "arrive")) };
+  const pair = (course: ThrowCourse) => directionPair(pairs[0], prop, host, course, ["arrive", "facing", 0]);
+  return {
+    kind: "direction",
+    direction: within(["arrive", "facing", 0], () => propDirection(prop, pairs[0][0])),
+    target: (course) => rotate(turn, pair(course).world),
+  };
 }
 
 function facingOf(
   facing: DrawnFacing | undefined,
   prop: Prop,
   host: Conversion,
-): (course: ThrowCourse) => Quat {
+  end: "release" | "arrive",
+): Pose {
   if (facing === undefined) return () => IDENTITY;
   if ("orientation" in facing) return () => facing.orientation;
   if ("rotation" in facing) {
@@ -90,15 +148,22 @@ function facingOf(
     return () => rotation;
   }
   return (course) => {
-    const pairs = facing.map(([own, world], i) =>
-      within(["release", "facing", i], () => ({
-        prop: propDirection(prop, own),
-        world: worldDirection(typeof world === "string" ? world : host.vector(world), course),
-      })),
-    );
+    const pairs = facing.map((pair, i) => directionPair(pair, prop, host, course, [end, "facing", i]));
     return facingRotation(pairs[0], pairs[1]);
   };
 }
+
+const directionPair = (
+  [own, world]: DrawnPair,
+  prop: Prop,
+  host: Conversion,
+  course: ThrowCourse,
+  path: readonly (string | number)[],
+): DirectionPair =>
+  within(path, () => ({
+    prop: propDirection(prop, own),
+    world: worldDirection(typeof world === "string" ? world : host.vector(world), course),
+  }));
 
 function spinOf(drawn: DrawnThrow, prop: Prop, host: Conversion): LaunchWish["spin"] {
   const { angularVelocity } = drawn.release;
@@ -122,6 +187,15 @@ function spinOf(drawn: DrawnThrow, prop: Prop, host: Conversion): LaunchWish["sp
       moments,
     );
   };
+}
+
+/** What a throw with an `arrive.facing` wishes of its turning. */
+function turningOf(drawn: DrawnThrow, prop: Prop): ArrivalWish["turning"] {
+  const { spin } = drawn;
+  return (pose, duration, course) => ({
+    turns: spin?.rate === undefined ? spin?.turns : spin.rate * duration,
+    axis: spin?.axis === undefined ? undefined : turningAxis(drawn, prop, pose, course),
+  });
 }
 
 /**

@@ -59,7 +59,7 @@ function clipRecord(file: ThrowFile, prop: Prop, { entry }: BakedThrow, baked: B
     apex: { time: aimed.arc.apex.time, rise: hostFrame(file.host).fromWorld.length(aimed.arc.apex.rise) },
     release,
     arrival,
-    miss: { position: missedBy(take, prop), angle: null },
+    miss: { position: missedBy(take, prop), angle: "missAngle" in aimed ? aimed.missAngle : null },
     tolerance: toleranceOf(file, prop),
     error: track.error,
     keys: { translation: track.translation.times.length, rotation: track.rotation.times.length },
