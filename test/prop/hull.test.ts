@@ -82,6 +82,21 @@ describe("the convex hull", () => {
     }
   });
 
+  it("of sides that are flat but for noise near the slack is closed and of one piece too", () => {
+    const next = random(24);
+    for (let round = 0; round < 60; round++) {
+      const q = anyOrientation(next);
+      const noise = [1e-12, 3e-13, 1e-13][round % 3];
+      const points = cloud(
+        Array.from({ length: 300 }, (_, i): Vec3 => {
+          const sheet = (i % 2) * (round % 2 ? 1 : 1e-6) + between(next, -noise, noise);
+          return rotate(q, [Math.round(between(next, 0, 9)) / 9, Math.round(between(next, 0, 9)) / 9, sheet]);
+        }),
+      );
+      check(points, convexHull(points)!);
+    }
+  });
+
   it("of the meshes of shapes has the support of all their vertices", () => {
     const next = random(23);
     for (const shape of [
