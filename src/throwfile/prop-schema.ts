@@ -21,7 +21,7 @@ export const propSchema = keys(
     density: defaulting(
       density,
       1000,
-      "kg/m³: one number, or a map from material name, else node name; `default` for the rest",
+      "kg/m³: one number, or a map from material name, else node name; `default` for the rest; 0 leaves out",
     ),
     mass: optional(number({ above: 0, unit: "kg" }), "kg; scales the density so that the total is this"),
     solid: defaulting(
@@ -31,7 +31,7 @@ export const propSchema = keys(
     ),
     wall: optional(
       number({ above: 0, unit: "m" }),
-      "m; thin walls: mass = density × wall × area. Surfaces take 0.002 unless stated",
+      "m; thin walls: mass = density × wall × area. Surfaces take 0.002 unless stated; stated, no opening is capped",
     ),
     weights: defaulting(weights, [], "point masses added: [{at: [x, y, z], mass: kg}]"),
     centerOfMass: optional(vector({ unit: "m" }), "[x, y, z], m, stated instead of worked out"),

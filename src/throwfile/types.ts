@@ -81,7 +81,7 @@ export interface PropEntry {
   readonly node?: string;
   /** Factor on the model, above 0; default 1. */
   readonly scale: number;
-  /** kg/m³, above 0; a map goes from material or node name, `default` for the rest; default 1000. */
+  /** kg/m³, 0 (left out) or more; a map goes from material or node name, `default` for the rest; default 1000. */
   readonly density: number | Readonly<Record<string, number>>;
   /** kg, above 0: the total. */
   readonly mass?: number;

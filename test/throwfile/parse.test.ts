@@ -15,6 +15,19 @@ const timeOf = (time: string, more = "") =>
     `${more}${PROPS}throws: { lob: { prop: ball, arrive: { at: [1, 1, 1], after: ${time} } } }`,
   ).throws.get("lob")!.arrive.after;
 
+describe("how a prop is weighed", () => {
+  test("a density of 0 leaves a material out; what is solid and how thick walls are can be chosen", () => {
+    const { props } = parse(
+      "props: { oar: { model: oar.glb, density: { rope: 0, default: 680 }, solid: surface, wall: 0.003 } }",
+    );
+    expect(props.get("oar")).toMatchObject({
+      density: { rope: 0, default: 680 },
+      solid: "surface",
+      wall: 0.003,
+    });
+  });
+});
+
 describe("the grammar's example", () => {
   test("is read as it is written", () => {
     const file = parse(QUAY);
