@@ -7,7 +7,7 @@ import { search } from "../../src/aim/search.js";
 import { turningOf } from "../../src/aim/turning.js";
 import { multiplyVector, transpose } from "../../src/math/mat3.js";
 import { fromAxisAngle, IDENTITY } from "../../src/math/quat.js";
-import { distance, length } from "../../src/math/vec3.js";
+import { distance, length, type Vec3 } from "../../src/math/vec3.js";
 import { BODIES, randomProblems } from "./problems.js";
 
 const unlike = randomProblems(96, "search").filter(({ body }) => body !== "sphere");
@@ -69,6 +69,34 @@ describe("the search", () => {
       found += usual.length;
     }
     expect(found).toBeGreaterThan(2000);
+  });
+
+  it("sees two ways until they merge", () => {
+    // as the end pose turns on, ways come and go in pairs, which lie as close as one likes before they go: like the roots of a parabola
+    const momenta = (angle: number): Vec3[] => {
+      const end = fromAxisAngle([1, 2, -0.5], angle);
+      const problem = problemOf({ moments: BODIES.book, start: IDENTITY, end, duration: 1 });
+      return search(problem, { leastTurns: 0, mostTurns: 3, mostTurning: 9 }).map(({ momentum }) => momentum);
+    };
+    const closest = (all: Vec3[]): number =>
+      Math.min(...all.flatMap((a, i) => all.slice(0, i).map((b) => distance(a, b))));
+    let merged = 0;
+    for (let i = 1; i < 24; i++) {
+      let [from, to] = [0.1 * i, 0.1 * (i + 1)];
+      const [first, last] = [momenta(from).length, momenta(to).length];
+      if (Math.abs(first - last) !== 2) continue;
+      for (let k = 0; k < 34; k++) {
+        const middle = (from + to) / 2;
+        if (momenta(middle).length === first) from = middle;
+        else to = middle;
+      }
+      const more = momenta(first > last ? from : to);
+      // two ways may also leave together by way of the bound of turns, or one after the other
+      if (Math.abs(momenta(from).length - momenta(to).length) !== 2) continue;
+      merged++;
+      expect(closest(more)).toBeLessThan(1e-3);
+    }
+    expect(merged).toBeGreaterThan(2);
   });
 
   it("takes only directions that start and end on one branch of the polhode", () => {
