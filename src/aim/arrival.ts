@@ -7,7 +7,7 @@ import { angleBetween, between, conjugate, multiply, type Quat, rotate, rotateBa
 import { RequestError } from "../math/request-error.js";
 import { addScaled, cross, distance, length, scale, subtract, type Vec3, ZERO } from "../math/vec3.js";
 import type { AimedBody, AimedLaunch, LaunchWish } from "./launch.js";
-import { polish } from "./polish.js";
+import { polish, type Turn } from "./polish.js";
 import { MOST_MISS, type WayWish } from "./way.js";
 import { nearestDirectionWay, nearestWay } from "./ways.js";
 import type { ThrowCourse } from "./world-directions.js";
@@ -27,6 +27,8 @@ export interface ArrivalWish extends Omit<LaunchWish, "spin"> {
 }
 
 export interface AimedArrival extends AimedLaunch {
+  /** From the pose at release to the one asked for at the end; of one direction, with the roll that the way found has. */
+  turn: Turn;
   /** Angle by which the pose asked for is missed at the end, rad. */
   missAngle: number;
   warnings: string[];
@@ -45,6 +47,12 @@ const SETTLED = 1e-13;
  * @throws RequestError where there is no such flight
  */
 export function solveArrival(wish: ArrivalWish, body: AimedBody): AimedArrival {
+  if (wish.arc.openEnd)
+    throw new RequestError(
+      ["arrive", "facing"],
+      "not there yet: no spin is solved for a flight that a floor ends (found arrive.floor too)",
+      "end the flight with arrive.at or arrive.after, or state the spin",
+    );
   const centred = solveArc(wish.arc);
   const { facing } = wish;
   if (facing.kind === "pose") return solvePose(wish, body, centred, facing.pose);
@@ -107,7 +115,7 @@ function solvePose(
       duration: arc.duration,
     };
     const missAngle = angleBetween(endPose(body, turn.start, spin, arc.duration), finish);
-    return { arc, launch, missAngle, warnings: found.warnings };
+    return { arc, launch, turn, missAngle, warnings: found.warnings };
   }
 }
 

@@ -36,14 +36,20 @@ export const predictedRounding = (turning: Turning): number =>
 
 /**
  * How far a way is from the wish, in turns, by both measures of them: the one about the momentum alone would let a slim body spin about itself at
- * will. Without a wish for turns, how much it turns.
+ * will. Without a wish for turns, how much it turns. Of a wish for the other way round its axis is the opposite one, its turns positive.
  */
-export function costOf(turning: Turning, wish: OrderedWish): number {
+export function nearness(
+  turning: Pick<Turning, "turns" | "turning" | "signedShare">,
+  wish: OrderedWish,
+): number {
   const wanted = wish.turns ?? 0;
   const amount = Math.max(Math.abs(turning.turns - wanted), Math.abs(turning.turning - wanted));
-  const aside = wish.axis ? SHARE * (1 - dot(turning.signedShare, wish.axis)) : 0;
-  return amount + aside + (predictedRounding(turning) > MOST_ROUNDING ? LAST : 0);
+  return amount + (wish.axis ? SHARE * (1 - dot(turning.signedShare, wish.axis)) : 0);
 }
+
+/** The same, but that ways which rounding could spoil come last. */
+export const costOf = (turning: Turning, wish: OrderedWish): number =>
+  nearness(turning, wish) + (predictedRounding(turning) > MOST_ROUNDING ? LAST : 0);
 
 /** The candidates that may be nearest the wish, best first: those whose turns alone leave them behind are not looked at. */
 export function rank(problem: Problem, candidates: readonly Candidate[], wish: OrderedWish): Ranked[] {

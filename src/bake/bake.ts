@@ -84,7 +84,7 @@ function checkWhole(file: ThrowFile, { only }: BakeOptions): void {
     );
 }
 
-function selectThrows(file: ThrowFile, only?: readonly string[]): ThrowEntry[] {
+export function selectThrows(file: ThrowFile, only?: readonly string[]): ThrowEntry[] {
   for (const name of only ?? [])
     if (!file.throws.has(name))
       throw new RequestError(
@@ -96,7 +96,7 @@ function selectThrows(file: ThrowFile, only?: readonly string[]): ThrowEntry[] {
 }
 
 /** The throws that have any of the takes, with the numbers of those they have. */
-function selectTakes(
+export function selectTakes(
   entries: readonly ThrowEntry[],
   takes?: BakeOptions["takes"],
 ): { entry: ThrowEntry; numbers: readonly number[] }[] {

@@ -1,4 +1,4 @@
-import { Command, InvalidArgumentError } from "commander";
+import { Command } from "commander";
 import { bake } from "../bake/bake.js";
 import { RequestError } from "../math/request-error.js";
 import { mergeRecord } from "../node/kept-record.js";
@@ -11,6 +11,7 @@ import { recordOf } from "../record/record-of.js";
 import { ExitCode } from "./exit-code.js";
 import { progress } from "./progress.js";
 import { span, table } from "./table.js";
+import { takeRange } from "./take-range.js";
 
 interface Options {
   output: string;
@@ -61,14 +62,6 @@ export const bakeCommand = (answer: (code: number) => void) =>
         process.stderr.write(`${name} is left out: ${reason.message}\n`);
       if (fresh.clips.some(missed) || baked.unheld.length > 0) answer(ExitCode.checkFailed);
     });
-
-function takeRange(text: string): [number, number] {
-  const match = /^(\d{1,9})-(\d{1,9})$/.exec(text);
-  const [first, last] = [Number(match?.[1]), Number(match?.[2])];
-  if (!(first >= 1 && last >= first))
-    throw new InvalidArgumentError("It is the first and the last take, such as 3-7.");
-  return [first, last];
-}
 
 const missed = ({ miss }: ClipRecord) =>
   (miss.position ?? 0) > MISS_METRES || (miss.angle ?? 0) > MISS_RADIANS;

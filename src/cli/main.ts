@@ -10,6 +10,7 @@ import { bakeCommand } from "./bake.js";
 import { ExitCode } from "./exit-code.js";
 import { schemaCommand } from "./schema.js";
 import { verifyCommand } from "./verify.js";
+import { waysCommand } from "./ways.js";
 import { weighCommand } from "./weigh.js";
 
 /** Runs one command line (without node and script) and answers its exit code; prints, but never ends the process. */
@@ -27,8 +28,14 @@ export async function main(args: readonly string[]): Promise<number> {
     .helpCommand(false)
     .showHelpAfterError("(tossbake --help lists the commands)")
     .exitOverride();
-  for (const command of [weighCommand(), bakeCommand(answer), verifyCommand(answer), schemaCommand()])
-    program.addCommand(command.copyInheritedSettings(program));
+  const commands = [
+    weighCommand(),
+    waysCommand(answer),
+    bakeCommand(answer),
+    verifyCommand(answer),
+    schemaCommand(),
+  ];
+  for (const command of commands) program.addCommand(command.copyInheritedSettings(program));
   try {
     await program.parseAsync(args, { from: "user" });
     return code;

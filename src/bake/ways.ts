@@ -1,0 +1,258 @@
+/** The ways a prop can get from its release pose to its arrival pose, and the spin to write for each. */
+
+import { type AimedArrival, type ArrivalWish, solveArrival } from "../aim/arrival.js";
+import type { Way, WayWish } from "../aim/way.js";
+import { allWays } from "../aim/ways.js";
+import { type Rounding, wishFor } from "../aim/wish-for.js";
+import { fly } from "../flight/flight.js";
+import type { Launch } from "../flight/launch.js";
+import { axisShares, turnsAboutMomentum } from "../flight/turns.js";
+import { conjugate, multiply, rotate, rotateBack } from "../math/quat.js";
+import { RequestError } from "../math/request-error.js";
+import { cross, distance, length, negate, normalize, scale, subtract, type Vec3 } from "../math/vec3.js";
+import { propDirection } from "../prop/directions.js";
+import type { Prop } from "../prop/prop.js";
+import { throwFileError } from "../throwfile/errors.js";
+import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
+import { type BakeOptions, selectTakes, selectThrows } from "./bake.js";
+import { type Conversion, hostFrame } from "./host.js";
+import { UnheldLimits } from "./limits.js";
+import { modelRotation } from "./motion.js";
+import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
+import { solveTake, type Take } from "./take.js";
+
+/** `spin` as it is written in a throw file. */
+export interface WrittenSpin {
+  axis?: string | Vec3;
+  turns?: number;
+  rate?: number;
+}
+
+export interface ListedWay {
+  turns: number;
+  /** ∫|ω_a|dt/∫|ω|dt about long, middle, short. */
+  share: Vec3;
+  /** Of the centre of mass at release, as `arc.speed`; in the host's unit. */
+  speed: number;
+  /** Turns per second at release. */
+  rate: number;
+  /** At release, world frame of the host, rad/s. */
+  angularVelocity: Vec3;
+  /** Angle from what is asked for, rad. */
+  miss: number;
+  /** Whether it is the one that the throw file gets. */
+  taken: boolean;
+  /** What gets this way; empty where no `spin` is needed, null where nearer ways answer whatever could be written. */
+  spin: WrittenSpin | null;
+}
+
+export interface TakeWays {
+  take: number;
+  candidate: number;
+  /** s */
+  duration: number;
+  /** Whether these are all ways up to `mostTurns`, or some of those that bring one direction where it is asked for. */
+  isEvery: boolean;
+  mostTurns: number;
+  ways: ListedWay[];
+  warnings: string[];
+  /** The take breaks the throw's limits, as all its candidates do. */
+  unheld?: UnheldLimits;
+}
+
+/** How many turns beyond those wished are looked through. */
+const BEYOND = 2;
+/** By how much more the rivals of a way may turn. */
+const RIVALS = 1;
+/** Spins nearer to each other than this share are one. */
+const SAME = 1e-6;
+/** Ways of one direction slide into each other: nearer to each other than this share, one stands for both. */
+const ALIKE = 0.02;
+
+/**
+ * The ways of a throw's takes, each list in the order of turns.
+ *
+ * @throws ThrowFileError for a throw that cannot be or has no `arrive.facing`, RequestError where there is no such throw or take
+ */
+export async function throwWays(
+  file: ThrowFile,
+  source: ModelSource,
+  name: string,
+  { takes, onTake }: Pick<BakeOptions, "takes" | "onTake"> = {},
+): Promise<TakeWays[]> {
+  const [{ entry, numbers }] = selectTakes(selectThrows(file, [name]), takes);
+  const locate = (error: unknown) =>
+    error instanceof RequestError
+      ? throwFileError(file, new RequestError(["throws", name, ...error.path], error.fault, error.remedy))
+      : error;
+  if (entry.arrive.facing === undefined)
+    throw locate(
+      new RequestError(
+        ["arrive"],
+        "no pose to get to, so that the spin stated is the one way (found no arrive.facing)",
+        "add arrive.facing",
+      ),
+    );
+  const { prop } = (await loadProps(file, new Set([entry.prop]), source)).get(entry.prop) as LoadedProp;
+  try {
+    return numbers.map((number, i) => {
+      const ways = takeWays(file, entry, prop, number);
+      onTake?.(i + 1, numbers.length);
+      return ways;
+    });
+  } catch (error) {
+    throw locate(error);
+  }
+}
+
+function takeWays(file: ThrowFile, entry: ThrowEntry, prop: Prop, number: number): TakeWays {
+  const { take, unheld } = solved(file, entry, prop, number);
+  const aim = aimOf(take, prop, hostFrame(file.host).fromWorld);
+  const isEvery = aim.wish.facing.kind === "pose";
+  const wished = Math.abs(aim.asked.turns ?? turnsAboutMomentum(take.flight));
+  const mostTurns = Math.ceil(wished) + BEYOND;
+  const ways = isEvery ? everyWay(aim, mostTurns) : someWays(aim, wished);
+  return {
+    take: number,
+    candidate: take.candidate,
+    duration: take.flight.duration,
+    isEvery,
+    mostTurns,
+    ways: ways.sort((a, b) => a.turns - b.turns),
+    warnings: aim.aimed.warnings,
+    ...(unheld && { unheld }),
+  };
+}
+
+/** The take; where none holds the limits, the one that would be were there none. */
+function solved(
+  file: ThrowFile,
+  entry: ThrowEntry,
+  prop: Prop,
+  number: number,
+): { take: Take; unheld?: UnheldLimits } {
+  try {
+    return { take: solveTake(file, entry, prop, number) };
+  } catch (error) {
+    if (!(error instanceof UnheldLimits)) throw error;
+    return { take: solveTake(file, { ...entry, limits: undefined }, prop, number), unheld: error };
+  }
+}
+
+/** A take, taken apart into what its ways are worked out from. */
+interface Aim {
+  take: Take;
+  wish: ArrivalWish;
+  aimed: AimedArrival;
+  asked: WayWish;
+  prop: Prop;
+  host: Conversion;
+}
+
+function aimOf(take: Take, prop: Prop, host: Conversion): Aim {
+  const [wish, aimed] = [take.wish as ArrivalWish, take.aimed as AimedArrival];
+  const course = { ahead: wish.ahead, travel: aimed.arc.velocity };
+  const asked = wish.turning(modelRotation(take.flight, prop, 0), take.flight.duration, course);
+  return { take, wish, aimed, asked, prop, host };
+}
+
+/** All ways of a pose, up to a number of turns by both measures. */
+function everyWay(aim: Aim, mostTurns: number): ListedWay[] {
+  const { turn, launch } = aim.aimed;
+  const most = mostTurns + RIVALS;
+  const rivals = allWays({ ...turn, mostTurns: most, mostTurning: most });
+  const others = rivals.filter(
+    ({ spin, turning }) => turning <= mostTurns && !isSame(spin, launch.spin, SAME),
+  );
+  return [takenWay(aim), ...others.map((way) => otherWay(aim, way, rivals))];
+}
+
+function otherWay(aim: Aim, way: Way, rivals: readonly Way[]): ListedWay {
+  const wish = wishFor(way, rivals, plainAxes(aim.prop), rounding(aim.prop));
+  const aimed = wish && solveArrival({ ...aim.wish, turning: () => wish }, aim.prop.principal);
+  // what was found by ranking is believed when the solver comes to it
+  if (aimed && isSame(aimed.launch.spin, way.spin, SAME))
+    return listed(aim, aimed.launch, aimed.missAngle, written(aim.prop, wish));
+  return listed(aim, launchWith(aim, way.spin), way.miss, null);
+}
+
+/** The launch with another spin: the arc stays, but for a hand off the centre of mass whose own velocity is stated. */
+function launchWith({ wish, aimed, prop }: Aim, spin: Vec3): Launch {
+  const { launch } = aimed;
+  const hand = wish.arc.velocity;
+  const arm = rotate(multiply(launch.orientation, conjugate(prop.principal.axes)), wish.releaseOffset);
+  const velocity = hand ? subtract(hand, cross(rotate(launch.orientation, spin), arm)) : launch.velocity;
+  return { ...launch, spin, velocity };
+}
+
+/** One direction leaves whole curves of ways: what wishes round the one in the throw file get. */
+function someWays(aim: Aim, wished: number): ListedWay[] {
+  const { asked, prop } = aim;
+  const sign = (asked.turns ?? 0) < 0 ? -1 : 1;
+  const axis = asked.axis && scale(asked.axis, sign);
+  const { turns: round, axis: rounded } = rounding(prop);
+  const plain = plainAxes(prop);
+  const around = [wished - 0.5, wished, wished + 0.5, wished + 1].filter((turns) => turns >= 0).map(round);
+  const wishes = axis
+    ? [axis, negate(axis)].flatMap((a) => around.map((turns): WayWish => ({ turns, axis: rounded(a) })))
+    : [...around.map((turns) => ({ turns })), ...plain.map((a) => ({ turns: round(wished), axis: a }))];
+  const found: { spin: Vec3; way: ListedWay }[] = [{ spin: aim.aimed.launch.spin, way: takenWay(aim) }];
+  for (const wish of wishes) {
+    const { launch, missAngle } = solveArrival({ ...aim.wish, turning: () => wish }, prop.principal);
+    if (found.some(({ spin }) => isSame(spin, launch.spin, ALIKE))) continue;
+    found.push({ spin: launch.spin, way: listed(aim, launch, missAngle, written(prop, wish)) });
+  }
+  return found.map(({ way }) => way);
+}
+
+/** The take itself, with the spin that stands in the throw file, as drawn. */
+function takenWay(aim: Aim): ListedWay {
+  const { axis, turns, rate } = aim.take.drawn.spin ?? {};
+  const spin = {
+    ...(axis && { axis }),
+    ...(turns !== undefined && { turns }),
+    ...(rate !== undefined && { rate }),
+  };
+  return { ...listed(aim, aim.aimed.launch, aim.aimed.missAngle, spin), taken: true };
+}
+
+function listed({ host }: Aim, launch: Launch, miss: number, spin: WrittenSpin | null): ListedWay {
+  const flight = fly(launch);
+  return {
+    turns: turnsAboutMomentum(flight),
+    share: axisShares(flight),
+    speed: length(host.vector(launch.velocity)),
+    rate: length(launch.spin) / (2 * Math.PI),
+    angularVelocity: host.angular(flight.angularVelocity(0)),
+    miss,
+    taken: false,
+    spin,
+  };
+}
+
+const isSame = (a: Vec3, b: Vec3, share: number): boolean =>
+  distance(a, b) <= share * Math.max(length(a), length(b));
+
+const NAMES = ["long", "-long", "middle", "-middle", "short", "-short"] as const;
+
+/** Those of `NAMES`, in the principal frame. */
+const plainAxes = (prop: Prop): Vec3[] =>
+  NAMES.map((name) => rotateBack(prop.principal.axes, propDirection(prop, name)));
+
+const thousandths = (value: number): number => Math.round(value * 1000) / 1000 + 0;
+
+/** In the model's frame, as it is written. */
+const modelAxis = (prop: Prop, axis: Vec3): Vec3 => {
+  const [x, y, z] = rotate(prop.principal.axes, axis);
+  return [thousandths(x), thousandths(y), thousandths(z)];
+};
+
+const rounding = (prop: Prop): Rounding => ({
+  axis: (axis) => normalize(rotateBack(prop.principal.axes, modelAxis(prop, axis))),
+  turns: (turns) => Math.round(turns * 100) / 100,
+});
+
+function written(prop: Prop, { axis, turns }: WayWish): WrittenSpin {
+  const named = axis && NAMES[plainAxes(prop).findIndex((plain) => distance(plain, axis) < 1e-9)];
+  return { ...(axis && { axis: named ?? modelAxis(prop, axis) }), turns };
+}
