@@ -8,11 +8,21 @@ import { againstEngine } from "./against-engine.js";
 import { againstOdeSolver } from "./against-ode-solver.js";
 import { againstPipeline } from "./against-pipeline.js";
 import { evenness } from "./evenness.js";
+import { keys } from "./keys.js";
 import { bakeForTable, manyTakes } from "./many-takes.js";
 import { vary } from "./vary.js";
 import { weighForTable, weighing } from "./weighing.js";
 
-const SECTIONS = [againstOdeSolver, againstEngine, againstPipeline, manyTakes, vary, evenness, weighing];
+const SECTIONS = [
+  againstOdeSolver,
+  againstEngine,
+  againstPipeline,
+  keys,
+  manyTakes,
+  vary,
+  evenness,
+  weighing,
+];
 
 const [first, ...rest] = process.argv.slice(2);
 if (first === "--bake") await bakeForTable(Number(rest[0]));
