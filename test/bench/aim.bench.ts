@@ -142,11 +142,11 @@ function bruteForceFinds(): void {
   );
 }
 
-fullPose();
-besideLeastSquares();
-pointFirst();
-special();
-bruteForceFinds();
+for (const report of [fullPose, besideLeastSquares, pointFirst, special, bruteForceFinds]) {
+  report();
+  // minutes in all: what is printed shows as it comes
+  await new Promise((resolve) => setTimeout(resolve, 200));
+}
 
 describe("from pose to pose, eight bodies", () => {
   const problems = randomProblems(8, "one round");
