@@ -1,4 +1,5 @@
-import { add, dot, length, normalize, scale, subtract, type Vec3 } from "../math/vec3.js";
+import { cos, sin } from "../math/elementary.js";
+import { addScaled, dot, length, normalize, subtract, type Vec3 } from "../math/vec3.js";
 import { nearness } from "./ranking.js";
 import type { Way, WayWish } from "./way.js";
 
@@ -6,8 +7,9 @@ import type { Way, WayWish } from "./way.js";
 const LEAST_MARGIN = 1e-3;
 const CLEAR_MARGIN = 0.05;
 /** How far from a way's own turns a wish for it is looked for. */
-const OFFSETS = [0, -0.25, 0.25, -0.5, 0.5];
+const OFFSETS = [0, -0.1, 0.1, -0.25, 0.25, -0.5, 0.5];
 const CLIMBS = 40;
+const FIRST_STEP = 0.1;
 
 /** Roundings to what is written in a throw file: a unit vector (principal frame) along the rounded one, and turns. */
 export interface Rounding {
@@ -54,25 +56,40 @@ export function wishFor(
   return slanted.wish;
 }
 
-/** The axis that prefers the way most to its nearest rival, by subgradient ascent on the sphere. */
+/** The axis that prefers the way most to its nearest rival: the best of many, then subgradient ascent on the sphere. */
 function climb(way: Way, others: readonly Way[], turns: number): Vec3 {
-  if (length(way.spin) === 0) return [1, 0, 0];
-  let axis = normalize(length(way.signedShare) > 1e-3 ? way.signedShare : way.spin);
-  let best = { axis, margin: Number.NEGATIVE_INFINITY };
-  for (let i = 0; i < CLIMBS; i++) {
+  const nearestRival = (axis: Vec3, enough: number) => {
     const wish = { turns, axis };
     const own = nearness(way, wish);
-    let nearest: { way: Way; margin: number } | undefined;
+    let nearest = { margin: Number.POSITIVE_INFINITY, way };
     for (const other of others) {
       const margin = nearness(other, wish) - own;
-      if (!nearest || margin < nearest.margin) nearest = { way: other, margin };
+      if (margin < nearest.margin) nearest = { margin, way: other };
+      if (margin < enough) break;
     }
-    if (!nearest) return axis;
+    return nearest;
+  };
+  let best = { axis: SPREAD[0], margin: Number.NEGATIVE_INFINITY };
+  for (const axis of SPREAD) {
+    const { margin } = nearestRival(axis, best.margin);
+    if (margin > best.margin) best = { axis, margin };
+  }
+  let { axis } = best;
+  for (let i = 0; i < CLIMBS; i++) {
+    const nearest = nearestRival(axis, Number.NEGATIVE_INFINITY);
     if (nearest.margin > best.margin) best = { axis, margin: nearest.margin };
     const away = subtract(way.signedShare, nearest.way.signedShare);
-    const square = subtract(away, scale(axis, dot(away, axis)));
+    const square = addScaled(away, axis, -dot(away, axis));
     if (length(square) < 1e-9) break;
-    axis = normalize(add(axis, scale(normalize(square), 0.5 / (1 + i / 4))));
+    axis = normalize(addScaled(axis, normalize(square), FIRST_STEP / (1 + i / 4)));
   }
   return best.axis;
 }
+
+/** Directions spread evenly: points of a spiral, each the golden angle on. */
+const SPREAD: readonly Vec3[] = Array.from({ length: 300 }, (_, i) => {
+  const height = 1 - (2 * i + 1) / 300;
+  const radius = Math.sqrt(1 - height * height);
+  const angle = i * Math.PI * (3 - Math.sqrt(5));
+  return [radius * cos(angle), height, radius * sin(angle)];
+});

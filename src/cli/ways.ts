@@ -27,7 +27,8 @@ export const waysCommand = (answer: (code: number) => void) =>
       `
 Each line is a way: turns about the angular momentum, shares of the turning about the axes long, middle and short, speed of the
 centre of mass and turns a second at release, and by how much the pose is missed. The starred way is what the throw file gets
-now. Of one direction at arrival there are endlessly many; some near the wish are listed.
+now. No spin gets a way with a dash: others are nearer to whatever could be written. Of one direction at arrival there are
+endlessly many ways; some near the wish are listed.
 
 Example:
   tossbake ways quay.throws.yaml --only spanner-by-its-grip --takes 1-1`,
@@ -75,7 +76,7 @@ const row = (way: ListedWay, number: number): string[] => [
 ];
 
 function spinText(spin: WrittenSpin | null): string {
-  if (!spin) return "none: other ways are nearer to any wish";
+  if (!spin) return "–";
   const { axis, turns, rate } = spin;
   const parts = [
     axis === undefined ? [] : `axis: ${typeof axis === "string" ? axis : `[${axis.map(short).join(", ")}]`}`,
