@@ -12,6 +12,7 @@ import { hostFrame } from "./host.js";
 import { UnheldLimits } from "./limits.js";
 import { type MotionState, motionState, turnTimes } from "./motion.js";
 import { type Nearest, nearestFinder } from "./nearest.js";
+import { playerWarnings } from "./player-warnings.js";
 import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
 import { cutTake, solveTake, type Take } from "./take.js";
 
@@ -41,6 +42,8 @@ export interface Bake {
   throws: BakedThrow[];
   /** What is to be written, by names within the output folder. */
   files: NamedFile[];
+  /** What some players will do to these files. */
+  warnings: string[];
   /** Takes left out, as none of their candidates holds the throw's limits: the name of the clip that would have been, and why. */
   unheld: { name: string; reason: UnheldLimits }[];
 }
@@ -71,7 +74,13 @@ export async function bake(file: ThrowFile, source: ModelSource, options: BakeOp
     const onTake = () => options.onTake?.(++done, total);
     return bakeThrow(file, entry, numbers, props.get(entry.prop) as LoadedProp, unheld, onTake) ?? [];
   });
-  return { props, throws, files: filesOf(file, throws, props), unheld };
+  return {
+    props,
+    throws,
+    files: filesOf(file, throws, props),
+    warnings: playerWarnings(file, throws, props),
+    unheld,
+  };
 }
 
 /** A file of all throws is made of all. */

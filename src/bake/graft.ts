@@ -5,6 +5,7 @@ import type { ClipChannel, Graft } from "../gltf/splice.js";
 import type { Quat } from "../math/quat.js";
 import { negate, type Vec3 } from "../math/vec3.js";
 import type { Prop } from "../prop/prop.js";
+import type { BakeSettings } from "../throwfile/types.js";
 
 export interface NamedTrack {
   name: string;
@@ -42,20 +43,21 @@ export function oneNodeGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
  */
 export function twoNodeGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
   const only = onlyTrack(clips);
+  const [outer, inner, still] = addedNames(prop, "two-node");
   return {
     nodes: [
       {
-        name: prop.name,
+        name: outer,
         translation: only ? firstKey<Vec3>(only.translation) : prop.centerOfMass,
         children: [1],
       },
       {
-        name: `${prop.name}-turning`,
+        name: inner,
         ...(only && { rotation: firstKey<Quat>(only.rotation) }),
         children: [2],
       },
       {
-        name: `${prop.name}-centred`,
+        name: still,
         translation: negate(prop.centerOfMass),
         ...scaled(prop),
         holdsScene: true,
@@ -64,6 +66,10 @@ export function twoNodeGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
     clips: newClips(clips, { translation: { added: 0 }, rotation: { added: 1 } }),
   };
 }
+
+/** Names of the nodes that a layout adds, the outermost first. */
+export const addedNames = ({ name }: Prop, layout: BakeSettings["layout"]): string[] =>
+  layout === "two-node" ? [name, `${name}-turning`, `${name}-centred`] : [name];
 
 /** The track of a file's single clip. */
 export const onlyTrack = (clips: readonly NamedTrack[]): Track | undefined =>

@@ -11,7 +11,7 @@ const ARRAY_BUFFER = 34962;
 const ELEMENT_ARRAY_BUFFER = 34963;
 
 /**
- * A glTF model of the shape: one node, mesh and plain material, all named `name`, with normals and UVs; axis +Y, centred,
+ * A glTF model of the shape: one node, its mesh and plain material, named `name` (the node apart, as the clip's own is), with normals and UVs; axis +Y, centred,
  * metres. Always the same bytes.
  *
  * @throws RequestError at ["shape", …] for lengths that make no body
@@ -76,7 +76,7 @@ function document(name: string, mesh: ShapeMesh, lengths: readonly number[], byt
     asset: { version: "2.0", generator: "tossbake" },
     scene: 0,
     scenes: [{ nodes: [0] }],
-    nodes: [{ name, mesh: 0 }],
+    nodes: [{ name: `${name}-shape`, mesh: 0 }],
     meshes: [
       {
         name,
