@@ -66,6 +66,25 @@ describe("a key that is not there yet", () => {
     ]);
   });
 
+  test("that does not go with another yet is refused beside that alone", () => {
+    const facing = "facing: { pick: [rest, any] }";
+    const text = (floor: string) =>
+      QUAY.replace(/release: .*/, "release: { velocity: [0, 1, 2] }").replace(
+        /arrive: .*/,
+        `arrive: { ${floor}, ${facing} }`,
+      );
+    expect(errorOf(text("floor: 0").replace(/spin: .*/, ""))?.message).toMatch(
+      /throws\.lob-to-bench\.arrive\.facing: not there yet: no spin .*first touch; leave this key or floor out$/,
+    );
+    expect(
+      errorOf(
+        text("after: 1")
+          .replace("rest", "release")
+          .replace(/spin: .*/, ""),
+      ),
+    ).toBeUndefined();
+  });
+
   test("may say what is the default anyway", () => {
     const bake =
       "bake: { keys: linear, layout: one-node, files: per-throw, container: glb, mesh: true, pack: float }\n";
