@@ -3,6 +3,7 @@
 export { type Bake, type BakedTake, type BakedThrow, type BakeOptions, bake } from "./bake/bake.js";
 export type { MotionState } from "./bake/motion.js";
 export type { ModelSource } from "./bake/props.js";
+export { type ListedWay, type TakeWays, throwWays, type WrittenSpin } from "./bake/ways.js";
 export { defaultTolerance } from "./clip/default-tolerance.js";
 export { type Body, linearTrack } from "./clip/linear.js";
 export { playTrack } from "./clip/play-track.js";

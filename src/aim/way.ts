@@ -82,7 +82,7 @@ export function warningsFor(way: Way, wish: OrderedWish, leastTurns?: number): s
     );
   if (leastTurns !== undefined && wish.turns !== undefined && wish.turns < leastTurns - 1e-9)
     warnings.push(
-      `this needs ${leastTurns.toFixed(3)} turns at least, more than the ${wish.turns} asked for`,
+      `this needs ${leastTurns.toFixed(3)} turns at least, more than the ${Number(wish.turns.toFixed(3))} asked for`,
     );
   if (way.miss > Math.max(MOST_MISS, way.predictedRounding))
     warnings.push(`no exact way is near: the end pose is missed by ${way.miss.toExponential(1)} rad`);

@@ -51,8 +51,9 @@ export interface TakeWays {
   candidate: number;
   /** s */
   duration: number;
-  /** Whether these are all ways up to `mostTurns`, or some of those that bring one direction where it is asked for. */
+  /** Whether these are all ways from `leastTurns` to `mostTurns`, or some of those that bring one direction where it is asked for. */
   isEvery: boolean;
+  leastTurns: number;
   mostTurns: number;
   ways: ListedWay[];
   warnings: string[];
@@ -60,9 +61,9 @@ export interface TakeWays {
   unheld?: UnheldLimits;
 }
 
-/** How many turns beyond those wished are looked through. */
-const BEYOND = 2;
-/** By how much more the rivals of a way may turn. */
+/** How many turns more and fewer than those wished are looked through. */
+const AROUND = 2;
+/** By how much more or less the rivals of a way may turn. */
 const RIVALS = 1;
 /** Spins nearer to each other than this share are one. */
 const SAME = 1e-6;
@@ -110,13 +111,15 @@ function takeWays(file: ThrowFile, entry: ThrowEntry, prop: Prop, number: number
   const aim = aimOf(take, prop, hostFrame(file.host).fromWorld);
   const isEvery = aim.wish.facing.kind === "pose";
   const wished = Math.abs(aim.asked.turns ?? turnsAboutMomentum(take.flight));
-  const mostTurns = Math.ceil(wished) + BEYOND;
-  const ways = isEvery ? everyWay(aim, mostTurns) : someWays(aim, wished);
+  const leastTurns = Math.max(0, Math.floor(wished) - AROUND);
+  const mostTurns = Math.ceil(wished) + AROUND;
+  const ways = isEvery ? everyWay(aim, leastTurns, mostTurns) : someWays(aim, wished);
   return {
     take: number,
     candidate: take.candidate,
     duration: take.flight.duration,
     isEvery,
+    leastTurns,
     mostTurns,
     ways: ways.sort((a, b) => a.turns - b.turns),
     warnings: aim.aimed.warnings,
@@ -157,12 +160,18 @@ function aimOf(take: Take, prop: Prop, host: Conversion): Aim {
 }
 
 /** All ways of a pose, up to a number of turns by both measures. */
-function everyWay(aim: Aim, mostTurns: number): ListedWay[] {
+function everyWay(aim: Aim, leastTurns: number, mostTurns: number): ListedWay[] {
   const { turn, launch } = aim.aimed;
   const most = mostTurns + RIVALS;
-  const rivals = allWays({ ...turn, mostTurns: most, mostTurning: most });
+  const rivals = allWays({
+    ...turn,
+    leastTurns: Math.max(0, leastTurns - RIVALS),
+    mostTurns: most,
+    mostTurning: most,
+  });
   const others = rivals.filter(
-    ({ spin, turning }) => turning <= mostTurns && !isSame(spin, launch.spin, SAME),
+    ({ spin, turns, turning }) =>
+      turns >= leastTurns && turning <= mostTurns && !isSame(spin, launch.spin, SAME),
   );
   return [takenWay(aim), ...others.map((way) => otherWay(aim, way, rivals))];
 }

@@ -49,9 +49,9 @@ Example:
 const facts = ({ unheld, ...take }: TakeWays) => ({ ...take, unheld: unheld ? unheld.message : null });
 
 function describe(name: string, take: TakeWays, unit: string): string {
-  const { ways, duration, isEvery, mostTurns, warnings, unheld } = take;
+  const { ways, duration, isEvery, leastTurns, mostTurns, warnings, unheld } = take;
   const extent = isEvery
-    ? `the ${ways.length} ways up to ${mostTurns} turns`
+    ? `the ${ways.length} ways of ${leastTurns} to ${mostTurns} turns`
     : `${ways.length} of the ways, near the wish: one direction leaves the roll free`;
   const head = ["", "turns", "long", "middle", "short", unit, "spin /s", "miss °", "spin to write"];
   return [
