@@ -3,7 +3,9 @@
 export { type Bake, type BakedTake, type BakedThrow, type BakeOptions, bake } from "./bake/bake.js";
 export type { MotionState } from "./bake/motion.js";
 export type { ModelSource } from "./bake/props.js";
+export { type ReducedClip, type ReduceOptions, reduceRigidClips } from "./bake/reduce-rigid-clips.js";
 export { type ListedWay, type TakeWays, throwWays, type WrittenSpin } from "./bake/ways.js";
+export { type ClipStyle, clipTrack } from "./clip/clip-track.js";
 export { defaultTolerance } from "./clip/default-tolerance.js";
 export { type Body, linearTrack } from "./clip/linear.js";
 export { playTrack } from "./clip/play-track.js";
@@ -18,10 +20,12 @@ export { readModel } from "./gltf/read.js";
 export {
   type ClipChannel,
   type Graft,
+  type NamedFile,
   type NewClip,
   type NewNode,
   type Rest,
   spliceGlb,
+  spliceGltf,
 } from "./gltf/splice.js";
 export { throwClips } from "./gltf/throw-clips.js";
 export type { Mat3 } from "./math/mat3.js";
