@@ -10,7 +10,7 @@ import { type ThrowEntry, type ThrowFile, takeNumbers } from "../throwfile/types
 import { clipFiles, type FiledClip, fileName } from "./files.js";
 import { hostFrame } from "./host.js";
 import { UnheldLimits } from "./limits.js";
-import { type MotionState, motionState, turnTimes } from "./motion.js";
+import { cuesOf, type MotionState, motionState } from "./motion.js";
 import { type Nearest, nearestFinder } from "./nearest.js";
 import { playerWarnings } from "./player-warnings.js";
 import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
@@ -210,5 +210,6 @@ const clipExtras = (entry: ThrowEntry, { take, release, arrival }: BakedTake) =>
   draws: take.drawn.draws,
   release,
   arrival,
-  cues: { apex: take.aimed.arc.apex.time, turns: turnTimes(take.flight) },
+  flight: { start: take.drawn.hold.before, time: take.flight.duration },
+  cues: cuesOf(take, take.drawn.hold.before),
 });

@@ -5,6 +5,7 @@ import { conjugate, multiply, type Quat } from "../math/quat.js";
 import { length, type Vec3 } from "../math/vec3.js";
 import type { Prop } from "../prop/prop.js";
 import type { Conversion } from "./host.js";
+import type { Take } from "./take.js";
 
 /** Of a turn: a body that was asked for two turns has made its second whatever the last digit says. */
 const ROUNDING = 1e-9;
@@ -38,3 +39,9 @@ export function turnTimes(flight: Flight): number[] {
   const whole = Math.floor(flight.duration / turn + ROUNDING);
   return Array.from({ length: whole }, (_, i) => Math.min((i + 1) * turn, flight.duration));
 }
+
+/** s within a clip in which the flight starts at `start`. */
+export const cuesOf = ({ aimed, flight }: Pick<Take, "aimed" | "flight">, start: number) => ({
+  apex: start + aimed.arc.apex.time,
+  turns: turnTimes(flight).map((time) => start + time),
+});

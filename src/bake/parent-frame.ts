@@ -1,4 +1,4 @@
-/** A flight as the parents of the animated node see it: its keys are in their frame. */
+/** Flights as the parents of the animated node see them: its keys are in their frame. */
 
 import type { Body } from "../clip/body.js";
 import type { Track } from "../clip/track.js";
@@ -9,30 +9,31 @@ import { RequestError } from "../math/request-error.js";
 import { scale, subtract, type Vec3 } from "../math/vec3.js";
 
 /**
- * The keys of a node within the model: `cut` is given the same motion in the parents' frame, with the body as it lies about
+ * The keys of a node within the model: `cut` is given the same motions in the parents' frame, with the body as it lies about
  * the node's own origin and axes. The parents only turn, move and evenly scale, so all that is proved there holds in the world,
  * times their scale.
  *
  * @param factor on the whole model
  */
 export function cutInParentFrame(
-  flight: Flight,
+  flights: readonly Flight[],
   body: Body,
   toleranceMetres: number,
   { parent, position, rotation, name }: MovedNode,
   factor: number,
-  cut: (flight: Flight, body: Body, tolerance: number) => Track,
+  cut: (flights: readonly Flight[], body: Body, tolerance: number) => Track,
 ): Track {
-  const { launch } = flight;
   const shrunk = 1 / parent.scale;
   const direction = (v: Vec3): Vec3 => scale(rotateBack(parent.rotation, v), shrunk);
-  const seen = fly({
-    ...launch,
-    centerOfMass: direction(subtract(launch.centerOfMass, parent.translation)),
-    velocity: direction(launch.velocity),
-    gravity: direction(launch.gravity),
-    orientation: multiply(conjugate(parent.rotation), launch.orientation),
-  });
+  const seen = flights.map(({ launch }) =>
+    fly({
+      ...launch,
+      centerOfMass: direction(subtract(launch.centerOfMass, parent.translation)),
+      velocity: direction(launch.velocity),
+      gravity: direction(launch.gravity),
+      orientation: multiply(conjugate(parent.rotation), launch.orientation),
+    }),
+  );
   // World rotation of the model = orientation ∘ conjugate(axes); the node's in its parents = parent⁻¹ ∘ that ∘ its rest in the scene.
   const inNode: Body = {
     centerOfMass: scale(rotateBack(rotation, subtract(body.centerOfMass, scale(position, factor))), shrunk),

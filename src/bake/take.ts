@@ -3,8 +3,8 @@
 import { type AimedArrival, type ArrivalWish, solveArrival } from "../aim/arrival.js";
 import { type AimedLaunch, type LaunchWish, solveLaunch } from "../aim/launch.js";
 import type { Body } from "../clip/body.js";
-import { clipTrack } from "../clip/clip-track.js";
 import { defaultTolerance } from "../clip/default-tolerance.js";
+import { joinedTrack } from "../clip/join.js";
 import type { Track } from "../clip/track.js";
 import { candidateOrder } from "../draw/candidate-order.js";
 import { drawThrow } from "../draw/draw-throw.js";
@@ -122,7 +122,10 @@ function bodyOf(file: ThrowFile, name: string, prop: Prop): Omit<FlyingBody, "fl
  *
  * @throws RequestError where the tolerance cannot be held; its path starts at the top of the file
  */
-export function cutTake(file: ThrowFile, prop: Prop, take: Take): Track {
+export const cutTake = (file: ThrowFile, prop: Prop, take: Take): Track => cutParts(file, prop, [take]);
+
+/** The keys of several takes one after the other; as above. */
+export function cutParts(file: ThrowFile, prop: Prop, takes: readonly Take[], isLoop = false): Track {
   const body = { centerOfMass: prop.centerOfMass, axes: prop.principal.axes, reach: prop.reach };
   const tolerance = toleranceOf(file, prop);
   const { keys, layout, pack } = file.bake;
@@ -132,11 +135,14 @@ export function cutTake(file: ThrowFile, prop: Prop, take: Take): Track {
       `"${prop.name}" is a node of its model and moved itself, not by two nodes over it (found two-node)`,
       `one-node, or no props.${prop.name}.node`,
     );
-  const cut = (flight: Flight, seen: Body, within: number) =>
-    clipTrack(flight, seen, within, { keys, layout, pack, frameRate: file.frameRate });
+  const cut = (flights: readonly Flight[], seen: Body, within: number) => {
+    const parts = takes.map(({ drawn }, i) => ({ flight: flights[i], ...drawn.hold }));
+    return joinedTrack(parts, seen, within, { keys, layout, pack, frameRate: file.frameRate }, isLoop);
+  };
+  const flights = takes.map(({ flight }) => flight);
   return prop.node
-    ? cutInParentFrame(take.flight, body, tolerance, prop.node, prop.scale, cut)
-    : cut(take.flight, body, tolerance);
+    ? cutInParentFrame(flights, body, tolerance, prop.node, prop.scale, cut)
+    : cut(flights, body, tolerance);
 }
 
 export const toleranceOf = (file: ThrowFile, prop: Prop): number =>

@@ -26,12 +26,13 @@ export interface ClipRecord {
   take: number;
   prop: string;
   file: string;
-  /** s */
+  /** Of the whole clip, s. */
   duration: number;
   /** About the angular momentum, 0 or more. */
   turns: number;
   /** Of the turning, about long, middle and short. */
   share: Vec3;
+  /** Of the centre of mass, above its release; s within the clip. */
   apex: { time: number; rise: number };
   release: MotionState;
   arrival: MotionState;
@@ -43,6 +44,7 @@ export interface ClipRecord {
   bytes: number;
   candidate: number;
   draws: Record<string, unknown>;
+  /** Within the clip, which may stand still before and after it, s. */
   flight: { start: number; time: number };
   /** Null where no earlier take was made in the same run. */
   nearest: { take: number; distance: number } | null;

@@ -47,16 +47,20 @@ export function propRecord({ prop, source, sha256 }: LoadedProp): PropRecord {
 function clipRecord(file: ThrowFile, prop: Prop, { entry }: BakedThrow, baked: BakedTake): ClipRecord {
   const { take, track, release, arrival, nearest } = baked;
   const { flight, aimed } = take;
+  const { before, after } = take.drawn.hold;
   return {
     name: baked.name,
     throw: entry.name,
     take: take.number,
     prop: entry.prop,
     file: baked.file,
-    duration: flight.duration,
+    duration: before + flight.duration + after,
     turns: turnsAboutMomentum(flight),
     share: axisShares(flight),
-    apex: { time: aimed.arc.apex.time, rise: hostFrame(file.host).fromWorld.length(aimed.arc.apex.rise) },
+    apex: {
+      time: before + aimed.arc.apex.time,
+      rise: hostFrame(file.host).fromWorld.length(aimed.arc.apex.rise),
+    },
     release,
     arrival,
     miss: { position: missedBy(take, prop), angle: "missAngle" in aimed ? aimed.missAngle : null },
@@ -66,7 +70,7 @@ function clipRecord(file: ThrowFile, prop: Prop, { entry }: BakedThrow, baked: B
     bytes: trackBytes(track),
     candidate: take.candidate,
     draws: take.drawn.draws,
-    flight: { start: 0, time: flight.duration },
+    flight: { start: before, time: flight.duration },
     nearest,
   };
 }

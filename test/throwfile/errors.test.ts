@@ -59,7 +59,7 @@ describe("a key that is not there yet", () => {
   });
 
   test("is checked for its form first", () => {
-    const error = errorOf(QUAY.replace("spin:", "hold: { before: -1 }\n    spin:"));
+    const error = errorOf(`bake: { layout: turn-only }\n${QUAY}    hold: { before: -1 }\n`);
     expect(error?.faults.map((f) => f.fault)).toEqual([
       expect.stringMatching(/^not there yet/),
       expect.stringMatching(/^out of range/),
