@@ -61,7 +61,7 @@ interface Solid {
   /** 1: matter; -1: a cavity (before `settleSides`: faces inwards). */
   sign: number;
   /** The parts around it, the innermost first. */
-  within: Solid[];
+  readonly within: Solid[];
 }
 
 const MIXED = (n: number) =>
@@ -72,10 +72,9 @@ const INSIDE_OUT = (n: number) =>
 /** Decides what is matter and what a cavity. */
 function settleSides(solids: readonly Solid[], substances: readonly Substance[], notes: Notes): void {
   const size = (solid: Solid) => Math.abs(solid.integrals.volume);
-  for (const solid of solids)
-    solid.within = solids
-      .filter((other) => other !== solid && size(other) > size(solid) && contains(other, solid))
-      .sort((a, b) => size(a) - size(b));
+  const largestFirst = [...solids].sort((a, b) => size(b) - size(a));
+  for (const [n, solid] of largestFirst.entries())
+    for (let m = n - 1; m >= 0; m--) if (contains(largestFirst[m], solid)) solid.within.push(largestFirst[m]);
   const faces = new Map(solids.map((solid) => [solid, solid.sign]));
   for (const solid of solids) {
     const outermost = solid.within.at(-1) ?? solid;

@@ -1,4 +1,5 @@
 import { after, eachEdge } from "./edges.js";
+import { boxOf, diagonal } from "./vertex.js";
 import { type Triangles, weld } from "./weld.js";
 
 /**
@@ -9,20 +10,11 @@ export function nearWeld(mesh: Triangles, tolerance: number): Triangles {
   const { positions } = mesh;
   const { rim, isEdge } = rimOf(mesh);
   const moved = positions.slice();
-  // Cells of the tolerance's size: what is near lies in the same or a neighbouring one.
-  const cells = new Map<string, number[]>();
-  const cellOf = (v: number, i: number) => Math.floor(positions[3 * v + i] / tolerance);
+  const cells = new Cells(positions, tolerance);
   for (const v of rim) {
-    const [x, y, z] = [cellOf(v, 0), cellOf(v, 1), cellOf(v, 2)];
-    const near = nearestOf(positions, v, around(cells, x, y, z), tolerance);
-    if (near !== undefined && !isEdge(v, near)) {
-      moved.set(positions.subarray(3 * near, 3 * near + 3), 3 * v);
-      continue;
-    }
-    const key = `${x},${y},${z}`;
-    const cell = cells.get(key);
-    if (cell) cell.push(v);
-    else cells.set(key, [v]);
+    const near = cells.nearest(v);
+    if (near !== undefined && !isEdge(v, near)) moved.set(positions.subarray(3 * near, 3 * near + 3), 3 * v);
+    else cells.add(v);
   }
   return weld([{ ...mesh, positions: moved }]);
 }
@@ -47,29 +39,58 @@ function rimOf({ triangles, positions }: Triangles) {
   return { rim, isEdge: (a: number, b: number) => edges.has(keyOf(a, b)) };
 }
 
-function* around(cells: Map<string, number[]>, x: number, y: number, z: number): Generator<number> {
-  for (let i = x - 1; i <= x + 1; i++)
-    for (let j = y - 1; j <= y + 1; j++)
-      for (let k = z - 1; k <= z + 1; k++) yield* cells.get(`${i},${j},${k}`) ?? [];
-}
+/** Vertices by cells of the tolerance's size: what is near lies in the same or a neighbouring one. */
+class Cells {
+  readonly #cells = new Map<number, number[]>();
+  readonly #low: readonly number[];
+  readonly #rows: number;
 
-function nearestOf(
-  positions: Float64Array,
-  v: number,
-  candidates: Iterable<number>,
-  tolerance: number,
-): number | undefined {
-  let nearest: number | undefined;
-  let least = tolerance * tolerance;
-  for (const other of candidates) {
+  constructor(
+    readonly positions: Float64Array,
+    readonly tolerance: number,
+  ) {
+    const box = boxOf(positions);
+    this.#low = box.low;
+    this.#rows = Math.ceil(diagonal(box) / tolerance) + 3;
+  }
+
+  add(v: number): void {
+    const key = this.#key(this.#row(v, 0), this.#row(v, 1), this.#row(v, 2));
+    const cell = this.#cells.get(key);
+    if (cell) cell.push(v);
+    else this.#cells.set(key, [v]);
+  }
+
+  nearest(v: number): number | undefined {
+    const [x, y, z] = [this.#row(v, 0), this.#row(v, 1), this.#row(v, 2)];
+    let nearest: number | undefined;
+    let least = this.tolerance * this.tolerance;
+    for (let i = x - 1; i <= x + 1; i++)
+      for (let j = y - 1; j <= y + 1; j++)
+        for (let k = z - 1; k <= z + 1; k++)
+          for (const other of this.#cells.get(this.#key(i, j, k)) ?? []) {
+            const square = this.#squareBetween(v, other);
+            if (square > least) continue;
+            least = square;
+            nearest = other;
+          }
+    return nearest;
+  }
+
+  #row(v: number, axis: number): number {
+    return 1 + Math.floor((this.positions[3 * v + axis] - this.#low[axis]) / this.tolerance);
+  }
+
+  #key(i: number, j: number, k: number): number {
+    return (i * this.#rows + j) * this.#rows + k;
+  }
+
+  #squareBetween(v: number, other: number): number {
     let square = 0;
     for (let i = 0; i < 3; i++) {
-      const d = positions[3 * v + i] - positions[3 * other + i];
+      const d = this.positions[3 * v + i] - this.positions[3 * other + i];
       square += d * d;
     }
-    if (square > least) continue;
-    least = square;
-    nearest = other;
+    return square;
   }
-  return nearest;
 }
