@@ -59,7 +59,7 @@ export class SamplerPack {
       count: array.length / { SCALAR: 1, VEC3: 3, VEC4: 4 }[type],
       type,
       // Required of times (glTF 2.0, 3.11).
-      ...(type === "SCALAR" && { min: [array[0]], max: [array[array.length - 1]] }),
+      ...(type === "SCALAR" && { min: [shortest(array[0])], max: [shortest(array[array.length - 1])] }),
     });
     this.#known.set(key, index);
     this.#arrays.push({ at: this.byteLength, array });
@@ -67,4 +67,16 @@ export class SamplerPack {
     this.byteLength += array.byteLength;
     return index;
   }
+}
+
+/**
+ * The number with fewest digits that is this float32 once it is rounded to float32, as readers treat an accessor's bounds
+ * (glTF 2.0, 3.6.2.5): 0.94 for 0.9399999976158142.
+ */
+function shortest(value: number): number {
+  for (let digits = 1; digits < 9; digits++) {
+    const short = Number(value.toPrecision(digits));
+    if (Math.fround(short) === value) return short;
+  }
+  return value;
 }
