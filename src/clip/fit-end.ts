@@ -1,103 +1,72 @@
-import { cos, sin } from "../math/elementary.js";
-import type { GreatCircle } from "./great-circle.js";
-import type { SampledMotion } from "./sampled-motion.js";
-import { spreadSamples } from "./spread-samples.js";
-
-/** Samples that a segment is fitted to, at most, its end apart; and how often they are weighted again. */
-const FITTED = 11;
-const REWEIGHTINGS = 6;
-/** Numbers a fitted sample: residual across the circle (4), along it, and what each moves by with the end's. */
-const ROW = 7;
+/** Samples within a segment that its end is fitted to. */
+export const FITTED = 7;
+/** Weighted solutions a fit. */
+const ROUNDS = 3;
+/** A sample never weighs less than this part of the heaviest: where the greatest error is may change from fit to fit. */
+const LEAST_WEIGHT = 0.01;
+/** Numbers a row: three components of an error, what the first two and the third move by with the end's. */
+const ROW = 5;
 
 /**
- * Moves the end of a great circle, which starts in a given key and ends in the true rotation, to where the circle's greatest error is
- * least: least squares over a few samples, weighted again towards the greatest (Lawson's algorithm, e.g. Cline, SIAM J.
- * Numer. Anal. 9, 604, 1972). The error is linear in the end's small displacement ε: at the share s of the angle φ, the part
- * of ε along the circle moves a point by s, that across it by sin sφ / sin φ.
+ * Finds where a segment's end should be moved for the greatest error to be least, the errors being linear in that: least squares
+ * over a few samples and the end, weighted again towards the greatest (Lawson's algorithm, e.g. Cline, SIAM J. Numer. Anal. 9,
+ * 604, 1972). Each fit starts with the weights of the one before: errors lie alike in all segments of a motion.
  */
-export function endFitter(motion: SampledMotion) {
-  const { rotations, time, sampleIndex } = motion;
-  const chosen = new Int32Array(FITTED);
-  const rows = new Float64Array(ROW * (FITTED + 1));
-  const weights = new Float64Array(FITTED + 1);
-  const shift = new Float64Array(4);
+export class EndFit {
+  /** The end's shift. */
+  readonly shift = new Float64Array(3);
+  private readonly rows = new Float64Array(ROW * (FITTED + 1));
+  private readonly weights = new Float64Array(FITTED + 1).fill(1);
 
-  /** Changes `end`; the samples `low` to `high` lie between the grid times `a` and `b`. */
-  return (circle: GreatCircle, a: number, b: number, low: number, high: number, end: Float64Array): void => {
-    const { from, side, angle } = circle;
-    const start = time(a);
-    const duration = time(b) - start;
-    const sinAngle = sin(angle);
-    const cosAngle = cos(angle);
-    const count = spreadSamples(low, high, FITTED, chosen);
-    for (let n = 0; n < count; n++) {
-      const share = (time(sampleIndex(chosen[n])) - start) / duration;
-      const c = cos(share * angle);
-      const s = sin(share * angle);
-      const k = 4 * chosen[n];
-      const row = ROW * n;
-      let along = 0;
-      let radial = 0;
-      for (let i = 0; i < 4; i++) {
-        const r = c * from[i] + s * side[i] - rotations[k + i];
-        rows[row + i] = r;
-        along += r * (c * side[i] - s * from[i]);
-        radial += r * (c * from[i] + s * side[i]);
-      }
-      for (let i = 0; i < 4; i++)
-        rows[row + i] -= along * (c * side[i] - s * from[i]) + radial * (c * from[i] + s * side[i]);
-      rows[row + 4] = along;
-      rows[row + 5] = share;
-      rows[row + 6] = angle > 1e-6 ? s / sinAngle : share;
-      weights[n] = 1;
-    }
-    // The end itself starts without an error.
-    rows.fill(0, ROW * count, ROW * count + 5);
-    rows.fill(1, ROW * count + 5, ROW * count + 7);
-    weights[count] = 1;
+  /** Says of sample `n`, or of the end as number `FITTED`, what its error is with an end not shifted. */
+  set(n: number, x: number, y: number, z: number, gain: number, gainOfZ: number): void {
+    const { rows } = this;
+    const row = ROW * n;
+    rows[row] = x;
+    rows[row + 1] = y;
+    rows[row + 2] = z;
+    rows[row + 3] = gain;
+    rows[row + 4] = gainOfZ;
+  }
 
-    let shiftAlong = 0;
-    for (let round = 0; ; round++) {
-      let across = 0;
-      let inLine = 0;
-      shift.fill(0);
-      shiftAlong = 0;
-      for (let n = 0; n <= count; n++) {
-        const row = ROW * n;
-        const w = weights[n];
-        const share = rows[row + 5];
-        const g = rows[row + 6];
-        across += w * g * g;
-        inLine += w * share * share;
-        shiftAlong -= w * share * rows[row + 4];
-        for (let i = 0; i < 4; i++) shift[i] -= w * g * rows[row + i];
+  solve(): void {
+    const { rows, weights, shift } = this;
+    let x = 0;
+    let y = 0;
+    let z = 0;
+    for (let round = 0; round < ROUNDS; round++) {
+      let sum = 0;
+      let sumOfZ = 0;
+      x = y = z = 0;
+      for (let n = 0, row = 0; n <= FITTED; n++, row += ROW) {
+        const w = weights[n] * rows[row + 3];
+        const wz = weights[n] * rows[row + 4];
+        sum += w * rows[row + 3];
+        sumOfZ += wz * rows[row + 4];
+        x -= w * rows[row];
+        y -= w * rows[row + 1];
+        z -= wz * rows[row + 2];
       }
-      for (let i = 0; i < 4; i++) shift[i] /= across;
-      shiftAlong /= inLine;
-      if (round === REWEIGHTINGS) break;
+      x /= sum;
+      y /= sum;
+      z /= sumOfZ;
       let greatest = 0;
-      for (let n = 0; n <= count; n++) {
-        const row = ROW * n;
-        const g = rows[row + 6];
-        const r = rows[row + 4] + rows[row + 5] * shiftAlong;
-        let square = r * r;
-        for (let i = 0; i < 4; i++) {
-          const d = rows[row + i] + g * shift[i];
-          square += d * d;
-        }
-        weights[n] *= Math.sqrt(square);
-        greatest = Math.max(greatest, weights[n]);
+      for (let n = 0, row = 0; n <= FITTED; n++, row += ROW) {
+        const dx = rows[row] + rows[row + 3] * x;
+        const dy = rows[row + 1] + rows[row + 3] * y;
+        const dz = rows[row + 2] + rows[row + 4] * z;
+        weights[n] *= Math.sqrt(dx * dx + dy * dy + dz * dz);
+        if (weights[n] > greatest) greatest = weights[n];
       }
-      if (!(greatest > 0)) break;
-      for (let n = 0; n <= count; n++) weights[n] /= greatest;
+      for (let n = 0; n <= FITTED; n++)
+        weights[n] = greatest > 0 ? Math.max(weights[n] / greatest, LEAST_WEIGHT) : 1;
     }
-
-    let square = 0;
-    for (let i = 0; i < 4; i++) {
-      end[i] += shift[i] + shiftAlong * (cosAngle * side[i] - sinAngle * from[i]);
-      square += end[i] * end[i];
-    }
-    const size = Math.sqrt(square);
-    for (let i = 0; i < 4; i++) end[i] /= size;
-  };
+    shift[0] = x;
+    shift[1] = y;
+    shift[2] = z;
+  }
 }
+
+/** Of the samples `low` to `high` the one that is fitted as number `n`; the same may come twice. */
+export const fittedSample = (n: number, low: number, high: number): number =>
+  low + Math.round(((n + 0.5) * (high - low)) / FITTED);

@@ -10,6 +10,9 @@ export class GreatCircle {
   /** Unit, square to `from`; zero where the ends are equal. */
   readonly side = new Float64Array(4);
   angle = 0;
+  /** Of the angle. */
+  sine = 0;
+  cosine = 1;
 
   /** Leads from the quaternion in `a` at `aOffset` to the one in `b` at `bOffset`, whose dot product it returns. */
   set(a: Float64Array, aOffset: number, b: Float64Array, bOffset: number): number {
@@ -26,6 +29,8 @@ export class GreatCircle {
     }
     const s = Math.sqrt(square);
     this.angle = atan2(s, d);
+    this.sine = s;
+    this.cosine = d;
     for (let i = 0; i < 4; i++) side[i] = s > 0 ? side[i] / s : 0;
     return d;
   }

@@ -1,7 +1,7 @@
-import { cos, sin } from "../math/elementary.js";
-import { endFitter } from "./fit-end.js";
+import { acos, cos, sin } from "../math/elementary.js";
+import { rotationEndFitter } from "./fit-rotation.js";
 import { GreatCircle } from "./great-circle.js";
-import { longestSegments } from "./longest-segments.js";
+import { longestWithin } from "./longest-segments.js";
 import { type RotationKeys, samplesBetween, squaredChord, squaredChordAt } from "./rotation-keys.js";
 import { bendSurcharge, type SampledMotion } from "./sampled-motion.js";
 import { slerps } from "./slerps.js";
@@ -10,6 +10,10 @@ import { fromOrigin } from "./time-grid.js";
 
 /** Cosine of half the largest step between keys: just under 90°, since some players take the chord for the arc. */
 const LEAST_DOT = 0.7072;
+const LARGEST_ANGLE = acos(LEAST_DOT);
+/** What the largest step is taken for as an error: not so near to 1 that a somewhat longer one is not tried. */
+const ALMOST = 0.97;
+const BEYOND = 1.001;
 
 /**
  * Few rotation keys with which slerp never moves a point within the reach further than `limit` m from where it should be,
@@ -30,7 +34,7 @@ export function linearRotationKeys(
   const far = fromOrigin(body);
   const scaling = 2 * store.lengthError * far;
   const circle = new GreatCircle();
-  const fitEnd = endFitter(motion);
+  const fitEnd = rotationEndFitter(motion);
   const pose = new Float64Array(7);
   const key = new Float64Array(4);
   const first = new Float64Array(4);
@@ -51,34 +55,45 @@ export function linearRotationKeys(
     return x * x + y * y + z * z + w * w;
   };
 
-  const fits = (a: number, b: number): boolean => {
+  /**
+   * Greatest chord, as a part of what is allowed; the middle's alone where that is too great. Where the segment fits, its first
+   * quarter is left out: the error with which the key before starts it says nothing of its length.
+   */
+  const error = (a: number, b: number): number => {
     const start = time(a);
     const duration = time(b) - start;
     const { low, high } = samplesBetween(motion, a, b);
     motion.poseInto(b, pose);
     second.set(pose.subarray(3));
-    if (circle.set(first, 0, second, 0) < LEAST_DOT) return false;
-    if (offCurve && b < last && low <= high) fitEnd(circle, a, b, low, high, second);
+    if (circle.set(first, 0, second, 0) < LEAST_DOT) return Math.max(squaredStep(circle.angle), BEYOND);
+    if (offCurve && b < last && b > a + 1 && low <= high) fitEnd(circle, a, b, low, high, second);
     store.store(second, 0, key, second);
-    if (circle.set(first, 0, second, 0) < LEAST_DOT) return false;
+    if (circle.set(first, 0, second, 0) < LEAST_DOT) return Math.max(squaredStep(circle.angle), BEYOND);
 
     const speed = circle.angle / duration;
     const surcharge = bendSurcharge(far * 4 * speed * speed, Math.min(interval, duration)) + scaling;
     const bound = squaredChordAt(limit - surcharge, body.reach);
-    if (squaredChord(pose, 3, second, 0) > bound) return false;
+    if (bound < 0) return Number.POSITIVE_INFINITY;
+    let greatest = squaredChord(pose, 3, second, 0);
+    if (greatest > bound) return Math.sqrt(greatest / bound);
     if (low <= high) {
-      // Nearly always the error is great about the middle, and most segments tried are too long.
+      // Nearly always the error is great about the middle, and many segments tried are too long.
       const middle = (low + high) >> 1;
       const there = (time(sampleIndex(middle)) - start) * speed;
-      if (chordAt(middle, cos(there), sin(there)) > bound) return false;
+      const chord = chordAt(middle, cos(there), sin(there));
+      if (chord > bound) return Math.sqrt(chord / bound);
       const angle = (time(sampleIndex(low)) - start) * speed;
       let c = cos(angle);
       let s = sin(angle);
       let turn = 0;
       let cosTurn = 1;
       let sinTurn = 0;
+      const early = low + ((high - low) >> 2);
+      let atFirst = 0;
       for (let k = low; ; k++) {
-        if (chordAt(k, c, s) > bound) return false;
+        const chord = chordAt(k, c, s);
+        if (k < early) atFirst = Math.max(atFirst, chord);
+        else greatest = Math.max(greatest, chord);
         if (k === high) break;
         const way = (time(sampleIndex(k + 1)) - time(sampleIndex(k))) * speed;
         if (way !== turn) {
@@ -90,11 +105,12 @@ export function linearRotationKeys(
         s = s * cosTurn + c * sinTurn;
         c = next;
       }
+      if (atFirst > bound || greatest > bound) return Math.sqrt(Math.max(atFirst, greatest) / bound);
     }
     good.stored.set(key);
     good.played.set(second);
     good.surcharge = surcharge;
-    return true;
+    return Math.max(bound > 0 ? Math.sqrt(greatest / bound) : 0, Math.min(squaredStep(circle.angle), ALMOST));
   };
 
   motion.poseInto(0, pose);
@@ -102,7 +118,7 @@ export function linearRotationKeys(
   if (squaredChord(pose, 3, first, 0) > squaredChordAt(limit - scaling, body.reach)) return undefined;
   stored.push(...key);
   played.push(...first);
-  const indices = longestSegments(last, fits, () => {
+  const indices = longestWithin(last, error, () => {
     first.set(good.played);
     stored.push(...good.stored);
     played.push(...good.played);
@@ -119,3 +135,6 @@ export function linearRotationKeys(
     played: slerps(Float64Array.from(played), (k) => time(indices[k])).played,
   };
 }
+
+/** Square of a step of half the angle `angle`, as a part of the greatest. */
+const squaredStep = (angle: number): number => (angle * angle) / (LARGEST_ANGLE * LARGEST_ANGLE);

@@ -1,12 +1,8 @@
-import { longestSegments } from "./longest-segments.js";
+import { EndFit, FITTED, fittedSample } from "./fit-end.js";
+import { longestWithin } from "./longest-segments.js";
 import type { NodePath } from "./node-path.js";
 import type { SampledMotion } from "./sampled-motion.js";
-import { spreadSamples } from "./spread-samples.js";
 import { firstAfter, lastBefore, type TranslationKeys } from "./translation-keys.js";
-
-/** Samples that a segment is fitted to, at most, its end apart; and how often they are weighted again. */
-const FITTED = 11;
-const REWEIGHTINGS = 6;
 
 /**
  * Few translation keys, straight lines between them, with which no point is further than `limit` m from the true motion,
@@ -29,80 +25,49 @@ export function linearTranslationKeys(
   const target = new Float64Array(4);
   const to = new Float64Array(3);
   const good = new Float64Array(3);
-  const chosen = new Int32Array(FITTED);
-  const residuals = new Float64Array(3 * (FITTED + 1));
-  const shares = new Float64Array(FITTED + 1);
-  const radii = new Float64Array(FITTED + 1);
-  const weights = new Float64Array(FITTED + 1);
+  const fit = new EndFit();
   const values: number[] = [];
   let error = 0;
-  let worst = 0;
   let goodWorst = 0;
+
+  /** Of what the rotation alone moves points by: the inverse of what is left, as a part of the limit. */
+  const weightOf = (moved: number): number => limit / Math.max(1e-9, limit - moved);
 
   /** Moves `to` from the target to where the segment's greatest error, as a part of what is allowed, is least. */
   const fitEnd = (start: number, duration: number, low: number, high: number): void => {
-    const count = spreadSamples(low, high, FITTED, chosen);
-    for (let n = 0; n < count; n++) {
-      const k = chosen[n];
+    for (let n = 0; n < FITTED; n++) {
+      const k = fittedSample(n, low, high);
       const share = (times[k] - start) / duration;
-      for (let i = 0; i < 3; i++)
-        residuals[3 * n + i] = from[i] + share * (target[i] - from[i]) - wanted[4 * k + i];
-      shares[n] = share;
-      radii[n] = Math.max(1e-9, limit - wanted[4 * k + 3]);
-      weights[n] = 1;
+      const weight = weightOf(wanted[4 * k + 3]);
+      const x = from[0] + share * (target[0] - from[0]) - wanted[4 * k];
+      const y = from[1] + share * (target[1] - from[1]) - wanted[4 * k + 1];
+      const z = from[2] + share * (target[2] - from[2]) - wanted[4 * k + 2];
+      fit.set(n, weight * x, weight * y, weight * z, weight * share, weight * share);
     }
-    residuals.fill(0, 3 * count, 3 * count + 3);
-    shares[count] = 1;
-    radii[count] = Math.max(1e-9, limit - target[3]);
-    weights[count] = 1;
-    let x = 0;
-    let y = 0;
-    let z = 0;
-    for (let round = 0; ; round++) {
-      let sum = 0;
-      x = y = z = 0;
-      for (let n = 0; n <= count; n++) {
-        const w = (weights[n] * shares[n]) / (radii[n] * radii[n]);
-        sum += w * shares[n];
-        x -= w * residuals[3 * n];
-        y -= w * residuals[3 * n + 1];
-        z -= w * residuals[3 * n + 2];
-      }
-      x /= sum;
-      y /= sum;
-      z /= sum;
-      if (round === REWEIGHTINGS) break;
-      let greatest = 0;
-      for (let n = 0; n <= count; n++) {
-        const dx = residuals[3 * n] + shares[n] * x;
-        const dy = residuals[3 * n + 1] + shares[n] * y;
-        const dz = residuals[3 * n + 2] + shares[n] * z;
-        weights[n] *= Math.sqrt(dx * dx + dy * dy + dz * dz) / radii[n];
-        greatest = Math.max(greatest, weights[n]);
-      }
-      if (!(greatest > 0)) break;
-      for (let n = 0; n <= count; n++) weights[n] /= greatest;
-    }
-    to[0] = target[0] + x;
-    to[1] = target[1] + y;
-    to[2] = target[2] + z;
+    const weight = weightOf(target[3]);
+    fit.set(FITTED, 0, 0, 0, weight, weight);
+    fit.solve();
+    for (let i = 0; i < 3; i++) to[i] = target[i] + fit.shift[i];
   };
 
-  const fits = (a: number, b: number): boolean => {
+  /**
+   * Greatest displacement, as a part of what is allowed; the middle's alone where that is too great. Where the segment fits, its
+   * first quarter is left out: the error with which the key before starts it says nothing of its length.
+   */
+  const misfit = (a: number, b: number): number => {
     const start = time(a);
     const duration = time(b) - start;
     const low = firstAfter(path, start);
     const high = lastBefore(path, time(b));
     path.wantedInto(b, target);
     to.set(target.subarray(0, 3));
-    if (offCurve && b < last && low <= high) fitEnd(start, duration, low, high);
+    if (offCurve && b < last && b > a + 1 && low <= high) fitEnd(start, duration, low, high);
     let square = 0;
     for (let i = 0; i < 3; i++) {
       to[i] = Math.fround(to[i]);
       square += (to[i] - target[i]) * (to[i] - target[i]);
     }
-    worst = Math.sqrt(square) + target[3];
-    if (worst > limit) return false;
+    let worst = Math.sqrt(square) + target[3];
     const displacement = (k: number): number => {
       const share = (times[k] - start) / duration;
       const x = from[0] + share * (to[0] - from[0]) - wanted[4 * k];
@@ -110,15 +75,18 @@ export function linearTranslationKeys(
       const z = from[2] + share * (to[2] - from[2]) - wanted[4 * k + 2];
       return Math.sqrt(x * x + y * y + z * z) + wanted[4 * k + 3];
     };
-    // Half the segments tried are too long; most of those show it about the middle.
-    if (low <= high && displacement((low + high) >> 1) > limit) return false;
-    for (let k = low; k <= high; k++) {
-      worst = Math.max(worst, displacement(k));
-      if (worst > limit) return false;
-    }
+    // Nearly always the error is great about the middle.
+    if (low <= high) worst = Math.max(worst, displacement((low + high) >> 1));
+    if (worst > limit) return worst / limit;
+    const early = low + Math.floor((high - low + 1) / 4);
+    let atFirst = 0;
+    for (let k = low; k < early; k++) atFirst = Math.max(atFirst, displacement(k));
+    for (let k = early; k <= high; k++) worst = Math.max(worst, displacement(k));
+    const all = Math.max(worst, atFirst);
+    if (all > limit) return all / limit;
     good.set(to);
-    goodWorst = worst;
-    return true;
+    goodWorst = all;
+    return worst / limit;
   };
 
   path.wantedInto(0, from);
@@ -131,7 +99,7 @@ export function linearTranslationKeys(
   error = Math.sqrt(square) + from[3];
   if (error > limit) return undefined;
   values.push(from[0], from[1], from[2]);
-  const indices = longestSegments(last, fits, () => {
+  const indices = longestWithin(last, misfit, () => {
     from.set(good);
     values.push(...good);
     error = Math.max(error, goodWorst);

@@ -1,6 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { longestSegments } from "../../src/clip/longest-segments.js";
+import { longestSegments, longestWithin } from "../../src/clip/longest-segments.js";
 
 describe("the longest segments", () => {
   it("are as few as dynamic programming finds, where a part of a fitting segment fits", () => {
@@ -29,5 +29,34 @@ describe("the longest segments", () => {
 
   it("are one where all fits", () => {
     expect(longestSegments(1000, () => true)).toEqual([0, 1000]);
+  });
+});
+
+describe("led by their errors, the longest segments", () => {
+  it("are as long as the error lets them, within a hundredth, in few tries", () => {
+    fc.assert(
+      fc.property(
+        fc.double({ min: 1.5, max: 4, noNaN: true }),
+        fc.double({ min: 20, max: 3000, noNaN: true }),
+        fc.double({ min: 0, max: 0.5, noNaN: true }),
+        (power, greatest, swing) => {
+          // The length at which the error is 1 wanders about `greatest`; a chord's error goes with the square of its length.
+          const longest = (from: number) => greatest * (1 + swing * Math.sin((3 * from) / greatest));
+          let tries = 0;
+          const ends = longestWithin(20_000, (a, b) => {
+            tries++;
+            return ((b - a) / longest(a)) ** power;
+          }) as number[];
+          for (let i = 1; i + 1 < ends.length; i++) {
+            const length = ends[i] - ends[i - 1];
+            expect(length).toBeLessThanOrEqual(longest(ends[i - 1]));
+            expect(length).toBeGreaterThan(0.99 * longest(ends[i - 1]) - 1);
+          }
+          // Bisection alone would take 7 to 12.
+          expect(tries).toBeLessThan(5 * ends.length + 20);
+        },
+      ),
+      { seed: 5, numRuns: 300 },
+    );
   });
 });
