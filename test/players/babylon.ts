@@ -8,24 +8,26 @@ import type { TransformNode } from "@babylonjs/core/Meshes/transformNode.js";
 import { Scene } from "@babylonjs/core/scene.js";
 import "@babylonjs/loaders/glTF/2.0/index.js";
 import type { Vec3 } from "../../src/math/vec3.js";
-import type { Player } from "./player.js";
+import { isJson, type Player } from "./player.js";
 
 export const babylon: Player = {
   name: "Babylon.js",
-  async open(glb) {
+  async open(file) {
     const scene = new Scene(new NullEngine());
     scene.useRightHandedSystem = true;
-    await AppendSceneAsync(new Uint8Array(glb), scene, { pluginExtension: ".glb" });
+    if (isJson(file))
+      await AppendSceneAsync(`data:${new TextDecoder().decode(file)}`, scene, { pluginExtension: ".gltf" });
+    else await AppendSceneAsync(new Uint8Array(file), scene, { pluginExtension: ".glb" });
     scene.createDefaultCamera();
     for (const group of scene.animationGroups) group.stop();
     return {
       clips: scene.animationGroups.map(({ name }) => name),
-      play(clip, name) {
+      play(clip, name, loop = true) {
         const group = scene.animationGroups.find(({ name }) => name === clip)!;
         const [root] = scene.rootNodes.filter(({ name }) => name === "__root__");
         const [only] = (root as TransformNode).getChildTransformNodes(true);
         const node = name === undefined ? only : (scene.getNodeByName(name) as TransformNode);
-        group.start(true);
+        group.start(loop);
         group.pause();
         // the loader turns seconds into frames of its own
         const framesPerSecond = group.targetedAnimations[0].animation.framePerSecond;

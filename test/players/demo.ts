@@ -8,9 +8,14 @@ import { recordOf } from "../../src/record/record-of.js";
 
 export const DEMO = fileURLToPath(new URL("../../assets/quay.throws.yaml", import.meta.url));
 
+export async function openDemo() {
+  const opened = await openThrowFile(DEMO);
+  const { file, models } = opened;
+  return { ...opened, props: await loadProps(file, new Set(file.props.keys()), models) };
+}
+
 export async function bakeDemo() {
-  const { file, text, models } = await openThrowFile(DEMO);
-  const props = await loadProps(file, new Set(file.props.keys()), models);
+  const { file, text, models, props } = await openDemo();
   const baked = await bake(file, models);
   return {
     file,

@@ -4,31 +4,16 @@ import { describe, expect, it } from "vitest";
 import { modelRotation } from "../../src/bake/motion.js";
 import { solveTake } from "../../src/bake/take.js";
 import { rotate } from "../../src/math/quat.js";
-import { add, distance, subtract, type Vec3 } from "../../src/math/vec3.js";
+import { add, distance, subtract } from "../../src/math/vec3.js";
 import { babylon } from "./babylon.js";
 import { bakeDemo } from "./demo.js";
+import { outerPoints } from "./outer-points.js";
 import { three } from "./three.js";
 
 const demo = await bakeDemo();
 
 /** Off any grid of keys or frames: multiples of the golden ratio, mod 1 (Weyl's equidistribution). */
 const moments = Array.from({ length: 40 }, (_, i) => ((i + 0.5) * 0.6180339887498949) % 1);
-
-/** A handful of the prop's points, the furthest out in eight directions. */
-function outerPoints(extremes: Float64Array): Vec3[] {
-  const directions: Vec3[] = [-1, 1].flatMap((x) =>
-    [-1, 1].flatMap((y) => [-1, 1].map((z): Vec3 => [x, y, z])),
-  );
-  return directions.map((d) => {
-    let best: Vec3 = [extremes[0], extremes[1], extremes[2]];
-    const along = (p: Vec3) => p[0] * d[0] + p[1] * d[1] + p[2] * d[2];
-    for (let i = 3; i < extremes.length; i += 3) {
-      const p: Vec3 = [extremes[i], extremes[i + 1], extremes[i + 2]];
-      if (along(p) > along(best)) best = p;
-    }
-    return best;
-  });
-}
 
 describe("the validator", () => {
   it.each(demo.files.map((file) => [file.name, file.content] as const))(
