@@ -1,6 +1,6 @@
 /** The props of a throw file, read and weighed. */
 
-import type { Model } from "../gltf/model.js";
+import { type Model, ModelError } from "../gltf/model.js";
 import { textSha256 } from "../math/hash.js";
 import { RequestError } from "../math/request-error.js";
 import { type Prop, weigh } from "../prop/prop.js";
@@ -23,7 +23,7 @@ export type ModelSource = (path: string) => Promise<{ model: Model; sha256: stri
 /**
  * Reads and weighs the props that are named, in the file's order.
  *
- * @throws ModelError, or ThrowFileError for a prop whose keys do not fit its model
+ * @throws ThrowFileError for a prop whose model cannot be used or whose keys do not fit it
  */
 export async function loadProps(
   file: ThrowFile,
@@ -36,8 +36,12 @@ export async function loadProps(
     try {
       loaded.set(name, await loadProp(entry, source));
     } catch (error) {
-      if (!(error instanceof RequestError)) throw error;
-      throw throwFileError(file, new RequestError(["props", name, ...error.path], error.fault, error.remedy));
+      const fault =
+        error instanceof ModelError
+          ? new RequestError(["model"], `${error.model}: ${error.fault}`, error.hint)
+          : error;
+      if (!(fault instanceof RequestError)) throw fault;
+      throw throwFileError(file, new RequestError(["props", name, ...fault.path], fault.fault, fault.remedy));
     }
   }
   return loaded;

@@ -1,6 +1,6 @@
 /** Whole files or none: everything is written under temporary names first and only then given its own. */
 
-import { mkdir, rename, rm, stat, writeFile } from "node:fs/promises";
+import { mkdir, readdir, rename, rm, stat, writeFile } from "node:fs/promises";
 import { dirname, join } from "node:path";
 import { MachineError } from "./machine-error.js";
 
@@ -24,6 +24,7 @@ export async function writeFiles(folder: string, files: readonly OutputFile[]): 
   }));
   try {
     await makeFolder(folder);
+    await removeLeftovers(folder);
     for (const file of staged) {
       await refuseFolder(file.path);
       await writeFile(file.temporary, file.content, { flush: true });
@@ -39,6 +40,23 @@ export async function writeFiles(folder: string, files: readonly OutputFile[]): 
 
 // the process number keeps two bakes into one folder out of each other's temporary files
 const temporaryName = (folder: string, name: string) => join(folder, `.${name}.${process.pid}.part`);
+
+/** Temporary files of bakes that were killed: nobody would ever rename them. */
+async function removeLeftovers(folder: string): Promise<void> {
+  for (const name of await readdir(folder)) {
+    const id = /^\..+\.(\d+)\.part$/.exec(name)?.[1];
+    if (id && !isRunning(Number(id))) await rm(join(folder, name), { force: true });
+  }
+}
+
+function isRunning(id: number): boolean {
+  try {
+    // signal 0 asks, and does nothing
+    return process.kill(id, 0);
+  } catch (error) {
+    return (error as NodeJS.ErrnoException).code === "EPERM";
+  }
+}
 
 /** Not `mkdir`'s own recursion: it never ends where a folder takes no new ones and says that it is not there (/proc). */
 async function makeFolder(path: string): Promise<void> {

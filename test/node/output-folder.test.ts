@@ -1,3 +1,4 @@
+import { spawnSync } from "node:child_process";
 import {
   existsSync,
   mkdirSync,
@@ -34,6 +35,17 @@ const faultOf = (work: Promise<void>) =>
   );
 
 describe("writing files into a folder", () => {
+  it("takes away what a killed bake left, and nothing of one that still runs", async () => {
+    const gone = spawnSync(process.execPath, ["--version"]).pid;
+    const dead = `.lob.glb.${gone}.part`;
+    const alive = `.lob.glb.${process.ppid}.part`;
+    for (const name of [dead, alive, ".lob.glb.part", "1.part"]) writeFileSync(join(root, name), "half");
+    await writeFiles(root, FILES);
+    expect(readdirSync(root).sort()).toEqual(
+      [".lob.glb.part", alive, "1.part", "lob.glb", "takes.json"].sort(),
+    );
+  });
+
   it("makes the folder and all above it, and leaves nothing but the files", async () => {
     const folder = join(root, "a", "b", "c");
     await writeFiles(folder, FILES);
