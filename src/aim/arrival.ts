@@ -75,6 +75,26 @@ export function solveArrival(wish: ArrivalWish, body: AimedBody): AimedArrival {
   return { ...solved, warnings: [...new Set([...warnings, ...solved.warnings])] };
 }
 
+/**
+ * The flight of the centre of mass of such a throw, from its place at release, in a fraction of the time that its spin takes; undefined where it depends on the spin or on a roll that is still
+ * to be found.
+ *
+ * @throws RequestError where there is none
+ */
+export function arrivalArc(wish: ArrivalWish, body: AimedBody): { from: Vec3; arc: Arc } | undefined {
+  const { facing } = wish;
+  const isRolled = facing.kind === "direction" && wish.arc.to !== undefined && length(wish.arrivalOffset) > 0;
+  if (dependsOnSpin(wish) || isRolled || wish.arc.openEnd) return undefined;
+  const end: EndPose =
+    facing.kind === "pose" ? facing.pose : (course) => between(facing.direction, facing.target(course));
+  const arc = coupledArc(wish, body, solveArc(wish.arc), end, ZERO);
+  return { from: subtract(wish.arc.from, rotate(posesAt(wish, arc, end).start, wish.releaseOffset)), arc };
+}
+
+/** Only a stated velocity of a point off the centre makes the arc depend on the spin. */
+const dependsOnSpin = (wish: ArrivalWish): boolean =>
+  wish.arc.velocity !== undefined && length(wish.releaseOffset) > 0;
+
 type EndPose = (course: ThrowCourse, release: Quat) => Quat;
 
 /** @param near a spin that nearly does it, where one is known; principal frame, rad/s, for the centred arc's duration */
@@ -86,8 +106,7 @@ function solvePose(
   near?: Vec3,
 ): AimedArrival {
   let spin: Vec3 = near ?? ZERO;
-  // only a stated velocity of a point off the centre makes the arc depend on the spin
-  const isHeld = wish.arc.velocity !== undefined && length(wish.releaseOffset) > 0;
+  const isHeld = dependsOnSpin(wish);
   for (let round = 0; ; round++) {
     const arc = coupledArc(wish, body, centred, end, spin);
     const { start, finish, course } = posesAt(wish, arc, end);

@@ -1,12 +1,13 @@
 /** `limits`: bounds that a take holds over its whole continuous flight. */
 
+import type { Arc } from "../flight/arc.js";
 import type { FlyingBody } from "../flight/clearance.js";
 import { type Box, keepsOutOf, keepsTo } from "../flight/clearance-limits.js";
 import { greatestRate } from "../flight/greatest-rate.js";
 import { shareAbout } from "../flight/share-about.js";
 import { turnsAboutMomentum } from "../flight/turns.js";
 import { fromAxisAngle } from "../math/quat.js";
-import { add, length, scale, subtract, type Vec3 } from "../math/vec3.js";
+import { add, addScaled, length, scale, subtract, type Vec3 } from "../math/vec3.js";
 import type { Limits } from "../throwfile/types.js";
 import type { Conversion } from "./host.js";
 
@@ -14,6 +15,9 @@ const UP: Vec3 = [0, 1, 0];
 
 /** What rounding may add to a number that just meets its bound, as a share of it or of 1. */
 const ROUNDING = 1e-11;
+
+/** By how much more than rounding a place may be beyond its bound, m. */
+const HEIGHT = 1e-9;
 
 /** A take that is left out: none of its candidates holds the throw's limits. */
 export class UnheldLimits extends Error {
@@ -63,6 +67,25 @@ export function brokenLimits(limits: Limits, body: FlyingBody, axis: () => Vec3,
   }
   if (share !== undefined) check("share", atMost(share, shareAbout(flight, axis()) ?? 1));
   return broken;
+}
+
+/**
+ * Keys of the limits that no turning can save a flight of the centre of mass from breaking: it lies within the prop's hull, so that the prop passes
+ * a height where it does.
+ *
+ * @param from place of the centre of mass at release
+ */
+export function brokenByArc(limits: Limits, from: Vec3, arc: Arc, host: Conversion): string[] {
+  const { minHeight, maxHeight, speed } = limits;
+  const end = from[1] + arc.duration * (arc.velocity[1] + (arc.duration * arc.gravity[1]) / 2);
+  const lowest = Math.min(from[1], end);
+  const highest = Math.max(from[1] + arc.apex.rise, end);
+  const fastest = Math.max(length(arc.velocity), length(addScaled(arc.velocity, arc.gravity, arc.duration)));
+  return [
+    ...(minHeight !== undefined && lowest < host.length(minHeight) - HEIGHT ? ["limits.minHeight"] : []),
+    ...(maxHeight !== undefined && highest > host.length(maxHeight) + HEIGHT ? ["limits.maxHeight"] : []),
+    ...(speed !== undefined && !atMost(fastest, host.length(speed)) ? ["limits.speed"] : []),
+  ];
 }
 
 const atMost = (value: number, bound: number): boolean => value <= bound + ROUNDING * Math.max(1, bound);

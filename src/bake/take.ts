@@ -1,6 +1,6 @@
 /** One take: the first of its candidates that has a flight, flown and cut into keys. */
 
-import { type AimedArrival, type ArrivalWish, solveArrival } from "../aim/arrival.js";
+import { type AimedArrival, type ArrivalWish, arrivalArc, solveArrival } from "../aim/arrival.js";
 import { type AimedLaunch, type LaunchWish, solveLaunch } from "../aim/launch.js";
 import type { Body } from "../clip/body.js";
 import { defaultTolerance } from "../clip/default-tolerance.js";
@@ -16,7 +16,7 @@ import type { Prop } from "../prop/prop.js";
 import { propSupport, type Support } from "../prop/support.js";
 import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
 import { type Conversion, hostFrame } from "./host.js";
-import { brokenLimits, UnheldLimits } from "./limits.js";
+import { brokenByArc, brokenLimits, UnheldLimits } from "./limits.js";
 import { modelRotation } from "./motion.js";
 import { cutInParentFrame } from "./parent-frame.js";
 import { gapAtArrival, touchDown } from "./touch-down.js";
@@ -52,9 +52,12 @@ export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number
     tried++;
     const drawn = drawThrow(entry, { ...stream, candidate });
     try {
-      const flown = flyDrawn(file, drawn, prop, host);
-      const faults = limitFaults(file, drawn, prop, flown, host);
-      if (faults.length === 0) return { number, candidate, drawn, ...flown };
+      const faults = arcFaults(file, drawn, prop, host);
+      if (faults.length === 0) {
+        const flown = flyDrawn(file, drawn, prop, host);
+        faults.push(...limitFaults(file, drawn, prop, flown, host));
+        if (faults.length === 0) return { number, candidate, drawn, ...flown };
+      }
       for (const key of faults) broken.set(key, (broken.get(key) ?? 0) + 1);
     } catch (error) {
       if (!(error instanceof RequestError)) throw error;
@@ -90,6 +93,14 @@ function flyDrawn(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversi
   const aimed = touchDown(open, wish, body, floor, host);
   const flight = fly(aimed.launch);
   return { wish, aimed, flight, gap: gapAtArrival({ ...body, flight }, host.length(floor)) };
+}
+
+/** Limits that are broken whatever spin would be solved: a candidate that breaks one is not worth solving. */
+function arcFaults(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversion): string[] {
+  const { facing } = drawn.arrive;
+  if (!drawn.limits || facing === undefined) return [];
+  const known = arrivalArc(arrivalWish(drawn, facing, prop, file.gravity, host), prop.principal);
+  return known ? brokenByArc(drawn.limits, known.from, known.arc, host) : [];
 }
 
 function limitFaults(

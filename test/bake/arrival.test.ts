@@ -195,6 +195,32 @@ describe("a limit on the turning", () => {
     expect(shared.record.clips.length).toBe(3);
   });
 
+  it("is not needed where the arc alone breaks a limit: heights and speed hold all the same", async () => {
+    const throwWith = (limits: string) => `lob:
+  prop: spanner
+  takes: 6
+  release: { at: [0, 1, 0], point: grip, facing: any }
+  arrive: { at: [0, 0.8..1.2, 3], facing: any }
+  arc: { apex: 0.2..1.2 }
+  limits: { ${limits} }`;
+    const free = (await bakeThrows(throwWith(""))).record.clips;
+    const high = (await bakeThrows(throwWith("maxHeight: 1.7"))).record.clips;
+    const slow = (await bakeThrows(throwWith("speed: 5.5"))).record.clips;
+    const low = (await bakeThrows(throwWith("minHeight: 0.9"))).record.clips;
+    const top = (clip: (typeof free)[number]) => clip.release.centerOfMass[1] + clip.apex.rise;
+    const speed = (clip: (typeof free)[number]) =>
+      Math.max(length(clip.release.velocity), length(clip.arrival.velocity));
+    const bottom = (clip: (typeof free)[number]) =>
+      Math.min(clip.release.centerOfMass[1], clip.arrival.centerOfMass[1]);
+    expect(free.some((clip) => top(clip) > 1.7)).toBe(true);
+    expect(free.some((clip) => speed(clip) > 5.5)).toBe(true);
+    expect(free.some((clip) => bottom(clip) < 0.9)).toBe(true);
+    for (const list of [high, slow, low]) expect(list.length).toBe(6);
+    for (const clip of high) expect(top(clip)).toBeLessThan(1.7);
+    for (const clip of slow) expect(speed(clip)).toBeLessThanOrEqual(5.5);
+    for (const clip of low) expect(bottom(clip)).toBeGreaterThan(0.9);
+  });
+
   it("that no candidate can hold leaves the take out", async () => {
     const { bake } = await bakeThrows(
       `pin:
