@@ -12,6 +12,8 @@ test("a point is inside an L where it is in one of its two bars, whichever way t
     fc.property(
       fc.tuple(coordinate, coordinate, fc.double({ min: -0.05, max: 0.2, noNaN: true })),
       ([x, y, z]) => {
+        // On the surface itself there is no right answer.
+        fc.pre([x, y, z].every((v) => [0, 0.125, 0.375, 0.5].every((wall) => Math.abs(v - wall) > 1e-12)));
         const within = (v: number, to: number) => v > 0 && v < to;
         const expected =
           within(z, 0.125) &&
