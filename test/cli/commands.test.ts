@@ -10,7 +10,7 @@ import { Program } from "./program.js";
 
 // Exit codes (0 done, 1 a check failed, 2 the request is wrong, 3 the machine is) and words: the project's own choice.
 
-const COMMANDS = ["weigh", "bake", "verify", "schema"];
+const COMMANDS = ["weigh", "ways", "bake", "verify", "schema"];
 
 describe("help", () => {
   it.each(COMMANDS)("of %s has an example that begins as it is typed", async (command) => {
