@@ -7,7 +7,9 @@ import { rounded } from "../math/rounded.js";
 import type { Prop } from "../prop/prop.js";
 import { throwFileError } from "../throwfile/errors.js";
 import { type ThrowEntry, type ThrowFile, takeNumbers } from "../throwfile/types.js";
-import { clipFiles, type FiledClip, fileName } from "./files.js";
+import { type BakedChain, bakeChain, chainClips, selectChains } from "./bake-chain.js";
+import type { UnheldChain } from "./chain.js";
+import { clipFiles, clipName, type FiledClip, fileName } from "./files.js";
 import { hostFrame } from "./host.js";
 import { UnheldLimits } from "./limits.js";
 import { cuesOf, type MotionState, motionState } from "./motion.js";
@@ -40,16 +42,17 @@ export interface Bake {
   props: Map<string, LoadedProp>;
   /** Those of which there is a take. */
   throws: BakedThrow[];
+  chains: BakedChain[];
   /** What is to be written, by names within the output folder. */
   files: NamedFile[];
   /** What some players will do to these files. */
   warnings: string[];
-  /** Takes left out, as none of their candidates holds the throw's limits: the name of the clip that would have been, and why. */
-  unheld: { name: string; reason: UnheldLimits }[];
+  /** Takes left out, as none of their candidates holds the throw's limits or one fails in a chain: the name of the clip that would have been, and why. */
+  unheld: { name: string; reason: UnheldLimits | UnheldChain }[];
 }
 
 export interface BakeOptions {
-  /** Names of the throws to bake; default all. */
+  /** Names of the throws and chains to bake; default all. */
   only?: readonly string[];
   /** First and last number of the takes to bake; default all. */
   takes?: readonly [number, number];
@@ -60,32 +63,61 @@ export interface BakeOptions {
 /**
  * Bakes a throw file in memory.
  *
- * @throws ThrowFileError for a throw that cannot be, ModelError for a model that cannot be used, RequestError for `only` naming no throw
+ * @throws ThrowFileError for a throw that cannot be, ModelError for a model that cannot be used, RequestError for `only` naming no throw or chain
  *   and for `takes` that no throw has
  */
 export async function bake(file: ThrowFile, source: ModelSource, options: BakeOptions = {}): Promise<Bake> {
   checkWhole(file, options);
-  const chosen = selectTakes(selectThrows(file, options.only), options.takes);
-  const props = await loadProps(file, new Set(chosen.map(({ entry }) => entry.prop)), source);
-  const total = chosen.reduce((sum, { numbers }) => sum + numbers.length, 0);
+  const { only } = options;
+  checkNames(file, only);
+  const selected = selectTakes(
+    [
+      ...selectThrows(
+        file,
+        only?.filter((name) => file.throws.has(name)),
+      ),
+      ...selectChains(file, only),
+    ],
+    options.takes,
+  );
+  const chosen = selected.flatMap(({ entry, numbers }) => ("throws" in entry ? [] : [{ entry, numbers }]));
+  const chained = selected.flatMap(({ entry, numbers }) => ("throws" in entry ? [{ entry, numbers }] : []));
+  const props = await loadProps(file, new Set(selected.map(({ entry }) => entry.prop)), source);
+  const total = selected.reduce((sum, { numbers }) => sum + numbers.length, 0);
   let done = 0;
   const unheld: Bake["unheld"] = [];
   const throws = chosen.flatMap(({ entry, numbers }) => {
     const onTake = () => options.onTake?.(++done, total);
     return bakeThrow(file, entry, numbers, props.get(entry.prop) as LoadedProp, unheld, onTake) ?? [];
   });
+  const chains = chained.flatMap(({ entry, numbers }) => {
+    const onTake = () => options.onTake?.(++done, total);
+    return bakeChain(file, entry, numbers, props.get(entry.prop) as LoadedProp, throws, unheld, onTake) ?? [];
+  });
   return {
     props,
     throws,
-    files: filesOf(file, throws, props),
-    warnings: playerWarnings(file, throws, props),
+    chains,
+    files: filesOf(file, throws, chains, props),
+    warnings: playerWarnings(file, throws, chains, props),
     unheld,
   };
 }
 
+function checkNames(file: ThrowFile, only: readonly string[] = []): void {
+  const names = [...file.throws.keys(), ...file.chains.keys()];
+  for (const name of only)
+    if (!names.includes(name))
+      throw new RequestError(
+        ["--only"],
+        `there is no throw${file.chains.size > 0 ? " or chain" : ""} "${name}"`,
+        `one of ${names.join(", ")}`,
+      );
+}
+
 /** A file of all throws is made of all. */
 function checkWhole(file: ThrowFile, { only }: BakeOptions): void {
-  if (file.bake.files === "together" && only && only.length < file.throws.size)
+  if (file.bake.files === "together" && only && only.length < file.throws.size + file.chains.size)
     throw new RequestError(
       ["--only"],
       "one file holds the clips of all throws (bake.files is together), so that some cannot be baked alone",
@@ -105,10 +137,10 @@ export function selectThrows(file: ThrowFile, only?: readonly string[]): ThrowEn
 }
 
 /** The throws that have any of the takes, with the numbers of those they have. */
-export function selectTakes(
-  entries: readonly ThrowEntry[],
+export function selectTakes<Entry extends Pick<ThrowEntry, "takes">>(
+  entries: readonly Entry[],
   takes?: BakeOptions["takes"],
-): { entry: ThrowEntry; numbers: readonly number[] }[] {
+): { entry: Entry; numbers: readonly number[] }[] {
   const all = entries.map((entry) => ({ entry, numbers: takeNumbers(entry.takes) }));
   if (!takes) return all;
   const [first, last] = takes;
@@ -148,7 +180,12 @@ function bakeThrow(
   }
 }
 
-function filesOf(file: ThrowFile, throws: readonly BakedThrow[], props: Bake["props"]): NamedFile[] {
+function filesOf(
+  file: ThrowFile,
+  throws: readonly BakedThrow[],
+  chains: readonly BakedChain[],
+  props: Bake["props"],
+): NamedFile[] {
   const clips = throws.flatMap(({ entry, takes }) =>
     takes.map(
       (baked): FiledClip => ({
@@ -161,7 +198,7 @@ function filesOf(file: ThrowFile, throws: readonly BakedThrow[], props: Bake["pr
     ),
   );
   try {
-    return clipFiles(file, clips);
+    return clipFiles(file, [...clips, ...chains.flatMap((chain) => chainClips(chain, props))]);
   } catch (error) {
     throw error instanceof RequestError ? throwFileError(file, error) : error;
   }
@@ -198,10 +235,6 @@ function attempt(solve: () => Take): Take | UnheldLimits {
     throw error;
   }
 }
-
-/** Two digits, or as many as the number has. */
-const clipName = (entry: ThrowEntry, number: number): string =>
-  `${entry.name}_${String(number).padStart(2, "0")}`;
 
 /** What an engine needs to take over from the clip, or to hang sounds on it. */
 const clipExtras = (entry: ThrowEntry, { take, release, arrival }: BakedTake) => ({

@@ -15,6 +15,10 @@ export interface FiledClip extends NamedTrack {
   prop: LoadedProp;
 }
 
+/** Two digits, or as many as the number has. */
+export const clipName = (entry: { name: string }, number: number): string =>
+  `${entry.name}_${String(number).padStart(2, "0")}`;
+
 /** Name of the file that a clip is in: of its throw, of itself, or of the throw file. */
 export function fileName(file: ThrowFile, throwName: string, clipName: string): string {
   const { files, container } = file.bake;

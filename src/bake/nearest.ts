@@ -5,6 +5,9 @@ import type { Flight } from "../flight/flight.js";
 /** Moments compared, a second; each take is held at its last pose when the other goes on. */
 const SAMPLES_PER_SECOND = 60;
 
+/** What moves: a flight, or several and what is between them. */
+export type Movement = Pick<Flight, "duration" | "centerOfMass" | "orientationInto">;
+
 export interface Nearest {
   take: number;
   /** m: the greatest distance of a point of the prop at any moment. */
@@ -16,10 +19,10 @@ export interface Nearest {
  *
  * @param reach of the prop, m: a point's displacement is at most that of the centre of mass plus 2·reach·sin(θ/2) for a turn by θ
  */
-export function nearestFinder(reach: number): (take: number, flight: Flight) => Nearest | null {
+export function nearestFinder(reach: number): (take: number, movement: Movement) => Nearest | null {
   const earlier: { take: number; samples: Float64Array }[] = [];
-  return (take, flight) => {
-    const samples = sample(flight);
+  return (take, movement) => {
+    const samples = sample(movement);
     let nearest: Nearest | null = null;
     for (const other of earlier) {
       const limit = nearest?.distance ?? Number.POSITIVE_INFINITY;
@@ -32,7 +35,7 @@ export function nearestFinder(reach: number): (take: number, flight: Flight) => 
 }
 
 /** Centre of mass and orientation, seven numbers a moment. */
-function sample(flight: Flight): Float64Array {
+function sample(flight: Movement): Float64Array {
   const count = Math.ceil(flight.duration * SAMPLES_PER_SECOND) + 1;
   const samples = new Float64Array(7 * count);
   for (let i = 0; i < count; i++) {

@@ -2,6 +2,7 @@
 
 import type { ThrowFile } from "../throwfile/types.js";
 import type { BakedThrow } from "./bake.js";
+import type { BakedChain } from "./bake-chain.js";
 import { addedNames } from "./graft.js";
 import type { LoadedProp } from "./props.js";
 
@@ -12,12 +13,13 @@ const RESAMPLED_AT = 30;
 export function playerWarnings(
   { bake }: ThrowFile,
   throws: readonly BakedThrow[],
+  chains: readonly BakedChain[],
   props: ReadonlyMap<string, LoadedProp>,
 ): string[] {
-  const used = new Set(throws.map(({ entry }) => entry.prop));
+  const used = new Set([...throws.map(({ entry }) => entry.prop), ...chains.map(({ prop }) => prop)]);
   return [
     ...throws.flatMap(spinWarning),
-    ...throws.flatMap(({ entry: { name } }) => flagWarning(name)),
+    ...[...throws, ...chains].flatMap(({ entry: { name } }) => flagWarning(name)),
     ...Array.from(props).flatMap(([name, loaded]) =>
       used.has(name) ? nodeWarnings(bake.layout, loaded) : [],
     ),

@@ -19,6 +19,7 @@ import { type Conversion, hostFrame } from "./host.js";
 import { brokenByArc, brokenLimits, UnheldLimits } from "./limits.js";
 import { modelRotation } from "./motion.js";
 import { cutInParentFrame } from "./parent-frame.js";
+import { type Start, startingAs } from "./start.js";
 import { gapAtArrival, touchDown } from "./touch-down.js";
 import { arrivalWish, launchWish, mayWobble, turningAxis } from "./wish.js";
 
@@ -75,17 +76,29 @@ export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number
   );
 }
 
+/** A take thrown again, with what it has drawn, from another place and pose; with it the limits that it breaks. */
+export function retake(
+  file: ThrowFile,
+  prop: Prop,
+  take: Take,
+  start: Start,
+): { take: Take; broken: readonly string[] } {
+  const host = hostFrame(file.host).toWorld;
+  const flown = flyDrawn(file, take.drawn, prop, host, start);
+  return { take: { ...take, ...flown }, broken: limitFaults(file, take.drawn, prop, flown, host) };
+}
+
 type Flown = Pick<Take, "wish" | "aimed" | "flight" | "gap">;
 
 /** The flight of a drawn throw: the arc, and then its end by a touch where it is open. */
-function flyDrawn(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversion): Flown {
+function flyDrawn(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversion, start?: Start): Flown {
   const { facing } = drawn.arrive;
   if (facing !== undefined) {
-    const wish = arrivalWish(drawn, facing, prop, file.gravity, host);
+    const wish = startingAs(arrivalWish(drawn, facing, prop, file.gravity, host), start);
     const aimed = solveArrival(wish, prop.principal);
     return { wish, aimed, flight: fly(aimed.launch) };
   }
-  const wish = launchWish(drawn, prop, file.gravity, host);
+  const wish = startingAs(launchWish(drawn, prop, file.gravity, host), start);
   const open = solveLaunch(wish, prop.principal);
   const { floor } = drawn.arrive;
   if (floor === undefined) return { wish, aimed: open, flight: fly(open.launch) };

@@ -15,17 +15,23 @@ export function turnsAboutMomentum(flight: Flight): number {
 /**
  * How much of the turning is about each principal axis, in the order of `launch.moments`: ∫|ω_a|dt / ∫|ω|dt, each 0 to
  * 1 (they add up to more than 1 unless the spin is clean); zeros for a body at rest. Integrals of the continuous motion,
- * good to 1e-12.
+ * good to 1e-12; of several flights of a body together.
  *
  * Gauss–Legendre quadrature over panels in which the body turns 1 rad at most, split where a component changes sign. No
  * panel hides two changes: ω_a'' = k_a (k_b ω_c² + k_c ω_b²) ω_a with every |k| ≤ 1, so that by Sturm's comparison
  * theorem zeros of a component lie at least π rad of the greatest rate apart.
  */
-export function axisShares(flight: Flight): Vec3 {
-  const panels = Math.ceil(flight.duration * flight.greatestRate);
-  if (panels === 0) return [0, 0, 0];
+export function axisShares(...flights: readonly Flight[]): Vec3 {
   const whole = new CompensatedSum();
   const about = [new CompensatedSum(), new CompensatedSum(), new CompensatedSum()];
+  for (const flight of flights) addTurning(flight, whole, about);
+  if (whole.value === 0) return [0, 0, 0];
+  return [about[0].value / whole.value, about[1].value / whole.value, about[2].value / whole.value];
+}
+
+/** ∫|ω|dt and each ∫|ω_a|dt. */
+function addTurning(flight: Flight, whole: CompensatedSum, about: readonly CompensatedSum[]): void {
+  const panels = Math.ceil(flight.duration * flight.greatestRate);
   const time = (panel: number): number => (flight.duration * panel) / panels;
 
   let start = flight.spin(0);
@@ -45,7 +51,6 @@ export function axisShares(flight: Flight): Vec3 {
     }
     start = end;
   }
-  return [about[0].value / whole.value, about[1].value / whole.value, about[2].value / whole.value];
 }
 
 /** The spin at the nodes of the quadrature between two times. */

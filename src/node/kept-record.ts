@@ -30,19 +30,18 @@ export async function readRecord(folder: string): Promise<{ record: TakesRecord;
 }
 
 /**
- * The record to write: `fresh`, and in the throw file's order the lines of throws that it still has but that were not baked this time.
+ * The record to write: `fresh`, and in the throw file's order the lines of throws and chains that it still has but that were not baked this time.
  *
  * @throws RequestError for a takes.json that is none
  */
 export async function mergeRecord(folder: string, fresh: TakesRecord, file: ThrowFile): Promise<TakesRecord> {
   const baked = new Set(fresh.clips.map((clip) => clip.throw));
-  const missing = [...file.throws.keys()].filter((name) => !baked.has(name));
+  const all = [...file.throws.keys(), ...file.chains.keys()];
+  const missing = all.filter((name) => !baked.has(name));
   const old = missing.length > 0 ? (await readRecord(folder))?.record : undefined;
   if (!old) return fresh;
   const kept = old.clips.filter((clip) => missing.includes(clip.throw));
-  const clips = [...file.throws.keys()].flatMap((name) =>
-    [...fresh.clips, ...kept].filter((clip) => clip.throw === name),
-  );
+  const clips = all.flatMap((name) => [...fresh.clips, ...kept].filter((clip) => clip.throw === name));
   // a throw kept may have been thrown with a prop that the throw file no longer has
   const names = new Set([...file.props.keys(), ...kept.map((clip) => clip.prop)]);
   const props = [...names].flatMap((name) => {

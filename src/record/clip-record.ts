@@ -20,8 +20,20 @@ export interface PropRecord {
   warnings: string[];
 }
 
+/** A throw within a chain's clip. */
+export interface PartRecord {
+  throw: string;
+  /** Within the clip, and how long it flies, s. */
+  start: number;
+  time: number;
+  turns: number;
+  release: MotionState;
+  arrival: MotionState;
+}
+
 export interface ClipRecord {
   name: string;
+  /** Name of the throw, or of the chain. */
   throw: string;
   take: number;
   prop: string;
@@ -42,10 +54,12 @@ export interface ClipRecord {
   error: number;
   keys: { translation: number; rotation: number };
   bytes: number;
-  candidate: number;
+  /** Not of a chain, whose throws have their own. */
+  candidate?: number;
   draws: Record<string, unknown>;
-  /** Within the clip, which may stand still before and after it, s. */
-  flight: { start: number; time: number };
+  /** Within the clip, which may stand still before and after it, s; a chain has parts instead. */
+  flight?: { start: number; time: number };
+  parts?: PartRecord[];
   /** Null where no earlier take was made in the same run. */
   nearest: { take: number; distance: number } | null;
 }

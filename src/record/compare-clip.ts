@@ -6,7 +6,7 @@ import { angleBetween, type Quat } from "../math/quat.js";
 import { cross, distance, dot, length, subtract, type Vec3 } from "../math/vec3.js";
 import type { Host } from "../throwfile/types.js";
 import type { ClipRecord } from "./clip-record.js";
-import { hostChange } from "./compare-host.js";
+import { airtime, gravity, hostChange } from "./compare-host.js";
 import { type Change, changes } from "./compare-values.js";
 import {
   amount,
@@ -97,14 +97,14 @@ function side(clip: ClipRecord, host: Conversion): Side {
     release,
     arrival,
     rise: host.length(clip.apex.rise),
-    gravity: distance(release.velocity, arrival.velocity) / clip.flight.time,
+    gravity: host.length(length(gravity(clip))),
   };
 }
 
 const arrives = (old: Side, now: Side): string[] =>
   said("arrives", [
     ...displaced(subtract(now.arrival.centerOfMass, old.arrival.centerOfMass), course(old)),
-    ...later(now.clip.flight.time - old.clip.flight.time),
+    ...later(airtime(now.clip) - airtime(old.clip)),
     ...faster(length(now.arrival.velocity) - length(old.arrival.velocity)),
     ...turned(old.clip.arrival.rotation, now.clip.arrival.rotation),
   ]);

@@ -26,5 +26,11 @@ export function hostChange(before: ClipRecord, now: ClipRecord): string | undefi
 }
 
 /** In the host's axes and unit. */
-export const gravity = ({ release, arrival, flight }: ClipRecord): Vec3 =>
-  scale(subtract(arrival.velocity, release.velocity), 1 / flight.time);
+export function gravity({ release, arrival, flight, parts }: ClipRecord): Vec3 {
+  const { release: from, arrival: to, time } = parts?.[0] ?? { release, arrival, time: flight?.time ?? 1 };
+  return scale(subtract(to.velocity, from.velocity), 1 / time);
+}
+
+/** s of flight, without holds. */
+export const airtime = ({ flight, parts = [] }: ClipRecord): number =>
+  flight?.time ?? parts.reduce((sum, { time }) => sum + time, 0);

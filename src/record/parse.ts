@@ -26,7 +26,16 @@ const prop = z.looseObject({
   warnings: z.array(z.string()),
 });
 
-const clip = z.looseObject({
+const part = z.looseObject({
+  throw: z.string(),
+  start: number,
+  time: number,
+  turns: number,
+  release: state,
+  arrival: state,
+});
+
+const clipKeys = z.looseObject({
   name: z.string(),
   throw: z.string(),
   take: number,
@@ -43,11 +52,22 @@ const clip = z.looseObject({
   error: number,
   keys: z.object({ translation: number, rotation: number }),
   bytes: number,
-  candidate: number,
+  candidate: number.optional(),
   draws: z.record(z.string(), z.unknown()),
-  flight: z.object({ start: number, time: number }),
+  flight: z.object({ start: number, time: number }).optional(),
+  parts: z.array(part).min(1).optional(),
   nearest: z.object({ take: number, distance: number }).nullable(),
 });
+
+const clip = clipKeys
+  .refine(({ flight, parts }) => flight !== undefined || parts !== undefined, {
+    path: ["flight"],
+    message: "neither flight nor parts",
+  })
+  .refine(({ candidate, parts }) => candidate !== undefined || parts !== undefined, {
+    path: ["candidate"],
+    message: "Invalid input: expected number, received undefined",
+  });
 
 const record = z.looseObject({
   format: z.literal(1),

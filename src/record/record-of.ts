@@ -2,17 +2,14 @@
 
 import type { Bake, BakedTake, BakedThrow } from "../bake/bake.js";
 import { hostFrame } from "../bake/host.js";
-import { modelRotation } from "../bake/motion.js";
 import type { LoadedProp } from "../bake/props.js";
-import { type Take, toleranceOf } from "../bake/take.js";
-import { trackBytes } from "../clip/track.js";
 import { axisShares, turnsAboutMomentum } from "../flight/turns.js";
 import { textSha256 } from "../math/hash.js";
-import { rotate } from "../math/quat.js";
-import { add, distance } from "../math/vec3.js";
 import type { Prop } from "../prop/prop.js";
 import type { ThrowFile } from "../throwfile/types.js";
+import { chainRecord } from "./chain-record.js";
 import type { ClipRecord, PropRecord, TakesRecord } from "./clip-record.js";
+import { missAngle, missedBy, trackRecord } from "./take-record.js";
 import { VERSION } from "./version.js";
 
 /** @param text of the throw file, for its hash */
@@ -22,10 +19,16 @@ export async function recordOf(file: ThrowFile, text: string, bake: Bake): Promi
     tossbake: VERSION,
     throwFile: { name: file.name.replace(/^.*[\\/]/, ""), sha256: await textSha256(text) },
     props: Object.fromEntries(Array.from(bake.props, ([name, loaded]) => [name, propRecord(loaded)])),
-    clips: bake.throws.flatMap((baked) => {
-      const { prop } = bake.props.get(baked.entry.prop) as LoadedProp;
-      return baked.takes.map((take) => clipRecord(file, prop, baked, take));
-    }),
+    clips: [
+      ...bake.throws.flatMap((baked) => {
+        const { prop } = bake.props.get(baked.entry.prop) as LoadedProp;
+        return baked.takes.map((take) => clipRecord(file, prop, baked, take));
+      }),
+      ...bake.chains.flatMap((chain) => {
+        const { prop } = bake.props.get(chain.prop) as LoadedProp;
+        return chain.takes.map((take) => chainRecord(file, prop, chain, take));
+      }),
+    ],
   };
 }
 
@@ -63,22 +66,11 @@ function clipRecord(file: ThrowFile, prop: Prop, { entry }: BakedThrow, baked: B
     },
     release,
     arrival,
-    miss: { position: missedBy(take, prop), angle: "missAngle" in aimed ? aimed.missAngle : null },
-    tolerance: toleranceOf(file, prop),
-    error: track.error,
-    keys: { translation: track.translation.times.length, rotation: track.rotation.times.length },
-    bytes: trackBytes(track),
+    miss: { position: missedBy(take, prop), angle: missAngle(take) },
+    ...trackRecord(file, prop, track),
     candidate: take.candidate,
     draws: take.drawn.draws,
     flight: { start: before, time: flight.duration },
     nearest,
   };
-}
-
-/** m from the mark to where the arrival point really is at the end, or from the floor to the prop; null without either. */
-function missedBy({ flight, wish, gap }: Take, prop: Prop): number | null {
-  const { to } = wish.arc;
-  if (!to) return gap === undefined ? null : Math.abs(gap);
-  const arm = rotate(modelRotation(flight, prop, flight.duration), wish.arrivalOffset);
-  return distance(add(flight.centerOfMass(flight.duration), arm), to);
 }

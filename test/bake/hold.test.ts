@@ -1,4 +1,5 @@
 import { describe, expect, it } from "vitest";
+import type { ClipRecord } from "../../src/record/clip-record.js";
 import { baked, clipsOf } from "./baked.js";
 
 const text = (hold: string, bake = "{}") => `
@@ -19,8 +20,8 @@ describe("a hold", () => {
   it("leaves the flight as it is and moves its times: 14 and 6 frames at 30 a second", async () => {
     const [free, held] = [await baked(text("{}")), await baked(text("{ before: 14f, after: 6f }"))];
     held.record.clips.forEach((clip, i) => {
-      const { flight, duration, apex, ...other } = free.record.clips[i];
-      expect(clip.flight).toEqual({ start: 14 / 30, time: flight.time });
+      const { apex, ...other } = free.record.clips[i];
+      expect(clip.flight).toEqual({ start: 14 / 30, time: other.flight!.time });
       // 14 + 24 + 6 frames
       expect(clip.duration).toBeCloseTo(44 / 30, 12);
       expect(clip.apex).toEqual({ time: 14 / 30 + apex.time, rise: apex.rise });
@@ -47,12 +48,12 @@ describe("a hold", () => {
 
   it("may be drawn: whole frames here, which are in the record", async () => {
     const { record } = await baked(text("{ before: 1..9, after: 3f..8f }"));
-    for (const { draws, flight, duration } of record.clips) {
+    for (const { draws, flight, duration } of record.clips as Required<ClipRecord>[]) {
       expect(flight.start).toBe(draws["hold.before"]);
       const frames = 30 * (draws["hold.after"] as number);
       expect(Math.abs(frames - Math.round(frames))).toBeLessThan(1e-9);
       expect(duration).toBeCloseTo(flight.start + flight.time + frames / 30, 12);
     }
-    expect(new Set(record.clips.map(({ flight }) => flight.start)).size).toBe(4);
+    expect(new Set(record.clips.map(({ flight }) => flight!.start)).size).toBe(4);
   });
 });

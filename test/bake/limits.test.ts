@@ -35,7 +35,7 @@ describe("every take holds its limits, and is drawn again until it does", () => 
     expect(Math.max(...free.map((clip) => clip.apex.rise))).toBeGreaterThan(0.9);
     for (const clip of held) expect(clip.apex.rise).toBeLessThanOrEqual(0.9 + 1e-9);
     expect(held.length).toBe(6);
-    expect(held.some((clip) => clip.candidate > 1)).toBe(true);
+    expect(held.some((clip) => clip.candidate! > 1)).toBe(true);
   });
 
   it("that all first choices hold change nothing", async () => {
@@ -124,7 +124,7 @@ describe("limits that no candidate holds", () => {
     expect(some.record.clips.map((clip) => clip.throw)).toEqual(Array(6).fill("toss"));
     expect(some.glb("toss")).toEqual(free.glb("toss"));
     expect(some.bake.unheld.map(({ name }) => name)).toEqual([1, 2, 3, 4, 5, 6].map((n) => `lob_0${n}`));
-    expect(some.bake.unheld[0].reason.broken).toEqual(new Map([["limits.maxHeight", 1000]]));
+    expect(some.bake.unheld[0].reason).toHaveProperty("broken", new Map([["limits.maxHeight", 1000]]));
   });
 
   it("leave out those takes alone", async () => {
