@@ -221,8 +221,8 @@ function bakeTake(
     file: fileName(file, entry.name, name),
     take,
     track: cutTake(file, prop, take),
-    release: motionState(flight, prop, 0, host),
-    arrival: motionState(flight, prop, flight.duration, host),
+    release: motionState(take, prop, 0, host),
+    arrival: motionState(take, prop, flight.duration, host),
     nearest: nearest(number, flight),
   };
 }

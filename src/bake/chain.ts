@@ -78,8 +78,8 @@ export function solveChain(
     throw: throws[i],
     take,
     ...times[i],
-    release: motionState(take.flight, prop, 0, host),
-    arrival: motionState(take.flight, prop, take.flight.duration, host),
+    release: motionState(take, prop, 0, host),
+    arrival: motionState(take, prop, take.flight.duration, host),
   }));
   const last = parts[parts.length - 1];
   return { number, parts, duration: last.end + last.take.drawn.hold.after };

@@ -5,7 +5,7 @@ import { type Graft, type NamedFile, spliceGlb, spliceGltf } from "../gltf/splic
 import { RequestError } from "../math/request-error.js";
 import type { Prop } from "../prop/prop.js";
 import type { BakeSettings, ThrowFile } from "../throwfile/types.js";
-import { type NamedTrack, oneNodeGraft, twoNodeGraft } from "./graft.js";
+import { type NamedTrack, oneNodeGraft, turningGraft, twoNodeGraft } from "./graft.js";
 import { nodeGraft } from "./node-graft.js";
 import type { LoadedProp } from "./props.js";
 
@@ -62,7 +62,8 @@ const propNames = (clips: readonly FiledClip[]) => [
 
 function graftOf({ layout }: BakeSettings, prop: Prop, clips: readonly NamedTrack[]): Graft {
   if (prop.node) return nodeGraft(prop.node, prop.scale, clips);
-  return layout === "two-node" ? twoNodeGraft(prop, clips) : oneNodeGraft(prop, clips);
+  const graft = { "one-node": oneNodeGraft, "two-node": twoNodeGraft, "turn-only": turningGraft }[layout];
+  return graft(prop, clips);
 }
 
 /** The throw file's name without its folder and endings: quay.throws.yaml is "quay". */

@@ -67,9 +67,39 @@ export function twoNodeGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
   };
 }
 
+/**
+ * Over the whole scene a node named after the prop that turns about the centre of mass, and stays where that is as modelled unless the game moves it; in
+ * it a still one moved by minus the centre of mass.
+ */
+export function turningGraft(prop: Prop, clips: readonly NamedTrack[]): Graft {
+  const only = onlyTrack(clips);
+  const [turning, still] = addedNames(prop, "turn-only");
+  return {
+    nodes: [
+      {
+        name: turning,
+        translation: prop.centerOfMass,
+        ...(only && { rotation: firstKey<Quat>(only.rotation) }),
+        children: [1],
+      },
+      {
+        name: still,
+        translation: negate(prop.centerOfMass),
+        ...scaled(prop),
+        holdsScene: true,
+      },
+    ],
+    clips: newClips(clips, { rotation: { added: 0 } }),
+  };
+}
+
 /** Names of the nodes that a layout adds, the outermost first. */
 export const addedNames = ({ name }: Prop, layout: BakeSettings["layout"]): string[] =>
-  layout === "two-node" ? [name, `${name}-turning`, `${name}-centred`] : [name];
+  ({
+    "one-node": [name],
+    "two-node": [name, `${name}-turning`, `${name}-centred`],
+    "turn-only": [name, `${name}-centred`],
+  })[layout];
 
 /** The track of a file's single clip. */
 export const onlyTrack = (clips: readonly NamedTrack[]): Track | undefined =>
@@ -78,16 +108,15 @@ export const onlyTrack = (clips: readonly NamedTrack[]): Track | undefined =>
 /** Clips whose channels move these nodes. */
 export const newClips = (
   clips: readonly NamedTrack[],
-  targets: Record<ClipChannel["path"], Target>,
+  targets: Partial<Record<ClipChannel["path"], Target>>,
 ): Graft["clips"] =>
   clips.map(({ name, track, extras }) => ({
     name,
     extras,
-    channels: (["translation", "rotation"] as const).map((path) => ({
-      target: targets[path],
-      path,
-      ...track[path],
-    })),
+    channels: (["translation", "rotation"] as const).flatMap((path) => {
+      const target = targets[path];
+      return target ? [{ target, path, ...track[path] }] : [];
+    }),
   }));
 
 const scaled = ({ scale }: Prop) => (scale === 1 ? {} : { scale: [scale, scale, scale] as const });

@@ -14,7 +14,8 @@ const ROUNDING = 1e-9;
 export interface MotionState {
   centerOfMass: Vec3;
   rotation: Quat;
-  velocity: Vec3;
+  /** Null where nothing but the turning is known. */
+  velocity: Vec3 | null;
   angularVelocity: Vec3;
 }
 
@@ -22,11 +23,16 @@ export interface MotionState {
 export const modelRotation = (flight: Flight, prop: Prop, t: number): Quat =>
   multiply(flight.orientation(t), conjugate(prop.principal.axes));
 
-export function motionState(flight: Flight, prop: Prop, t: number, host: Conversion): MotionState {
+export function motionState(
+  { flight, turnsAlone }: Pick<Take, "flight" | "turnsAlone">,
+  prop: Prop,
+  t: number,
+  host: Conversion,
+): MotionState {
   return {
     centerOfMass: host.vector(flight.centerOfMass(t)),
     rotation: host.rotation(modelRotation(flight, prop, t)),
-    velocity: host.vector(flight.velocity(t)),
+    velocity: turnsAlone ? null : host.vector(flight.velocity(t)),
     angularVelocity: host.angular(flight.angularVelocity(t)),
   };
 }
@@ -41,7 +47,7 @@ export function turnTimes(flight: Flight): number[] {
 }
 
 /** s within a clip in which the flight starts at `start`. */
-export const cuesOf = ({ aimed, flight }: Pick<Take, "aimed" | "flight">, start: number) => ({
-  apex: start + aimed.arc.apex.time,
+export const cuesOf = ({ aimed, flight, turnsAlone }: Take, start: number) => ({
+  apex: turnsAlone ? null : start + aimed.arc.apex.time,
   turns: turnTimes(flight).map((time) => start + time),
 });

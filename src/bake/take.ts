@@ -21,6 +21,7 @@ import { modelRotation } from "./motion.js";
 import { cutInParentFrame } from "./parent-frame.js";
 import { type Start, startingAs } from "./start.js";
 import { gapAtArrival, touchDown } from "./touch-down.js";
+import { flyInPlace, turnsAlone } from "./turn-only.js";
 import { arrivalWish, launchWish, mayWobble, turningAxis } from "./wish.js";
 
 export interface Take {
@@ -33,6 +34,8 @@ export interface Take {
   flight: Flight;
   /** Where a floor ends the flight: how far above it the prop then is, m. */
   gap?: number;
+  /** Nothing is known of its flight but how it turns: the centre of mass rests. */
+  turnsAlone?: boolean;
 }
 
 /**
@@ -88,11 +91,18 @@ export function retake(
   return { take: { ...take, ...flown }, broken: limitFaults(file, take.drawn, prop, flown, host) };
 }
 
-type Flown = Pick<Take, "wish" | "aimed" | "flight" | "gap">;
+type Flown = Pick<Take, "wish" | "aimed" | "flight" | "gap" | "turnsAlone">;
 
 /** The flight of a drawn throw: the arc, and then its end by a touch where it is open. */
 function flyDrawn(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversion, start?: Start): Flown {
   const { facing } = drawn.arrive;
+  if (turnsAlone(file, drawn)) {
+    const wish =
+      facing === undefined
+        ? launchWish(drawn, prop, file.gravity, host)
+        : arrivalWish(drawn, facing, prop, file.gravity, host);
+    return { ...flyInPlace(startingAs(wish, start), prop), turnsAlone: true };
+  }
   if (facing !== undefined) {
     const wish = startingAs(arrivalWish(drawn, facing, prop, file.gravity, host), start);
     const aimed = solveArrival(wish, prop.principal);
@@ -153,10 +163,10 @@ export function cutParts(file: ThrowFile, prop: Prop, takes: readonly Take[], is
   const body = { centerOfMass: prop.centerOfMass, axes: prop.principal.axes, reach: prop.reach };
   const tolerance = toleranceOf(file, prop);
   const { keys, layout, pack } = file.bake;
-  if (prop.node && layout === "two-node")
+  if (prop.node && layout !== "one-node")
     throw new RequestError(
       ["bake", "layout"],
-      `"${prop.name}" is a node of its model and moved itself, not by two nodes over it (found two-node)`,
+      `"${prop.name}" is a node of its model and moved itself, not by ${layout === "two-node" ? "two nodes" : "one"} over it (found ${layout})`,
       `one-node, or no props.${prop.name}.node`,
     );
   const cut = (flights: readonly Flight[], seen: Body, within: number) => {

@@ -52,6 +52,7 @@ export function chainRecord(
 /** Of all parts, above the first one's release. */
 function highest(file: ThrowFile, { parts }: BakedChainTake): ClipRecord["apex"] {
   const [first] = parts;
+  if (parts.every(({ take }) => take.turnsAlone)) return null;
   const tops = parts.map(({ take, start }) => ({
     time: start + take.aimed.arc.apex.time,
     rise: take.flight.centerOfMass(0)[1] - first.take.flight.centerOfMass(0)[1] + take.aimed.arc.apex.rise,

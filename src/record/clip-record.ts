@@ -44,8 +44,8 @@ export interface ClipRecord {
   turns: number;
   /** Of the turning, about long, middle and short. */
   share: Vec3;
-  /** Of the centre of mass, above its release; s within the clip. */
-  apex: { time: number; rise: number };
+  /** Of the centre of mass, above its release; s within the clip. Null where nothing but the turning is known. */
+  apex: { time: number; rise: number } | null;
   release: MotionState;
   arrival: MotionState;
   /** From what the throw file asks at arrival, m and rad; null where it asks nothing. */

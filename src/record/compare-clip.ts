@@ -3,7 +3,7 @@
 import { type Conversion, hostFrame } from "../bake/host.js";
 import { atan2, sin } from "../math/elementary.js";
 import { angleBetween, type Quat } from "../math/quat.js";
-import { cross, distance, dot, length, subtract, type Vec3 } from "../math/vec3.js";
+import { cross, distance, dot, length, subtract, type Vec3, ZERO } from "../math/vec3.js";
 import type { Host } from "../throwfile/types.js";
 import type { ClipRecord } from "./clip-record.js";
 import { airtime, gravity, hostChange } from "./compare-host.js";
@@ -87,7 +87,7 @@ export function compareClips(
 function side(clip: ClipRecord, host: Conversion): Side {
   const state = ({ centerOfMass, velocity, angularVelocity }: ClipRecord["release"]): State => ({
     centerOfMass: host.vector(centerOfMass),
-    velocity: host.vector(velocity),
+    velocity: velocity ? host.vector(velocity) : ZERO,
     angularVelocity: host.angular(angularVelocity),
   });
   const release = state(clip.release);
@@ -96,7 +96,7 @@ function side(clip: ClipRecord, host: Conversion): Side {
     clip,
     release,
     arrival,
-    rise: host.length(clip.apex.rise),
+    rise: host.length(clip.apex?.rise ?? 0),
     gravity: host.length(length(gravity(clip))),
   };
 }

@@ -1,6 +1,6 @@
 /** Whether two records of a take are in the axes and unit of different hosts: a record does not name its host. */
 
-import { cross, distance, dot, length, scale, subtract, type Vec3 } from "../math/vec3.js";
+import { cross, distance, dot, length, scale, subtract, type Vec3, ZERO } from "../math/vec3.js";
 import type { ClipRecord } from "./clip-record.js";
 
 /** What two records of one motion may differ by, relative: they have twelve digits. */
@@ -16,7 +16,7 @@ export function hostChange(before: ClipRecord, now: ClipRecord): string | undefi
     return "is recorded in other axes (another host)";
   const factor = length(fresh) / length(old);
   const ratios = [
-    length(now.release.velocity) / length(before.release.velocity),
+    length(now.release.velocity ?? ZERO) / length(before.release.velocity ?? ZERO),
     distance(now.release.centerOfMass, now.arrival.centerOfMass) /
       distance(before.release.centerOfMass, before.arrival.centerOfMass),
   ];
@@ -28,7 +28,7 @@ export function hostChange(before: ClipRecord, now: ClipRecord): string | undefi
 /** In the host's axes and unit. */
 export function gravity({ release, arrival, flight, parts }: ClipRecord): Vec3 {
   const { release: from, arrival: to, time } = parts?.[0] ?? { release, arrival, time: flight?.time ?? 1 };
-  return scale(subtract(to.velocity, from.velocity), 1 / time);
+  return scale(subtract(to.velocity ?? ZERO, from.velocity ?? ZERO), 1 / time);
 }
 
 /** s of flight, without holds. */

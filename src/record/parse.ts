@@ -10,7 +10,7 @@ const quaternion = z.tuple([number, number, number, number]);
 const state = z.looseObject({
   centerOfMass: vector,
   rotation: quaternion,
-  velocity: vector,
+  velocity: vector.nullable(),
   angularVelocity: vector,
 });
 
@@ -44,7 +44,7 @@ const clipKeys = z.looseObject({
   duration: number,
   turns: number,
   share: vector,
-  apex: z.object({ time: number, rise: number }),
+  apex: z.object({ time: number, rise: number }).nullable(),
   release: state,
   arrival: state,
   miss: z.object({ position: number.nullable(), angle: number.nullable() }),

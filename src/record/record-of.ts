@@ -60,10 +60,12 @@ function clipRecord(file: ThrowFile, prop: Prop, { entry }: BakedThrow, baked: B
     duration: before + flight.duration + after,
     turns: turnsAboutMomentum(flight),
     share: axisShares(flight),
-    apex: {
-      time: before + aimed.arc.apex.time,
-      rise: hostFrame(file.host).fromWorld.length(aimed.arc.apex.rise),
-    },
+    apex: take.turnsAlone
+      ? null
+      : {
+          time: before + aimed.arc.apex.time,
+          rise: hostFrame(file.host).fromWorld.length(aimed.arc.apex.rise),
+        },
     release,
     arrival,
     miss: { position: missedBy(take, prop), angle: missAngle(take) },

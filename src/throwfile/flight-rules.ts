@@ -36,7 +36,22 @@ export function checkFlight(rules: Rules, turnOnly: boolean): void {
   }
   const launch = [VELOCITY, HEADING, ...SHAPE].filter(has);
   if (launch.length === 0) {
-    if (turnOnly && has(AFTER)) return;
+    if (turnOnly && has(AFTER)) {
+      for (const key of ["limits.minHeight", "limits.maxHeight", "limits.clear", "limits.speed"])
+        if (has(key))
+          tell(
+            key,
+            "without a flight there is nothing to hold (found no place or launch)",
+            `drop ${key}, or say where it flies`,
+          );
+      if (free)
+        tell(
+          "gravity",
+          "without a flight there is none to solve (found free)",
+          "drop gravity, or say where it flies",
+        );
+      return;
+    }
     tell(
       "",
       "nothing says where it flies",

@@ -126,7 +126,7 @@ describe("the prop arrives", () => {
     for (const take of takes("flight")) {
       const { arrival } = take;
       const jaw = subtract(prop.points.jaw.position, prop.centerOfMass);
-      expect(apart(pointing(take, jaw), arrival.velocity)).toBeLessThan(1e-9);
+      expect(apart(pointing(take, jaw), arrival.velocity!)).toBeLessThan(1e-9);
       const place = add(arrival.centerOfMass, rotate(arrival.rotation, jaw));
       expect(length(subtract(place, [0.4, 1, 3.2]))).toBeLessThan(1e-9);
     }

@@ -1,16 +1,31 @@
 /** Throw files baked in memory, and what stands in the files that come of them. */
 
 import { type Bake, bake } from "../../src/bake/bake.js";
+import type { MotionState } from "../../src/bake/motion.js";
 import type { ModelSource } from "../../src/bake/props.js";
 import { splitGlb } from "../../src/gltf/glb.js";
 import { readModel } from "../../src/gltf/read.js";
-import type { TakesRecord } from "../../src/record/clip-record.js";
+import type { Vec3 } from "../../src/math/vec3.js";
+import type { ClipRecord, TakesRecord } from "../../src/record/clip-record.js";
 import { recordOf } from "../../src/record/record-of.js";
 import { parseThrowFile } from "../../src/throwfile/parse.js";
 
+interface FlownState extends MotionState {
+  velocity: Vec3;
+}
+
+/** What the clip of a throw that flies has; the tests of others say so. */
+export interface FlownClip extends ClipRecord {
+  candidate: number;
+  apex: NonNullable<ClipRecord["apex"]>;
+  release: FlownState;
+  arrival: FlownState;
+  flight: NonNullable<ClipRecord["flight"]>;
+}
+
 export interface Baked {
   bake: Bake;
-  record: TakesRecord;
+  record: Omit<TakesRecord, "clips"> & { clips: FlownClip[] };
   /** Bytes of a throw's file. */
   glb(throwName: string): Uint8Array;
 }
@@ -22,7 +37,7 @@ export async function baked(text: string, models: Record<string, Uint8Array> = {
   const made = await bake(file, source);
   return {
     bake: made,
-    record: await recordOf(file, text, made),
+    record: (await recordOf(file, text, made)) as Baked["record"],
     glb: (name) => made.files.find((file) => file.name === `${name}.glb`)!.content,
   };
 }

@@ -4,6 +4,7 @@ import { bake } from "../../src/bake/bake.js";
 import { readModelFile } from "../../src/node/model-files.js";
 import { recordOf } from "../../src/record/record-of.js";
 import { parseThrowFile } from "../../src/throwfile/parse.js";
+import type { FlownClip } from "../bake/baked.js";
 import { requests } from "./requests.js";
 
 /** What is expected is what the request itself says: the design of this program, no outside source. */
@@ -11,7 +12,7 @@ async function baked(request: keyof typeof requests) {
   const text = requests[request];
   const file = parseThrowFile("request.throws.yaml", text);
   const done = await bake(file, (path) => readModelFile(fileURLToPath(new URL(path, import.meta.url)), path));
-  const { clips } = await recordOf(file, text, done);
+  const clips = (await recordOf(file, text, done)).clips as FlownClip[];
   return { clips, first: clips[0], done };
 }
 

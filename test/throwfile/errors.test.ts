@@ -58,14 +58,6 @@ describe("a key that is not there yet", () => {
     }
   });
 
-  test("is checked for its form first", () => {
-    const error = errorOf(`bake: { layout: turn-only }\n${QUAY}    hold: { before: -1 }\n`);
-    expect(error?.faults.map((f) => f.fault)).toEqual([
-      expect.stringMatching(/^not there yet/),
-      expect.stringMatching(/^out of range/),
-    ]);
-  });
-
   test("that does not go with another yet is refused beside that alone", () => {
     const facing = "facing: { pick: [rest, any] }";
     const text = (floor: string) =>

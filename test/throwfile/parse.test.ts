@@ -1,7 +1,7 @@
 // Expected values follow from the grammar of the throw file (the design of this program, no outside source).
 import { describe, expect, test } from "vitest";
 import { parseThrowFile } from "../../src/throwfile/parse.js";
-import { errorOf, faultsOf } from "./faults-of.js";
+import { faultsOf } from "./faults-of.js";
 import { EVERY_KEY, QUAY } from "./quay.js";
 
 const PROPS = "props: { ball: { shape: { sphere: 0.1 }, points: { grip: [0, 0, 0.1] } } }\n";
