@@ -42,20 +42,15 @@ const SETTLED = 1e-13;
 /**
  * Solves place, poses and time together, then the way from pose to pose that is nearest the wish. A pose that names `flight` depends on the
  * arc, and with a point off the centre of mass the arc on the pose: the solution is the one continued from the centred point. Of one direction
- * alone the roll is chosen for the centred point and kept.
+ * alone the roll is chosen for the centred point and kept. An end that a floor makes is found by `solveLanding`.
  *
+ * @param near of a whole pose: a spin that nearly does it, where one is known; principal frame, rad/s, for the centred arc's duration
  * @throws RequestError where there is no such flight
  */
-export function solveArrival(wish: ArrivalWish, body: AimedBody): AimedArrival {
-  if (wish.arc.openEnd)
-    throw new RequestError(
-      ["arrive", "facing"],
-      "not there yet: no spin is solved for a flight that a floor ends (found arrive.floor too)",
-      "end the flight with arrive.at or arrive.after, or state the spin",
-    );
+export function solveArrival(wish: ArrivalWish, body: AimedBody, near?: Vec3): AimedArrival {
   const centred = solveArc(wish.arc);
   const { facing } = wish;
-  if (facing.kind === "pose") return solvePose(wish, body, centred, facing.pose);
+  if (facing.kind === "pose") return solvePose(wish, body, centred, facing.pose, near);
   const first = posesAt(wish, centred, (course) => between(facing.direction, facing.target(course)));
   const start = multiply(first.start, body.axes);
   const { way, warnings } = nearestDirectionWay(

@@ -1,6 +1,7 @@
 /** One take: the first of its candidates that has a flight, flown and cut into keys. */
 
 import { type AimedArrival, type ArrivalWish, arrivalArc, solveArrival } from "../aim/arrival.js";
+import { solveLanding } from "../aim/landing.js";
 import { type AimedLaunch, type LaunchWish, solveLaunch } from "../aim/launch.js";
 import type { Body } from "../clip/body.js";
 import { defaultTolerance } from "../clip/default-tolerance.js";
@@ -16,6 +17,7 @@ import type { Prop } from "../prop/prop.js";
 import { propSupport, type Support } from "../prop/support.js";
 import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
 import { type Conversion, hostFrame } from "./host.js";
+import { landingOn } from "./land.js";
 import { brokenByArc, brokenLimits, UnheldLimits } from "./limits.js";
 import { modelRotation } from "./motion.js";
 import { cutInParentFrame } from "./parent-frame.js";
@@ -95,7 +97,7 @@ type Flown = Pick<Take, "wish" | "aimed" | "flight" | "gap" | "turnsAlone">;
 
 /** The flight of a drawn throw: the arc, and then its end by a touch where it is open. */
 function flyDrawn(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversion, start?: Start): Flown {
-  const { facing } = drawn.arrive;
+  const { facing, floor } = drawn.arrive;
   if (turnsAlone(file, drawn)) {
     const wish =
       facing === undefined
@@ -104,13 +106,20 @@ function flyDrawn(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversi
     return { ...flyInPlace(startingAs(wish, start), prop), turnsAlone: true };
   }
   if (facing !== undefined) {
-    const wish = startingAs(arrivalWish(drawn, facing, prop, file.gravity, host), start);
-    const aimed = solveArrival(wish, prop.principal);
-    return { wish, aimed, flight: fly(aimed.launch) };
+    const { shape } = file.props.get(drawn.prop) ?? {};
+    const wish = startingAs(arrivalWish(drawn, facing, prop, file.gravity, host, shape), start);
+    if (floor === undefined) {
+      const aimed = solveArrival(wish, prop.principal);
+      return { wish, aimed, flight: fly(aimed.launch) };
+    }
+    const body = bodyOf(file, drawn.prop, prop);
+    const landing = { ...wish, landing: landingOn(body, host.length(floor)) };
+    const aimed = solveLanding(landing, prop.principal);
+    const flight = fly(aimed.launch);
+    return { wish: landing, aimed, flight, gap: gapAtArrival({ ...body, flight }, host.length(floor)) };
   }
   const wish = startingAs(launchWish(drawn, prop, file.gravity, host), start);
   const open = solveLaunch(wish, prop.principal);
-  const { floor } = drawn.arrive;
   if (floor === undefined) return { wish, aimed: open, flight: fly(open.launch) };
   const body = bodyOf(file, drawn.prop, prop);
   const aimed = touchDown(open, wish, body, floor, host);
@@ -120,8 +129,8 @@ function flyDrawn(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversi
 
 /** Limits that are broken whatever spin would be solved: a candidate that breaks one is not worth solving. */
 function arcFaults(file: ThrowFile, drawn: DrawnThrow, prop: Prop, host: Conversion): string[] {
-  const { facing } = drawn.arrive;
-  if (!drawn.limits || facing === undefined) return [];
+  const { facing, floor } = drawn.arrive;
+  if (!drawn.limits || facing === undefined || floor !== undefined) return [];
   const known = arrivalArc(arrivalWish(drawn, facing, prop, file.gravity, host), prop.principal);
   return known ? brokenByArc(drawn.limits, known.from, known.arc, host) : [];
 }

@@ -1,6 +1,7 @@
 /** The ways a prop can get from its release pose to its arrival pose, and the spin to write for each. */
 
-import { type AimedArrival, type ArrivalWish, solveArrival } from "../aim/arrival.js";
+import type { AimedArrival, ArrivalWish } from "../aim/arrival.js";
+import { solveFacing } from "../aim/landing.js";
 import type { Way, WayWish } from "../aim/way.js";
 import { allWays } from "../aim/ways.js";
 import { type Rounding, wishFor } from "../aim/wish-for.js";
@@ -178,11 +179,21 @@ function everyWay(aim: Aim, leastTurns: number, mostTurns: number): ListedWay[] 
 
 function otherWay(aim: Aim, way: Way, rivals: readonly Way[]): ListedWay {
   const wish = wishFor(way, rivals, plainAxes(aim.prop), rounding(aim.prop));
-  const aimed = wish && solveArrival({ ...aim.wish, turning: () => wish }, aim.prop.principal);
+  const aimed = wish && aimedAt(aim, wish);
   // what was found by ranking is believed when the solver comes to it
   if (aimed && isSame(aimed.launch.spin, way.spin, SAME))
     return listed(aim, aimed.launch, aimed.missAngle, written(aim.prop, wish));
   return listed(aim, launchWith(aim, way.spin), way.miss, null);
+}
+
+/** What a wish gets; undefined where none of its ways can land on the floor in the pose asked for. */
+function aimedAt({ wish, prop }: Aim, turning: WayWish): AimedArrival | undefined {
+  try {
+    return solveFacing({ ...wish, turning: () => turning }, prop.principal);
+  } catch (error) {
+    if ("landing" in wish && error instanceof RequestError) return undefined;
+    throw error;
+  }
 }
 
 /** The launch with another spin: the arc stays, but for a hand off the centre of mass whose own velocity is stated. */
@@ -207,7 +218,9 @@ function someWays(aim: Aim, wished: number): ListedWay[] {
     : [...around.map((turns) => ({ turns })), ...plain.map((a) => ({ turns: round(wished), axis: a }))];
   const found: { spin: Vec3; way: ListedWay }[] = [{ spin: aim.aimed.launch.spin, way: takenWay(aim) }];
   for (const wish of wishes) {
-    const { launch, missAngle } = solveArrival({ ...aim.wish, turning: () => wish }, prop.principal);
+    const aimed = aimedAt(aim, wish);
+    if (!aimed) continue;
+    const { launch, missAngle } = aimed;
     if (found.some(({ spin }) => isSame(spin, launch.spin, ALIKE))) continue;
     found.push({ spin: launch.spin, way: listed(aim, launch, missAngle, written(prop, wish)) });
   }

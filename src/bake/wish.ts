@@ -24,9 +24,11 @@ import {
   rotateBack,
 } from "../math/quat.js";
 import { RequestError } from "../math/request-error.js";
-import { normalize as normalizeVector, subtract, type Vec3, ZERO } from "../math/vec3.js";
+import { negate, normalize as normalizeVector, subtract, type Vec3, ZERO } from "../math/vec3.js";
 import { propDirection } from "../prop/directions.js";
 import type { Prop } from "../prop/prop.js";
+import { type RestingFace, restingFaces } from "../prop/rest.js";
+import type { Shape } from "../prop/shape-kind.js";
 import type { ThrowEntry } from "../throwfile/types.js";
 import type { Conversion } from "./host.js";
 
@@ -40,17 +42,18 @@ export function launchWish(drawn: DrawnThrow, prop: Prop, gravity: number, host:
   return { ...conditions(drawn, prop, gravity, host), spin: spinOf(drawn, prop, host) };
 }
 
-/** A throw with an `arrive.facing`, whose spin is solved; parameters as above. */
+/** A throw with an `arrive.facing`, whose spin is solved; parameters as above, and the shape that the prop was weighed from, where it was one. */
 export function arrivalWish(
   drawn: DrawnThrow,
   facing: DrawnArrivalFacing,
   prop: Prop,
   gravity: number,
   host: Conversion,
+  shape?: Shape,
 ): ArrivalWish {
   return {
     ...conditions(drawn, prop, gravity, host),
-    facing: arrivalFacing(facing, drawn.arrive.scatter, prop, host),
+    facing: arrivalFacing(facing, drawn.arrive.scatter, prop, host, shape),
     usesTravelAtEnd: namesFlight(facing),
     turning: turningOf(drawn, prop),
   };
@@ -118,11 +121,14 @@ function arrivalFacing(
   scatter: DrawnScatter | undefined,
   prop: Prop,
   host: Conversion,
+  shape?: Shape,
 ): ArrivalFacing {
   const turn = scattering(scatter);
   if (facing === "release") return { kind: "pose", pose: (_, release) => multiply(turn, release) };
-  if ("rest" in facing)
-    throw new RequestError(["arrive", "facing"], "not there yet: rest", "name another orientation");
+  if ("rest" in facing) {
+    const direction = restingSide(prop, shape, facing.rest);
+    return { kind: "direction", direction, target: () => DOWN };
+  }
   const pairs = Array.isArray(facing) ? (facing as readonly DrawnPair[]) : [];
   if (pairs.length !== 1)
     return { kind: "pose", pose: scattered(scatter, facingOf(facing, prop, host, "arrive")) };
@@ -132,6 +138,23 @@ function arrivalFacing(
     direction: within(["arrive", "facing", 0], () => propDirection(prop, pairs[0][0])),
     target: (course) => rotate(turn, pair(course).world),
   };
+}
+
+const DOWN = negate(UP);
+
+/** A prop's hull is looked at once. */
+const resting = new WeakMap<Prop, readonly RestingFace[]>();
+
+/** The side that a draw from 0 to 1 falls on, each as likely as the prop comes to rest on it. */
+function restingSide(prop: Prop, shape: Shape | undefined, draw: number): Vec3 {
+  const faces = resting.get(prop) ?? restingFaces(prop, shape);
+  resting.set(prop, faces);
+  let below = 0;
+  const side = faces.find(({ share }) => {
+    below += share;
+    return draw < below;
+  });
+  return (side ?? faces[faces.length - 1]).normal;
 }
 
 function facingOf(

@@ -64,7 +64,7 @@ export type DrawnFacing =
 export type DrawnArrivalFacing =
   | DrawnFacing
   | "release"
-  /** Which of the faces the prop can rest on: a share 0 to 1 (excluded) of their number. */
+  /** Which of the faces the prop can rest on: 0 to 1 (excluded), of all orientations those that tip onto it. */
   | { readonly rest: number };
 
 /** Degrees by which the pose is turned about an evenly drawn unit vector (world). */

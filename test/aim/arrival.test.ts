@@ -222,15 +222,3 @@ describe("the wish for the turning", () => {
     expect(warnings.join("\n")).toMatch(/half turn about the short axis/);
   });
 });
-
-it("a flight that a floor ends has no spin solved yet, and says so", () => {
-  const one = {
-    releaseOffset: [0, 0, 0],
-    arrivalOffset: [0, 0, 0],
-    pose: [0, 0, 0, 1],
-    end: [0, 0, 0, 1],
-  } as never;
-  const arc: ArcRequest = { from: FROM, gravity: DOWN, velocity: [0, 2, 3], openEnd: true };
-  const body: AimedBody = { moments: [1, 2, 2.9], axes: [0, 0, 0, 1] };
-  expect(() => solveArrival(wishOf(one, arc), body)).toThrow(/arrive\.facing: not there yet/);
-});

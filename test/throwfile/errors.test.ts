@@ -3,7 +3,7 @@ import { RequestError } from "../../src/math/request-error.js";
 import { throwFileError } from "../../src/throwfile/errors.js";
 import { parseThrowFile } from "../../src/throwfile/parse.js";
 import { errorOf } from "./faults-of.js";
-import { EVERY_KEY, QUAY } from "./quay.js";
+import { QUAY } from "./quay.js";
 
 describe("a wrong throw file's message", () => {
   test("has a line for each fault: place, key, what is wrong, what would be right", () => {
@@ -49,34 +49,6 @@ test("a request that cannot be met is told at its key, or at the nearest that is
 });
 
 describe("a key that is not there yet", () => {
-  test("is refused by name, each at its place", () => {
-    const all = EVERY_KEY.split("\n");
-    const error = errorOf(EVERY_KEY);
-    for (const fault of error!.faults) {
-      expect(fault.fault).toMatch(/^not there yet: /);
-      expect(all[fault.line - 1].slice(fault.column - 1)).toMatch(new RegExp(`^${fault.path.at(-1)}:`));
-    }
-  });
-
-  test("that does not go with another yet is refused beside that alone", () => {
-    const facing = "facing: { pick: [rest, any] }";
-    const text = (floor: string) =>
-      QUAY.replace(/release: .*/, "release: { velocity: [0, 1, 2] }").replace(
-        /arrive: .*/,
-        `arrive: { ${floor}, ${facing} }`,
-      );
-    expect(errorOf(text("floor: 0").replace(/spin: .*/, ""))?.message).toMatch(
-      /throws\.lob-to-bench\.arrive\.facing: not there yet: no spin .*first touch; leave this key or floor out$/,
-    );
-    expect(
-      errorOf(
-        text("after: 1")
-          .replace("rest", "release")
-          .replace(/spin: .*/, ""),
-      ),
-    ).toBeUndefined();
-  });
-
   test("may say what is the default anyway", () => {
     const bake =
       "bake: { keys: linear, layout: one-node, files: per-throw, container: glb, mesh: true, pack: float }\n";
