@@ -7,21 +7,16 @@ import { ell, surface, turnedRound } from "./bodies.js";
 const { positions, triangles } = surface(ell());
 
 test("a point is inside an L where it is in one of its two bars, whichever way the faces look", () => {
-  const coordinate = fc.double({ min: -0.1, max: 0.6, noNaN: true });
+  // On the surface itself there is no right answer: no wall lies at an odd ten-thousandth.
+  const coordinate = fc.integer({ min: -500, max: 3000 }).map((n) => (2 * n + 1) / 10_000);
   fc.assert(
-    fc.property(
-      fc.tuple(coordinate, coordinate, fc.double({ min: -0.05, max: 0.2, noNaN: true })),
-      ([x, y, z]) => {
-        // On the surface itself there is no right answer.
-        fc.pre([x, y, z].every((v) => [0, 0.125, 0.375, 0.5].every((wall) => Math.abs(v - wall) > 1e-12)));
-        const within = (v: number, to: number) => v > 0 && v < to;
-        const expected =
-          within(z, 0.125) &&
-          ((within(x, 0.5) && within(y, 0.125)) || (within(x, 0.125) && within(y, 0.375)));
-        expect(isInside([x, y, z], positions, triangles)).toBe(expected);
-        expect(isInside([x, y, z], positions, surface(turnedRound(ell())).triangles)).toBe(expected);
-      },
-    ),
+    fc.property(fc.tuple(coordinate, coordinate, coordinate), ([x, y, z]) => {
+      const within = (v: number, to: number) => v > 0 && v < to;
+      const expected =
+        within(z, 0.125) && ((within(x, 0.5) && within(y, 0.125)) || (within(x, 0.125) && within(y, 0.375)));
+      expect(isInside([x, y, z], positions, triangles)).toBe(expected);
+      expect(isInside([x, y, z], positions, surface(turnedRound(ell())).triangles)).toBe(expected);
+    }),
     { seed: 4, numRuns: 2000 },
   );
 });
