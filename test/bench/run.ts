@@ -7,6 +7,7 @@ import { table } from "../../src/cli/table.js";
 import { againstEngine } from "./against-engine.js";
 import { againstOdeSolver } from "./against-ode-solver.js";
 import { againstPipeline } from "./against-pipeline.js";
+import { aiming } from "./aiming.js";
 import { evenness } from "./evenness.js";
 import { keys } from "./keys.js";
 import { bakeForTable, manyTakes } from "./many-takes.js";
@@ -22,6 +23,7 @@ const SECTIONS = [
   vary,
   evenness,
   weighing,
+  aiming,
 ];
 
 const [first, ...rest] = process.argv.slice(2);

@@ -1,4 +1,3 @@
-import { bench, describe } from "vitest";
 import { nearestDirectionWay } from "../../src/aim/direction.js";
 import { allWays, nearestWay } from "../../src/aim/ways.js";
 import { type Quat, rotate } from "../../src/math/quat.js";
@@ -8,8 +7,19 @@ import { angleApart, extrapolatedEnd } from "../aim/extrapolated-turning.js";
 import { leastSquares, type PoseProblem, spinAlong, spread, turnsOfSpin } from "../aim/least-squares.js";
 import { randomProblems } from "../aim/problems.js";
 import { specialPoses } from "../aim/special-poses.js";
+import type { Section } from "./section.js";
 
-// Every count and seed is the project's own choice. Misses are those an integrator finds that shares no code with the solver.
+export const aiming: Section = {
+  name: "aim",
+  about: `From pose to pose, eight bodies from needle to sphere; misses are what an integrator finds that shares no code with the solver.
+Takes some minutes.`,
+  async run() {
+    const parts = [fullPose, besideLeastSquares, pointFirst, special, bruteForceFinds];
+    return { head: ["what", "measure", "result"], rows: parts.flatMap((part) => part()) };
+  },
+};
+
+// Every count and seed is the project's own choice.
 
 const share = (part: number, whole: number): string =>
   `${((100 * part) / whole).toFixed(2)} % (${part} of ${whole})`;
@@ -28,7 +38,7 @@ const timed = <T>(ms: number[], run: () => T): T => {
   return result;
 };
 
-function fullPose(): void {
+function fullPose(): string[][] {
   const problems = randomProblems(2000, "bench");
   const ms: number[] = [];
   const misses: number[] = [];
@@ -50,12 +60,21 @@ function fullPose(): void {
     if (Math.abs(way.turning - problem.turns) <= 0.5) near++;
     if (Math.abs(way.turns - problem.turns) <= 0.5) nearByTurns++;
   });
-  console.log(`full pose: ${share(met, problems.length)} end within 1e-9 rad or the rounding foretold (${warned} warned)
-  miss ${quantile(misses, 0.5).toExponential(1)} rad median, ${quantile(misses, 0.99).toExponential(1)} rad 99th percentile; ${times(ms)}
-  within half a turn of the wish: ${share(near, wishes)} by ∫|ω|dt, ${share(nearByTurns, wishes)} by turns about the momentum`);
+  return [
+    ["full pose", "end within 1e-9 rad or the rounding foretold", share(met, problems.length)],
+    ["", "  of which warned of rounding", String(warned)],
+    [
+      "",
+      "miss",
+      `${quantile(misses, 0.5).toExponential(1)} rad median, ${quantile(misses, 0.99).toExponential(1)} rad 99th percentile`,
+    ],
+    ["", "time", times(ms)],
+    ["", "within half a turn of the wish, by ∫|ω|dt", share(near, wishes)],
+    ["", "the same by turns about the momentum", share(nearByTurns, wishes)],
+  ];
 }
 
-function besideLeastSquares(): void {
+function besideLeastSquares(): string[][] {
   const problems = randomProblems(160, "beside");
   const ours: number[] = [];
   const theirs: number[] = [];
@@ -77,12 +96,18 @@ function besideLeastSquares(): void {
     if (ends.some((end) => off(end) <= 0.5)) theirsNear++;
   }
   const n = problems.length;
-  console.log(`beside least squares from sixteen starts:
-  all ways        ${share(met, n)} met, ${share(near, n)} within half a turn of the wish; ${times(ours)}
-  least squares   ${share(theirsMet, n)} met, ${share(theirsNear, n)} within half a turn of the wish; ${times(theirs)}`);
+  return [
+    ["all ways", "met", share(met, n)],
+    ["", "met, and within half a turn of the wish", share(near, n)],
+    ["", "time", times(ours)],
+    ["sixteen-start least squares", "met", share(theirsMet, n)],
+    ["", "met, and within half a turn of the wish", share(theirsNear, n)],
+    ["", "time", times(theirs)],
+    ["", "times ours, median", (quantile(theirs, 0.5) / quantile(ours, 0.5)).toFixed(1)],
+  ];
 }
 
-function pointFirst(): void {
+function pointFirst(): string[][] {
   const problems = randomProblems(200, "point first");
   const ms: number[] = [];
   let [met, near, wishes] = [0, 0, 0];
@@ -98,12 +123,14 @@ function pointFirst(): void {
     wishes++;
     if (Math.abs(way.turning - turns) <= 0.5) near++;
   }
-  console.log(
-    `point first: ${share(met, problems.length)} met, ${share(near, wishes)} within half a turn; ${times(ms)}`,
-  );
+  return [
+    ["point first", "met", share(met, problems.length)],
+    ["", "within half a turn of the wish", share(near, wishes)],
+    ["", "time", times(ms)],
+  ];
 }
 
-function special(): void {
+function special(): string[][] {
   const poses = specialPoses(330, "special poses");
   const ms: number[] = [];
   const missed: string[] = [];
@@ -120,11 +147,15 @@ function special(): void {
     families++;
     if (way.family && family.test(way.family)) named++;
   }
-  console.log(`special poses: ${share(poses.length - missed.length, poses.length)} within 1e-6 rad, ${share(named, families)} families named, ${times(ms)}, longest ${Math.max(...ms).toFixed(0)} ms
-  ${missed.join("\n  ")}`);
+  return [
+    ["special poses", "within 1e-6 rad", share(poses.length - missed.length, poses.length)],
+    ["", "families named", share(named, families)],
+    ["", "time", `${times(ms)}, longest ${Math.max(...ms).toFixed(0)} ms`],
+    ...missed.map((text) => ["", "missed", text]),
+  ];
 }
 
-function bruteForceFinds(): void {
+function bruteForceFinds(): string[][] {
   const problems = randomProblems(104, "brute force");
   let [found, missing] = [0, 0];
   problems.forEach((problem, i) => {
@@ -137,26 +168,11 @@ function bruteForceFinds(): void {
       if (!ways.some((way) => isSame(way.spin, spin))) missing++;
     }
   });
-  console.log(
-    `brute force: ${found} ways under three turns in ${problems.length} problems, ${missing} of them missing`,
-  );
+  return [
+    [
+      "brute force",
+      `ways under three turns in ${problems.length} problems`,
+      `${found}, ${missing} of them missing`,
+    ],
+  ];
 }
-
-for (const report of [fullPose, besideLeastSquares, pointFirst, special, bruteForceFinds]) {
-  report();
-  // minutes in all: what is printed shows as it comes
-  await new Promise((resolve) => setTimeout(resolve, 200));
-}
-
-describe("from pose to pose, eight bodies", () => {
-  const problems = randomProblems(8, "one round");
-  bench("the nearest of all ways", () => {
-    for (const problem of problems) nearestWay(problem, { turns: problem.turns });
-  });
-
-  bench("least squares from sixteen starts", () => {
-    for (const problem of problems)
-      for (const m of spread(16))
-        leastSquares(problem, spinAlong(problem.moments, m, problem.turns, problem.duration));
-  });
-});
