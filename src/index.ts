@@ -4,7 +4,8 @@ export { type Bake, type BakedTake, type BakedThrow, type BakeOptions, bake } fr
 export type { MotionState } from "./bake/motion.js";
 export type { ModelSource } from "./bake/props.js";
 export { type ReducedClip, type ReduceOptions, reduceRigidClips } from "./bake/reduce-rigid-clips.js";
-export { type ListedWay, type TakeWays, throwWays, type WrittenSpin } from "./bake/ways.js";
+export { type ListedWay, type TakeWays, throwWays } from "./bake/ways.js";
+export type { WrittenSpin } from "./bake/written-spin.js";
 export { type ClipStyle, clipTrack } from "./clip/clip-track.js";
 export { defaultTolerance } from "./clip/default-tolerance.js";
 export { type Body, linearTrack } from "./clip/linear.js";

@@ -4,14 +4,13 @@ import type { AimedArrival, ArrivalWish } from "../aim/arrival.js";
 import { solveFacing } from "../aim/landing.js";
 import type { Way, WayWish } from "../aim/way.js";
 import { allWays } from "../aim/ways.js";
-import { type Rounding, wishFor } from "../aim/wish-for.js";
+import { wishFor } from "../aim/wish-for.js";
 import { fly } from "../flight/flight.js";
 import type { Launch } from "../flight/launch.js";
 import { axisShares, turnsAboutMomentum } from "../flight/turns.js";
-import { conjugate, multiply, rotate, rotateBack } from "../math/quat.js";
+import { conjugate, multiply, rotate } from "../math/quat.js";
 import { RequestError } from "../math/request-error.js";
-import { cross, distance, length, negate, normalize, scale, subtract, type Vec3 } from "../math/vec3.js";
-import { propDirection } from "../prop/directions.js";
+import { cross, distance, length, negate, scale, subtract, type Vec3 } from "../math/vec3.js";
 import type { Prop } from "../prop/prop.js";
 import { throwFileError } from "../throwfile/errors.js";
 import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
@@ -21,13 +20,7 @@ import { UnheldLimits } from "./limits.js";
 import { modelRotation } from "./motion.js";
 import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
 import { solveTake, type Take } from "./take.js";
-
-/** `spin` as it is written in a throw file. */
-export interface WrittenSpin {
-  axis?: string | Vec3;
-  turns?: number;
-  rate?: number;
-}
+import { plainAxes, rounding, type WrittenSpin, written } from "./written-spin.js";
 
 export interface ListedWay {
   turns: number;
@@ -254,27 +247,3 @@ function listed({ host }: Aim, launch: Launch, miss: number, spin: WrittenSpin |
 
 const isSame = (a: Vec3, b: Vec3, share: number): boolean =>
   distance(a, b) <= share * Math.max(length(a), length(b));
-
-const NAMES = ["long", "-long", "middle", "-middle", "short", "-short"] as const;
-
-/** Those of `NAMES`, in the principal frame. */
-const plainAxes = (prop: Prop): Vec3[] =>
-  NAMES.map((name) => rotateBack(prop.principal.axes, propDirection(prop, name)));
-
-const thousandths = (value: number): number => Math.round(value * 1000) / 1000 + 0;
-
-/** In the model's frame, as it is written. */
-const modelAxis = (prop: Prop, axis: Vec3): Vec3 => {
-  const [x, y, z] = rotate(prop.principal.axes, axis);
-  return [thousandths(x), thousandths(y), thousandths(z)];
-};
-
-const rounding = (prop: Prop): Rounding => ({
-  axis: (axis) => normalize(rotateBack(prop.principal.axes, modelAxis(prop, axis))),
-  turns: (turns) => Math.round(turns * 100) / 100,
-});
-
-function written(prop: Prop, { axis, turns }: WayWish): WrittenSpin {
-  const named = axis && NAMES[plainAxes(prop).findIndex((plain) => distance(plain, axis) < 1e-9)];
-  return { ...(axis && { axis: named ?? modelAxis(prop, axis) }), turns };
-}

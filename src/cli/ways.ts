@@ -1,5 +1,6 @@
 import { Command } from "commander";
-import { type ListedWay, type TakeWays, throwWays, type WrittenSpin } from "../bake/ways.js";
+import { type ListedWay, type TakeWays, throwWays } from "../bake/ways.js";
+import type { WrittenSpin } from "../bake/written-spin.js";
 import { openThrowFile } from "../node/throw-file.js";
 import { formatRecord } from "../record/format.js";
 import { ExitCode } from "./exit-code.js";
