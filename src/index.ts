@@ -1,6 +1,8 @@
 /** The library: the whole line as one function, and each of its steps. Runs in browsers and on Node. */
 
 export { type Bake, type BakedTake, type BakedThrow, type BakeOptions, bake } from "./bake/bake.js";
+export type { BakedChain, BakedChainTake } from "./bake/bake-chain.js";
+export type { ChainPart } from "./bake/chain.js";
 export type { MotionState } from "./bake/motion.js";
 export type { ModelSource } from "./bake/props.js";
 export { type ReducedClip, type ReduceOptions, reduceRigidClips } from "./bake/reduce-rigid-clips.js";
@@ -8,6 +10,7 @@ export { type ListedWay, type TakeWays, throwWays } from "./bake/ways.js";
 export type { WrittenSpin } from "./bake/written-spin.js";
 export { type ClipStyle, clipTrack } from "./clip/clip-track.js";
 export { defaultTolerance } from "./clip/default-tolerance.js";
+export { type ClipPart, joinedTrack } from "./clip/join.js";
 export { type Body, linearTrack } from "./clip/linear.js";
 export { playTrack } from "./clip/play-track.js";
 export { type Channel, type Track, trackBytes } from "./clip/track.js";
@@ -37,7 +40,7 @@ export { propDirection } from "./prop/directions.js";
 export { type Kind, kindOf } from "./prop/kind.js";
 export { type Prop, type PropOptions, weigh } from "./prop/prop.js";
 export { type Shape, shapeModel } from "./prop/shape.js";
-export type { ClipRecord, PropRecord, TakesRecord } from "./record/clip-record.js";
+export type { ClipRecord, PartRecord, PropRecord, TakesRecord } from "./record/clip-record.js";
 export { formatRecord } from "./record/format.js";
 export { recordOf } from "./record/record-of.js";
 export { VERSION } from "./record/version.js";

@@ -30,7 +30,7 @@ export const bakeCommand = (answer: (code: number) => void) =>
     .description("solve every throw of a throw file and write its clips and takes.json")
     .argument("<throwfile>", "what is thrown and how (YAML or JSON)")
     .requiredOption("-o, --output <dir>", "folder for the clips")
-    .option("--only <name...>", "these throws alone; the others' clips and records stay as they are")
+    .option("--only <name...>", "these throws and chains alone; others' clips and records stay as they are")
     .option("--takes <a-b>", "these takes alone, such as 3-7; with --dry-run", takeRange)
     .option("--dry-run", "solve and print, but write nothing")
     .option("--json", "print the record instead of the table")
@@ -109,7 +109,17 @@ function report(record: TakesRecord, ofPlayers: readonly string[], options: Opti
   const end = options.dryRun
     ? "nothing written (--dry-run)"
     : `written to ${options.output}, with takes.json`;
-  return `${table(head, rows)}\n\n${[...warnings, ...misses].join("")}${counted(record.clips.length, "take")} of ${counted(names.length, "throw")} ${end}\n`;
+  return `${table(head, rows)}\n\n${[...warnings, ...misses].join("")}${counted(record.clips.length, "take")} of ${whatIsIn(record)} ${end}\n`;
+}
+
+function whatIsIn({ clips }: TakesRecord): string {
+  const names = (isChain: boolean) =>
+    new Set(clips.filter(({ parts }) => (parts !== undefined) === isChain).map((clip) => clip.throw)).size;
+  const [throws, chains] = [names(false), names(true)];
+  return [
+    ...(throws > 0 || chains === 0 ? [counted(throws, "throw")] : []),
+    ...(chains > 0 ? [counted(chains, "chain")] : []),
+  ].join(" and ");
 }
 
 const counted = (count: number, what: string) => `${count} ${what}${count === 1 ? "" : "s"}`;
