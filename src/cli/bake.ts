@@ -1,5 +1,6 @@
 import { Command } from "commander";
 import { bake } from "../bake/bake.js";
+import { type TakeWarning, takeWarnings } from "../bake/take-warnings.js";
 import { RequestError } from "../math/request-error.js";
 import { mergeRecord } from "../node/kept-record.js";
 import { writeFiles } from "../node/output-folder.js";
@@ -11,6 +12,7 @@ import { recordOf } from "../record/record-of.js";
 import { ExitCode } from "./exit-code.js";
 import { progress } from "./progress.js";
 import { span, table } from "./table.js";
+import { takeList } from "./take-list.js";
 import { takeRange } from "./take-range.js";
 
 interface Options {
@@ -57,7 +59,11 @@ export const bakeCommand = (answer: (code: number) => void) =>
         );
         await writeFiles(options.output, files);
       }
-      process.stdout.write(options.json ? formatRecord(fresh) : report(fresh, baked.warnings, options));
+      const notes = [...baked.warnings, ...takeWarnings(baked.throws).map(warningText)];
+      if (options.json) {
+        process.stdout.write(formatRecord(fresh));
+        for (const note of notes) process.stderr.write(`${note}\n`);
+      } else process.stdout.write(report(fresh, notes, options));
       for (const { name, reason } of baked.unheld)
         process.stderr.write(`${name} is left out: ${reason.message}\n`);
       if (fresh.clips.some(missed) || baked.unheld.length > 0) answer(ExitCode.checkFailed);
@@ -66,7 +72,24 @@ export const bakeCommand = (answer: (code: number) => void) =>
 const missed = ({ miss }: ClipRecord) =>
   (miss.position ?? 0) > MISS_METRES || (miss.angle ?? 0) > MISS_RADIANS;
 
-function report(record: TakesRecord, ofPlayers: readonly string[], options: Options): string {
+function warningText({ throwName, takes, text, differs }: TakeWarning): string {
+  const more = differs ? ` (take ${takes[0]}; other numbers for the others)` : "";
+  return `${throwName}, ${takeList(takes)}: ${text}${more}`;
+}
+
+function missLine({ name, miss }: ClipRecord): string {
+  const ways = [
+    (miss.position ?? 0) > MISS_METRES
+      ? [`its mark by ${((miss.position ?? 0) * 1000).toPrecision(3)} mm`]
+      : [],
+    (miss.angle ?? 0) > MISS_RADIANS
+      ? [`its orientation by ${(((miss.angle ?? 0) * 180) / Math.PI).toPrecision(3)}°`]
+      : [],
+  ];
+  return `${name} misses ${ways.flat().join(" and ")}`;
+}
+
+function report(record: TakesRecord, notes: readonly string[], options: Options): string {
   const names = [...new Set(record.clips.map((clip) => clip.throw))];
   const rows = names.map((name) => {
     const clips = record.clips.filter((clip) => clip.throw === name);
@@ -94,22 +117,15 @@ function report(record: TakesRecord, ofPlayers: readonly string[], options: Opti
       clips[0].file,
     ];
   });
-  const warnings = [
-    ...Object.entries(record.props).flatMap(([name, prop]) =>
-      prop.warnings.map((text) => `${name}: ${text}\n`),
-    ),
-    ...ofPlayers.map((text) => `${text}\n`),
-  ];
-  const misses = record.clips
-    .filter(missed)
-    .map(
-      (clip) => `${clip.name} misses its mark by ${((clip.miss.position ?? 0) * 1000).toPrecision(3)} mm\n`,
-    );
+  const warnings = Object.entries(record.props).flatMap(([name, prop]) =>
+    prop.warnings.map((text) => `${name}: ${text}`),
+  );
+  const misses = record.clips.filter(missed).map(missLine);
   const head = ["throw", "prop", "takes", "time s", "turns", "keys", "bytes/clip", "error mm", "file"];
   const end = options.dryRun
     ? "nothing written (--dry-run)"
     : `written to ${options.output}, with takes.json`;
-  return `${table(head, rows)}\n\n${[...warnings, ...misses].join("")}${counted(record.clips.length, "take")} of ${whatIsIn(record)} ${end}\n`;
+  return `${table(head, rows)}\n\n${[...warnings, ...notes, ...misses].map((line) => `${line}\n`).join("")}${counted(record.clips.length, "take")} of ${whatIsIn(record)} ${end}\n`;
 }
 
 function whatIsIn({ clips }: TakesRecord): string {
