@@ -31,15 +31,24 @@ export const babylon: Player = {
         group.pause();
         // the loader turns seconds into frames of its own
         const framesPerSecond = group.targetedAnimations[0].animation.framePerSecond;
+        const shown = () => {
+          node.computeWorldMatrix(true);
+          const matrix = node.getWorldMatrix();
+          return (p: Vec3): Vec3 => {
+            const { x, y, z } = Vector3.TransformCoordinates(new Vector3(...p), matrix);
+            return [x, y, z];
+          };
+        };
         return {
           seek(time) {
             group.goToFrame(time * framesPerSecond);
-            node.computeWorldMatrix(true);
-            const matrix = node.getWorldMatrix();
-            return (p: Vec3): Vec3 => {
-              const { x, y, z } = Vector3.TransformCoordinates(new Vector3(...p), matrix);
-              return [x, y, z];
-            };
+            return shown();
+          },
+          run() {
+            scene.useConstantAnimationDeltaTime = true;
+            group.play(loop);
+            scene.render();
+            return shown();
           },
           end: () => group.stop(),
         };

@@ -10,7 +10,7 @@ import { rotate } from "../../src/math/quat.js";
 import { add, distance, subtract, type Vec3 } from "../../src/math/vec3.js";
 import { type BakeSettings, type ThrowFile, takeNumbers } from "../../src/throwfile/types.js";
 import { babylon } from "./babylon.js";
-import { openDemo } from "./demo.js";
+import { momentOf, openDemo } from "./demo.js";
 import { outerPoints } from "./outer-points.js";
 import { three } from "./three.js";
 
@@ -68,20 +68,22 @@ describe.each(styles)("$layout, $keys, $pack, $container", (style) => {
         for (const [i, name] of opened.clips.entries()) {
           const { take, track, prop } = clips.find((clip) => clip.name === name)!;
           const { flight } = take;
+          const momentAt = momentOf([{ flight, start: take.drawn.hold.before }]);
           // Of one node a player may have changed the name, the model's own being called the same; it is the only root.
           const node = style.layout === "one-node" ? undefined : `${prop.prop.name}-centred`;
           const played = opened.play(name, node, i % 2 === 0);
           let greatest = 0;
           let excess = Number.NEGATIVE_INFINITY;
           for (const moment of moments) {
-            const t = moment * Math.fround(flight.duration) * (1 - 2 ** -20);
+            const t = moment * track.duration * (1 - 2 ** -20);
+            const { time } = momentAt(t);
             const shown = played.seek(t);
             for (const point of points.get(prop.prop.name)!) {
               const arm = rotate(
-                modelRotation(flight, prop.prop, t),
+                modelRotation(flight, prop.prop, time),
                 subtract(point, prop.prop.centerOfMass),
               );
-              const place = add(flight.centerOfMass(t), arm);
+              const place = add(flight.centerOfMass(time), arm);
               greatest = Math.max(greatest, ...place.map(Math.abs));
               excess = Math.max(excess, distance(shown(point as Vec3), place) - track.error);
             }

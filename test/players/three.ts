@@ -3,7 +3,7 @@
 import { AnimationMixer, LoopOnce, Vector3 } from "three";
 import { GLTFLoader } from "three/examples/jsm/loaders/GLTFLoader.js";
 import type { Vec3 } from "../../src/math/vec3.js";
-import { isJson, type Player } from "./player.js";
+import { isJson, type Player, STEP } from "./player.js";
 
 // Its loader tells of progress by an event that Node does not have.
 globalThis.ProgressEvent ??= class extends Event {} as unknown as typeof ProgressEvent;
@@ -28,15 +28,22 @@ export const three: Player = {
         action.play();
         const node = name === undefined ? scene.children[0] : scene.getObjectByName(name)!;
         const point = new Vector3();
+        const shown = () => {
+          scene.updateMatrixWorld(true);
+          return (p: Vec3): Vec3 =>
+            point
+              .set(...p)
+              .applyMatrix4(node.matrixWorld)
+              .toArray();
+        };
         return {
           seek(time) {
             mixer.setTime(time);
-            scene.updateMatrixWorld(true);
-            return (p: Vec3): Vec3 =>
-              point
-                .set(...p)
-                .applyMatrix4(node.matrixWorld)
-                .toArray();
+            return shown();
+          },
+          run() {
+            mixer.update(STEP);
+            return shown();
           },
           end: () => mixer.stopAllAction(),
         };
