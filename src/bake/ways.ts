@@ -175,7 +175,7 @@ function otherWay(aim: Aim, way: Way, rivals: readonly Way[]): ListedWay {
   const aimed = wish && aimedAt(aim, wish);
   // what was found by ranking is believed when the solver comes to it
   if (aimed && isSame(aimed.launch.spin, way.spin, SAME))
-    return listed(aim, aimed.launch, aimed.missAngle, written(aim.prop, wish));
+    return listed(aim, aimed.launch, aimed.missAngle, spinFor(aim, aimed.launch, wish));
   return listed(aim, launchWith(aim, way.spin), way.miss, null);
 }
 
@@ -188,6 +188,9 @@ function aimedAt({ wish, prop }: Aim, turning: WayWish): AimedArrival | undefine
     throw error;
   }
 }
+
+const spinFor = ({ prop, wish }: Aim, { duration }: Launch, turning: WayWish): WrittenSpin =>
+  written(prop, turning, "landing" in wish ? duration : undefined);
 
 /** The launch with another spin: the arc stays, but for a hand off the centre of mass whose own velocity is stated. */
 function launchWith({ wish, aimed, prop }: Aim, spin: Vec3): Launch {
@@ -215,7 +218,7 @@ function someWays(aim: Aim, wished: number): ListedWay[] {
     if (!aimed) continue;
     const { launch, missAngle } = aimed;
     if (found.some(({ spin }) => isSame(spin, launch.spin, ALIKE))) continue;
-    found.push({ spin: launch.spin, way: listed(aim, launch, missAngle, written(prop, wish)) });
+    found.push({ spin: launch.spin, way: listed(aim, launch, missAngle, spinFor(aim, launch, wish)) });
   }
   return found.map(({ way }) => way);
 }

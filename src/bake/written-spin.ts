@@ -33,7 +33,9 @@ export const rounding = (prop: Prop): Rounding => ({
   turns: (turns) => Math.round(turns * 100) / 100,
 });
 
-export function written(prop: Prop, { axis, turns }: WayWish): WrittenSpin {
+/** @param open s: the time of a flight that a floor ends, where a rate is written, as no count of turns goes with that */
+export function written(prop: Prop, { axis, turns = 0 }: WayWish, open?: number): WrittenSpin {
   const named = axis && NAMES[plainAxes(prop).findIndex((plain) => distance(plain, axis) < 1e-9)];
-  return { ...(axis && { axis: named ?? modelAxis(prop, axis) }), turns };
+  const amount = open === undefined ? { turns } : { rate: thousandths(turns / open) };
+  return { ...(axis && { axis: named ?? modelAxis(prop, axis) }), ...amount };
 }

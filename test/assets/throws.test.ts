@@ -5,8 +5,8 @@ import { loadProps } from "../../src/bake/props.js";
 import { solveTake, type Take } from "../../src/bake/take.js";
 import { axisShares, turnsAboutMomentum } from "../../src/flight/turns.js";
 import { readModel } from "../../src/gltf/read.js";
-import { conjugate, multiply, type Quat, rotate } from "../../src/math/quat.js";
-import { dot, length, type Vec3 } from "../../src/math/vec3.js";
+import { conjugate, multiply, type Quat, rotate, rotateBack } from "../../src/math/quat.js";
+import { dot, length, subtract, type Vec3 } from "../../src/math/vec3.js";
 import type { Prop } from "../../src/prop/prop.js";
 import { parseThrowFile } from "../../src/throwfile/parse.js";
 import { type ThrowFile, takeNumbers } from "../../src/throwfile/types.js";
@@ -45,6 +45,18 @@ function pose(name: string, { flight }: Take, time: number): Quat {
 /** Where a direction of the model points at an end of the flight. */
 const pointing = (name: string, take: Take, direction: Vec3, time: number) =>
   rotate(pose(name, take, time), direction);
+
+/** Of the prop's outermost points over the quay at the end of the flight. */
+function heights(name: string, take: Take): number[] {
+  const { centerOfMass, extremes } = props.get(file.throws.get(name)!.prop)!;
+  const { flight } = take;
+  const turned = pose(name, take, flight.duration);
+  const middle = flight.centerOfMass(flight.duration)[1];
+  return Array.from({ length: extremes.length / 3 }, (_, i) => {
+    const [x, y, z] = extremes.subarray(3 * i, 3 * i + 3);
+    return middle + rotate(turned, subtract([x, y, z], centerOfMass))[1];
+  });
+}
 
 const mean = (values: number[]) => values.reduce((sum, value) => sum + value, 0) / values.length;
 
@@ -201,18 +213,30 @@ describe("what the comments of the throw file claim", () => {
 
   it("what falls on the quay ends with its lowest point on the stones", () => {
     for (const name of ["crate-over-railing", "spanner-drops"]) {
-      const prop = props.get(file.throws.get(name)!.prop)!;
-      for (const take of takesOf(name)) {
-        const { flight } = take;
-        const turned = pose(name, take, flight.duration);
-        const [x, y, z] = prop.centerOfMass;
-        let lowest = Number.POSITIVE_INFINITY;
-        for (let i = 0; i < prop.extremes.length; i += 3) {
-          const [a, b, c] = prop.extremes.subarray(i, i + 3);
-          lowest = Math.min(lowest, rotate(turned, [a - x, b - y, c - z])[1]);
-        }
-        expect(flight.centerOfMass(flight.duration)[1] + lowest).toBeCloseTo(0, 10);
-      }
+      for (const take of takesOf(name)) expect(Math.min(...heights(name, take))).toBeCloseTo(0, 10);
+    }
+  });
+
+  it("the crate that is set down stands on three of its points or more, on more than one of its sides in all", () => {
+    const name = "crate-set-down";
+    const sides = takesOf(name).map((take) => {
+      const low = heights(name, take).filter((height) => height < 1e-6);
+      expect(low.length).toBeGreaterThanOrEqual(3);
+      for (const height of low) expect(Math.abs(height)).toBeLessThan(1e-6);
+      return rotateBack(pose(name, take, take.flight.duration), [0, -1, 0]).map((x) => Math.round(x));
+    });
+    expect(new Set(sides.map(String)).size).toBeGreaterThan(1);
+  });
+
+  it("the quoit lies flat on the planks of the hatch, between its boards", () => {
+    const name = "quoit-over-coaming";
+    for (const take of takesOf(name)) {
+      const up = pointing(name, take, [0, 1, 0], take.flight.duration);
+      expect(Math.abs(up[1])).toBeGreaterThan(1 - 1e-9);
+      expect(Math.min(...heights(name, take))).toBeCloseTo(0.1, 9);
+      const z = take.flight.centerOfMass(take.flight.duration)[2];
+      expect(z).toBeGreaterThan(2.36);
+      expect(z).toBeLessThan(3.5);
     }
   });
 

@@ -1,12 +1,16 @@
 import { describe, expect, it } from "vitest";
 import type { AimedArrival } from "../../src/aim/arrival.js";
 import type { LoadedProp } from "../../src/bake/props.js";
+import { throwWays } from "../../src/bake/ways.js";
+import type { Flight } from "../../src/flight/flight.js";
 import { firstTouch } from "../../src/flight/touch.js";
-import { angleBetween, type Quat, rotate } from "../../src/math/quat.js";
+import { angleBetween, conjugate, multiply, type Quat, rotate } from "../../src/math/quat.js";
 import type { Vec3 } from "../../src/math/vec3.js";
+import type { Prop } from "../../src/prop/prop.js";
 import { propSupport } from "../../src/prop/support.js";
 import type { ClipRecord } from "../../src/record/clip-record.js";
 import { ThrowFileError } from "../../src/throwfile/errors.js";
+import { parseThrowFile } from "../../src/throwfile/parse.js";
 import { baked } from "./baked.js";
 
 const G = 9.80665;
@@ -35,6 +39,18 @@ const corners = ({ arrival }: ClipRecord, [x, y, z]: Vec3): number[] =>
       ),
     ),
   );
+
+/** The least height of a corner of the crate at a thousand moments. */
+function lowestCorner(flight: Flight, { principal }: Prop): number {
+  let least = Number.POSITIVE_INFINITY;
+  for (let i = 0; i <= 1000; i++) {
+    const t = (flight.duration * i) / 1000;
+    const rotation = multiply(flight.orientation(t), conjugate(principal.axes));
+    const state = { arrival: { centerOfMass: flight.centerOfMass(t), rotation } };
+    least = Math.min(least, ...corners(state as unknown as ClipRecord, [0.3, 0.4, 0.6]));
+  }
+  return least;
+}
 
 const THROW =
   "release: { at: [0, 1.2, 0], facing: any }\narc: { heading: -20..20, speed: 3..5, elevation: 20..60 }";
@@ -121,6 +137,7 @@ describe("a pose at a first touch", () => {
           const touch = firstTouch(body, { normal: [0, 1, 0], offset: 0.05 });
           expect(Math.abs((touch ?? take.flight.duration) - take.flight.duration)).toBeLessThan(1e-9);
           expect(Math.abs(take.gap as number)).toBeLessThan(1e-9);
+          expect(lowestCorner(take.flight, prop)).toBeGreaterThan(0.05 - 1e-9);
           const { turn, missAngle } = take.aimed as AimedArrival;
           expect(missAngle).toBeLessThan(1e-9);
           expect(angleBetween(turn.end, take.flight.orientation(take.flight.duration))).toBeLessThan(1e-9);
@@ -181,6 +198,22 @@ describe("a pose at a first touch", () => {
   ])("is refused %s", async (_, keys, message) => {
     expect(await refusal(keys)).toMatch(message);
   });
+});
+
+it("the ways to a pose on a floor come with a rate to write, which gets them", async () => {
+  const text = (spin: string) =>
+    throwing(
+      `prop: crate\nrelease: { at: [0, 1.2, 0], velocity: [0, 3, 2], facing: [[z, up]] }\narrive: { floor: 0, facing: [[y, up], [x, ahead]] }\nspin: ${spin}`,
+    );
+  const source = () => Promise.reject(new Error("no model here"));
+  const [{ ways }] = await throwWays(parseThrowFile("t", text("{ axis: x, rate: 1 }")), source, "drop");
+  const others = ways.filter(({ spin, taken }) => spin && !taken);
+  expect(others.length).toBeGreaterThan(2);
+  for (const { spin, turns } of others) {
+    expect(spin).not.toHaveProperty("turns");
+    const [clip] = (await baked(text(JSON.stringify(spin)))).record.clips;
+    expect(clip.turns).toBeCloseTo(turns, 6);
+  }
 });
 
 async function refusal(keys: string): Promise<string> {
