@@ -16,7 +16,7 @@ import { takeList } from "./take-list.js";
 import { takeRange } from "./take-range.js";
 
 interface Options {
-  output: string;
+  output?: string;
   only?: string[];
   takes?: [number, number];
   dryRun?: boolean;
@@ -31,7 +31,7 @@ export const bakeCommand = (answer: (code: number) => void) =>
   new Command("bake")
     .description("solve every throw of a throw file and write its clips and takes.json")
     .argument("<throwfile>", "what is thrown and how (YAML or JSON)")
-    .requiredOption("-o, --output <dir>", "folder for the clips")
+    .option("-o, --output <dir>", "folder for the clips; needed unless --dry-run")
     .option("--only <name...>", "these throws and chains alone; others' clips and records stay as they are")
     .option("--takes <a-b>", "these takes alone, such as 3-7; with --dry-run", takeRange)
     .option("--dry-run", "solve and print, but write nothing")
@@ -44,20 +44,23 @@ export const bakeCommand = (answer: (code: number) => void) =>
           "a throw's file holds all its takes, so that some of them cannot be written alone",
           "add --dry-run to see them, or list the takes wanted under the throw's own takes",
         );
+      const { output } = options;
+      if (output === undefined && !options.dryRun)
+        throw new RequestError(["--output"], "no folder is named to write to", "add -o DIR, or --dry-run");
       const { file, text, models, inputs } = await openThrowFile(path);
       const shown = progress();
       const { only, takes } = options;
       const baked = await bake(file, models, { only, takes, onTake: shown.update }).finally(shown.end);
       const fresh = await recordOf(file, text, baked);
-      if (!options.dryRun) {
-        const record = await mergeRecord(options.output, fresh, file);
+      if (output !== undefined && !options.dryRun) {
+        const record = await mergeRecord(output, fresh, file);
         const files = [...baked.files, { name: "takes.json", content: formatRecord(record) }];
         await spareInputs(
-          options.output,
+          output,
           files.map(({ name }) => name),
           inputs,
         );
-        await writeFiles(options.output, files);
+        await writeFiles(output, files);
       }
       const notes = [...baked.warnings, ...takeWarnings(baked.throws).map(warningText)];
       if (options.json) {
@@ -121,11 +124,11 @@ function report(record: TakesRecord, notes: readonly string[], options: Options)
     prop.warnings.map((text) => `${name}: ${text}`),
   );
   const misses = record.clips.filter(missed).map(missLine);
-  const head = ["throw", "prop", "takes", "time s", "turns", "keys", "bytes/clip", "error mm", "file"];
+  const head = ["throw", "prop", "takes", "time s", "turns", "keys", "bytes/clip", "within mm", "file"];
   const end = options.dryRun
-    ? "nothing written (--dry-run)"
-    : `written to ${options.output}, with takes.json`;
-  return `${table(head, rows)}\n\n${[...warnings, ...notes, ...misses].map((line) => `${line}\n`).join("")}${counted(record.clips.length, "take")} of ${whatIsIn(record)} ${end}\n`;
+    ? ", nothing written (--dry-run)"
+    : ` written to ${options.output}, with takes.json`;
+  return `${table(head, rows)}\n\n${[...warnings, ...notes, ...misses].map((line) => `${line}\n`).join("")}${counted(record.clips.length, "take")} of ${whatIsIn(record)}${end}\n`;
 }
 
 function whatIsIn({ clips }: TakesRecord): string {

@@ -21,11 +21,18 @@ describe("bake --dry-run", () => {
     expect(wet.out).toBe(readFileSync(place.path("out/takes.json"), "utf8"));
   });
 
+  it("needs no folder", async () => {
+    const place = new Workplace();
+    const { code, out } = await run("bake", place.throwFile, "--dry-run");
+    expect(code).toBe(0);
+    expect(out).toMatch("nothing written");
+  });
+
   it("says so under its table", async () => {
     const place = new Workplace();
     const { out, err } = await run("bake", place.throwFile, "-o", place.out, "--dry-run");
     expect(out).toMatch(/^throw +prop +takes/);
-    expect(out).toMatch("5 takes of 2 throws nothing written (--dry-run)");
+    expect(out).toMatch("5 takes of 2 throws, nothing written (--dry-run)");
     // progress is for terminals alone
     expect(err).toBe("");
   });

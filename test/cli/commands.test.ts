@@ -42,7 +42,7 @@ describe("a command line that is wrong answers 2, says why on standard error and
     ["an unknown command", ["toss"], /unknown command 'toss'/],
     ["an unknown option", ["bake", "FILE", "-o", "OUT", "--fast"], /unknown option '--fast'/],
     ["no throw file", ["bake", "-o", "OUT"], /missing required argument 'throwfile'/],
-    ["no folder", ["bake", "FILE"], /required option '-o, --output <dir>'/],
+    ["no folder", ["bake", "FILE"], /no folder is named.*-o DIR/],
     ["an argument too many", ["bake", "FILE", "FILE", "-o", "OUT"], /too many arguments/],
     ["a density that is no number", ["weigh", "MODEL", "--density", "heavy"], /heavy.*above 0/],
     ["a density of nothing", ["weigh", "MODEL", "--density", "0"], /0.*above 0/],
