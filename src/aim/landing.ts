@@ -2,18 +2,14 @@
 
 import { solveArc } from "../flight/arc.js";
 import { endArc } from "../flight/arc-end.js";
-import { fly } from "../flight/flight.js";
 import type { Launch } from "../flight/launch.js";
-import { turnsAboutMomentum } from "../flight/turns.js";
 import { between, conjugate, multiply, type Quat, rotate } from "../math/quat.js";
 import { RequestError } from "../math/request-error.js";
 import { quadraticRoots } from "../math/roots.js";
-import { addScaled, distance, length, scale, subtract, type Vec3 } from "../math/vec3.js";
+import { addScaled, scale, subtract, type Vec3 } from "../math/vec3.js";
 import { type AimedArrival, type ArrivalWish, solveArrival } from "./arrival.js";
 import type { AimedBody } from "./launch.js";
-import { nearness } from "./ranking.js";
-import type { Way, WayWish } from "./way.js";
-import { allWays } from "./ways.js";
+import { otherWays } from "./other-ways.js";
 
 /** What the floor is to the prop; poses turn the model from as modelled. */
 export interface Landing {
@@ -36,11 +32,8 @@ const NEAR = 1e-3;
 /** Changes of the time that end it, likewise; where rounding in a hand's speed leaves more: what will do. */
 const SETTLED = 1e-14;
 const GOOD = 1e-10;
-/** How many further ways are tried where the nearest touches early, and how many turns more and fewer they may have. */
-const OTHERS = 12;
-const AROUND = 2;
-/** Spins nearer to each other than this share are one. */
-const SAME = 1e-6;
+const NOT_NEAREST =
+  "on the way nearest the wish an edge would touch the floor before: the nearest that does not is taken";
 
 /**
  * Solves the time at which the prop, in the pose asked for, touches with its lowest point, and the spin that gets it there. Where the way nearest the
@@ -55,7 +48,8 @@ export function solveLanding(wish: LandingWish, body: AimedBody): AimedArrival {
   const posed = withRoll(wish, body, nearest);
   for (const { spin } of otherWays(wish, body, nearest)) {
     const other = settled(posed, body, { spin, duration: nearest.launch.duration });
-    if (other && wish.landing.earliness(other.launch) === 0) return other;
+    if (wish.landing.earliness(other.launch) === 0)
+      return { ...other, warnings: [...nearest.warnings, ...other.warnings, NOT_NEAREST] };
   }
   throw new RequestError(
     ["arrive", "facing"],
@@ -160,25 +154,6 @@ function firstGuess(wish: LandingWish): number {
 function descent(from: number, rise: number, gravity: number, height: number): number | undefined {
   const last = quadraticRoots(0.5 * gravity, rise, from - height).at(-1);
   return last !== undefined && last > 0 && rise + gravity * last <= 0 ? last : undefined;
-}
-
-/** Ways other than the one found, those nearest the wish first. */
-function otherWays(wish: LandingWish, body: AimedBody, { turn, launch, arc }: AimedArrival): Way[] {
-  const pose = multiply(turn.start, conjugate(body.axes));
-  const asked = wish.turning(pose, turn.duration, { ahead: wish.ahead, travel: arc.velocity });
-  const turns = Math.abs(asked.turns ?? turnsAboutMomentum(fly(launch)));
-  const most = turns + AROUND;
-  const sign = (asked.turns ?? 0) < 0 ? -1 : 1;
-  const ordered: WayWish = {
-    turns,
-    axis: asked.axis && scale(asked.axis, sign / length(asked.axis)),
-  };
-  return allWays({ ...turn, leastTurns: Math.max(0, turns - AROUND), mostTurns: most, mostTurning: most })
-    .filter(({ spin }) => distance(spin, launch.spin) > SAME * length(launch.spin))
-    .map((way) => ({ way, cost: nearness(way, ordered) }))
-    .sort((a, b) => a.cost - b.cost)
-    .slice(0, OTHERS)
-    .map(({ way }) => way);
 }
 
 function tooHigh(

@@ -146,6 +146,21 @@ describe("a pose at a first touch", () => {
     expect(count).toBeGreaterThan(100);
   });
 
+  it("is got on the next way where the one nearest the wish would touch with an edge before, and that is told", async () => {
+    const { bake } = await baked(
+      throwing(
+        "prop: crate\ntakes: 20\nvary: chance\nrelease: { at: [0, 1, 0], facing: any }\narc: { heading: 0, speed: 3, elevation: 30 }\narrive: { floor: 0, facing: [[y, up], [z, ahead]] }\nspin: { axis: any, rate: 3 }",
+      ),
+    );
+    const { prop } = bake.props.get("crate") as LoadedProp;
+    const told = bake.throws[0].takes.map(({ take }) => {
+      expect(take.candidate).toBe(1);
+      expect(lowestCorner(take.flight, prop)).toBeGreaterThan(-1e-9);
+      return (take.aimed as AimedArrival).warnings.some((text) => /an edge would touch/.test(text));
+    });
+    expect(new Set(told).size).toBe(2);
+  });
+
   it("goes with a hand's own velocity off the centre of mass", async () => {
     const found = await clips(
       "prop: crate\ntakes: 4\nrelease: { at: [0, 1.5, 0], point: corner, velocity: [1, 2..3, 3], facing: any }\narrive: { floor: 0, facing: [[y, up], [z, flight]] }\nspin: { axis: x, rate: 0.5 }",
