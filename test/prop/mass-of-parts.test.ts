@@ -213,6 +213,22 @@ describe("what cannot be weighed", () => {
     expect(warnings).toEqual([
       "surface 1: a part has no thickness: taken as a thin surface of 0.002 m; state wall",
     ]);
+    // A solid pressed flat has both its sides, cut along other diagonals, and weighs as one.
+    const pressed: Mesh = {
+      vertices: [
+        [0, 0, 0],
+        [1, 0, 0],
+        [1, 1, 0],
+        [0, 1, 0],
+      ],
+      triangles: [
+        [0, 1, 2],
+        [0, 2, 3],
+        [1, 0, 3],
+        [3, 2, 1],
+      ],
+    };
+    expect(weighed(ell(), pressed).body.mass).toBeCloseTo(L.mass + 2, 12);
   });
 
   test("a solid whose faces are of two densities is weighed as the larger, with a warning", () => {

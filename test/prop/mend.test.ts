@@ -144,6 +144,9 @@ describe("vertices that are nearly one", () => {
     // A lid a fiftieth of the tolerance thick, without its bottom.
     const thin = without(box([0, 0, 0], [1, 1, 2e-6]), 0, 1);
     expect(weighed(thin).body.volume).toBeCloseTo(2e-6, 12);
+    // Beside something that is joined, too.
+    const torn = moved(soup(cube, 1e-6), (v) => add(v, [0, 0, 2]));
+    expect(weighed(together(thin, torn)).body.mass - weighed(torn).body.mass).toBeCloseTo(2e-3, 8);
   });
 
   test("a crack beside a vertex on an edge is closed without a word", () => {
@@ -213,6 +216,13 @@ describe("faces that are there twice", () => {
     const front = { vertices, triangles: triangles.slice(2, 4) };
     const { body, warnings } = weighed(together(cube, front, turnedRound(front)));
     expect([body.volume, warnings]).toEqual([1, ["surface 0: 4 faces are there twice: counted once"]]);
+  });
+
+  test("look the way that most of them do", () => {
+    const { vertices, triangles } = cube;
+    const front = { vertices, triangles: triangles.slice(2, 4) };
+    const { body } = weighed(together(turnedRound(front), cube, front));
+    expect([body.volume, body.centerOfMass]).toEqual([1, [0.5, 0.5, 0.5]]);
   });
 
   test("are a card where they look opposite ways: a bent two-sided sheet is a surface of its area", () => {

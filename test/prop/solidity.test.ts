@@ -170,6 +170,8 @@ describe("parts that overlap", () => {
 
   test("nothing is told of parts that touch, whose boxes alone overlap, or that lie in a cavity", () => {
     expect(weighed(cube, box([1, 0, 0], [2, 1, 1])).warnings).toEqual([]);
+    // Less than a thousandth in common.
+    expect(weighed(cube, box([0.9995, 0, 0], [2, 1, 1])).warnings).toEqual([]);
     expect(weighed(ell(), box([0.2, 0.2, 0], [0.5, 0.375, 0.125])).warnings).toEqual([]);
     const seedling = box([0.4, 0.4, 0.4], [0.6, 0.6, 0.6]);
     const hollow = together(cube, turnedRound(box([0.25, 0.25, 0.25], [0.75, 0.75, 0.75])), seedling);
