@@ -9,7 +9,6 @@ import { isObject } from "./form.js";
 import { inherit } from "./inherit.js";
 import { checkNames } from "./names.js";
 import { nearestHint, unknownKey } from "./nearest.js";
-import { checkNotYet } from "./not-yet.js";
 import { propSchema } from "./prop-schema.js";
 import { readYaml } from "./read-yaml.js";
 import { checkReferences } from "./references.js";
@@ -66,7 +65,6 @@ export function parseThrowFile(name: string, text: string): ThrowFile {
   const props = readProps(root, faults);
   const throws = readThrows(root, written, broken, frameRate, bake?.layout === "turn-only", faults);
   const chains = readChains(root, throws, faults);
-  checkNotYet(root, faults.tell);
   faults.finish(name, written, root);
   return {
     name,
