@@ -52,6 +52,7 @@ export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number
   const host = hostFrame(file.host).toWorld;
   const broken = new Map<string, number>();
   let first: RequestError | undefined;
+  let alike = true;
   let flightless = 0;
   let tried = 0;
   for (const candidate of candidateOrder(entry, stream)) {
@@ -68,12 +69,14 @@ export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number
     } catch (error) {
       if (!(error instanceof RequestError)) throw error;
       first ??= error;
+      alike &&= error.fault === first.fault;
       flightless++;
     }
   }
   if (broken.size > 0) throw new UnheldLimits(number, tried, flightless, broken);
   const reason = first as RequestError;
-  if (tried === 1) throw reason;
+  // what every draw runs into, no draw is to blame for
+  if (alike) throw reason;
   throw new RequestError(
     reason.path,
     `take ${number}: none of ${tried} draws has a flight; the first: ${reason.fault}`,

@@ -225,6 +225,14 @@ describe("a throw that cannot be", () => {
     expect(await faultOf(text)).toMatch(/throws\.lob\.arc\.speed: take 1: none of 1000 draws has a flight/);
   });
 
+  it("does not count draws where all run into the same", async () => {
+    // a phase is left open here, and has no bearing on the arc
+    const text = plain(1)
+      .replace(", after: 1", "")
+      .replace(/spin: .*/, "arc: { speed: 1 }\n    spin: { axis: left, turns: 1 }");
+    expect(await faultOf(text)).toMatch(/arc\.speed: a launch at 1 m\/s/);
+  });
+
   it("names the word that has no meaning in it", async () => {
     const text = plain(1).replace("[0.3, 1, 2]", "[0, 1, 0]");
     expect(await faultOf(text)).toMatch(/throws\.lob\.release\.facing.*"ahead" has no meaning/);
