@@ -226,10 +226,10 @@ describe("a throw that cannot be", () => {
   });
 
   it("does not count draws where all run into the same", async () => {
-    // a phase is left open here, and has no bearing on the arc
+    // the wobble is left open here, and has no bearing on the arc
     const text = plain(1)
       .replace(", after: 1", "")
-      .replace(/spin: .*/, "arc: { speed: 1 }\n    spin: { axis: left, turns: 1 }");
+      .replace(/spin: .*/, "arc: { speed: 1 }\n    spin: { axis: x, turns: 1, wobble: 1..2 }");
     expect(await faultOf(text)).toMatch(/arc\.speed: a launch at 1 m\/s/);
   });
 
