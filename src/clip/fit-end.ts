@@ -34,6 +34,7 @@ export class EndFit {
     let x = 0;
     let y = 0;
     let z = 0;
+    let greatest = 0;
     for (let round = 0; round < ROUNDS; round++) {
       let sum = 0;
       let sumOfZ = 0;
@@ -50,17 +51,20 @@ export class EndFit {
       x /= sum;
       y /= sum;
       z /= sumOfZ;
-      let greatest = 0;
+      greatest = 0;
       for (let n = 0, row = 0; n <= FITTED; n++, row += ROW) {
         const dx = rows[row] + rows[row + 3] * x;
         const dy = rows[row + 1] + rows[row + 3] * y;
         const dz = rows[row + 2] + rows[row + 4] * z;
-        weights[n] *= Math.sqrt(dx * dx + dy * dy + dz * dz);
-        if (weights[n] > greatest) greatest = weights[n];
+        const weight = weights[n] * Math.sqrt(dx * dx + dy * dy + dz * dz);
+        weights[n] = weight;
+        if (weight > greatest) greatest = weight;
       }
-      for (let n = 0; n <= FITTED; n++)
-        weights[n] = greatest > 0 ? Math.max(weights[n] / greatest, LEAST_WEIGHT) : 1;
+      // No errors, nothing to weigh.
+      if (!(greatest > 0)) break;
     }
+    const least = LEAST_WEIGHT * greatest;
+    for (let n = 0; n <= FITTED; n++) weights[n] = greatest > 0 ? Math.max(weights[n], least) / greatest : 1;
     shift[0] = x;
     shift[1] = y;
     shift[2] = z;

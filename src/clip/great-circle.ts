@@ -17,21 +17,27 @@ export class GreatCircle {
   /** Leads from the quaternion in `a` at `aOffset` to the one in `b` at `bOffset`, whose dot product it returns. */
   set(a: Float64Array, aOffset: number, b: Float64Array, bOffset: number): number {
     const { from, side } = this;
-    let d = 0;
-    for (let i = 0; i < 4; i++) {
-      from[i] = a[aOffset + i];
-      d += from[i] * b[bOffset + i];
-    }
-    let square = 0;
-    for (let i = 0; i < 4; i++) {
-      side[i] = b[bOffset + i] - d * from[i];
-      square += side[i] * side[i];
-    }
-    const s = Math.sqrt(square);
+    const x = a[aOffset];
+    const y = a[aOffset + 1];
+    const z = a[aOffset + 2];
+    const w = a[aOffset + 3];
+    const d = x * b[bOffset] + y * b[bOffset + 1] + z * b[bOffset + 2] + w * b[bOffset + 3];
+    const sx = b[bOffset] - d * x;
+    const sy = b[bOffset + 1] - d * y;
+    const sz = b[bOffset + 2] - d * z;
+    const sw = b[bOffset + 3] - d * w;
+    const s = Math.sqrt(sx * sx + sy * sy + sz * sz + sw * sw);
+    from[0] = x;
+    from[1] = y;
+    from[2] = z;
+    from[3] = w;
+    side[0] = s > 0 ? sx / s : 0;
+    side[1] = s > 0 ? sy / s : 0;
+    side[2] = s > 0 ? sz / s : 0;
+    side[3] = s > 0 ? sw / s : 0;
     this.angle = atan2(s, d);
     this.sine = s;
     this.cosine = d;
-    for (let i = 0; i < 4; i++) side[i] = s > 0 ? side[i] / s : 0;
     return d;
   }
 }

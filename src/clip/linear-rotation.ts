@@ -1,7 +1,7 @@
 import { acos, cos, sin } from "../math/elementary.js";
 import { rotationEndFitter } from "./fit-rotation.js";
 import { GreatCircle } from "./great-circle.js";
-import { longestWithin } from "./longest-segments.js";
+import { longestSegments, longestWithin } from "./longest-segments.js";
 import { type RotationKeys, samplesBetween, squaredChord, squaredChordAt } from "./rotation-keys.js";
 import { bendSurcharge, type SampledMotion } from "./sampled-motion.js";
 import { slerps } from "./slerps.js";
@@ -11,8 +11,6 @@ import { fromOrigin } from "./time-grid.js";
 /** Cosine of half the largest step between keys: just under 90°, since some players take the chord for the arc. */
 const LEAST_DOT = 0.7072;
 const LARGEST_ANGLE = acos(LEAST_DOT);
-/** What the largest step is taken for as an error: not so near to 1 that a somewhat longer one is not tried. */
-const ALMOST = 0.97;
 const BEYOND = 1.001;
 
 /**
@@ -64,7 +62,7 @@ export function linearRotationKeys(
     const duration = time(b) - start;
     const { low, high } = samplesBetween(motion, a, b);
     motion.poseInto(b, pose);
-    second.set(pose.subarray(3));
+    for (let i = 0; i < 4; i++) second[i] = pose[3 + i];
     if (circle.set(first, 0, second, 0) < LEAST_DOT) return Math.max(squaredStep(circle.angle), BEYOND);
     if (offCurve && b < last && b > a + 1 && low <= high) fitEnd(circle, a, b, low, high, second);
     store.store(second, 0, key, second);
@@ -110,7 +108,7 @@ export function linearRotationKeys(
     good.stored.set(key);
     good.played.set(second);
     good.surcharge = surcharge;
-    return Math.max(bound > 0 ? Math.sqrt(greatest / bound) : 0, Math.min(squaredStep(circle.angle), ALMOST));
+    return Math.max(bound > 0 ? Math.sqrt(greatest / bound) : 0, fullness(circle.angle));
   };
 
   motion.poseInto(0, pose);
@@ -118,12 +116,15 @@ export function linearRotationKeys(
   if (squaredChord(pose, 3, first, 0) > squaredChordAt(limit - scaling, body.reach)) return undefined;
   stored.push(...key);
   played.push(...first);
-  const indices = longestWithin(last, error, () => {
+  const taken = (): void => {
     first.set(good.played);
     stored.push(...good.stored);
     played.push(...good.played);
     surcharges.push(good.surcharge);
-  });
+  };
+  const indices = offCurve
+    ? longestWithin(last, error, taken)
+    : longestSegments(last, (a, b) => error(a, b) <= 1, taken);
   if (!indices) return undefined;
   const values = store.create(stored.length);
   values.set(stored);
@@ -138,3 +139,10 @@ export function linearRotationKeys(
 
 /** Square of a step of half the angle `angle`, as a part of the greatest. */
 const squaredStep = (angle: number): number => (angle * angle) / (LARGEST_ANGLE * LARGEST_ANGLE);
+
+/** The 16th power of a step of half the angle `angle`, likewise, 1 at most: near 1 only where hardly a longer one is allowed. */
+function fullness(angle: number): number {
+  const square = squaredStep(angle);
+  const fourth = square * square;
+  return Math.min(1, fourth * fourth * fourth * fourth);
+}

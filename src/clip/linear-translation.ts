@@ -4,6 +4,9 @@ import type { NodePath } from "./node-path.js";
 import type { SampledMotion } from "./sampled-motion.js";
 import { firstAfter, lastBefore, type TranslationKeys } from "./translation-keys.js";
 
+/** A segment that does not fit has an error above 1, however little. */
+const BEYOND = 1 + 1e-9;
+
 /**
  * Few translation keys, straight lines between them, with which no point is further than `limit` m from the true motion,
  * the rotation being played as `path` says; undefined where not even a key on every time of the grid does it. The first and
@@ -28,31 +31,49 @@ export function linearTranslationKeys(
   const fit = new EndFit();
   const values: number[] = [];
   let error = 0;
+  let worst = 0;
+  let moved = 0;
   let goodWorst = 0;
 
-  /** Of what the rotation alone moves points by: the inverse of what is left, as a part of the limit. */
-  const weightOf = (moved: number): number => limit / Math.max(1e-9, limit - moved);
+  /** What is left where the rotation alone moves points by `by`, m. */
+  const left = (by: number): number => Math.max(1e-9, limit - by);
 
   /** Moves `to` from the target to where the segment's greatest error, as a part of what is allowed, is least. */
   const fitEnd = (start: number, duration: number, low: number, high: number): void => {
     for (let n = 0; n < FITTED; n++) {
       const k = fittedSample(n, low, high);
       const share = (times[k] - start) / duration;
-      const weight = weightOf(wanted[4 * k + 3]);
+      const weight = limit / left(wanted[4 * k + 3]);
       const x = from[0] + share * (target[0] - from[0]) - wanted[4 * k];
       const y = from[1] + share * (target[1] - from[1]) - wanted[4 * k + 1];
       const z = from[2] + share * (target[2] - from[2]) - wanted[4 * k + 2];
       fit.set(n, weight * x, weight * y, weight * z, weight * share, weight * share);
     }
-    const weight = weightOf(target[3]);
+    const weight = limit / left(target[3]);
     fit.set(FITTED, 0, 0, 0, weight, weight);
     fit.solve();
     for (let i = 0; i < 3; i++) to[i] = target[i] + fit.shift[i];
   };
 
+  /** Remembers the greatest displacement of those looked at. */
+  const look = (k: number, start: number, duration: number): void => {
+    const share = (times[k] - start) / duration;
+    const x = from[0] + share * (to[0] - from[0]) - wanted[4 * k];
+    const y = from[1] + share * (to[1] - from[1]) - wanted[4 * k + 1];
+    const z = from[2] + share * (to[2] - from[2]) - wanted[4 * k + 2];
+    const displacement = Math.sqrt(x * x + y * y + z * z) + wanted[4 * k + 3];
+    if (displacement > worst) {
+      worst = displacement;
+      moved = wanted[4 * k + 3];
+    }
+  };
+
+  /** That displacement as a part of what is allowed, of both what the rotation leaves. */
+  const part = (): number => (worst - moved) / left(moved);
+
   /**
-   * Greatest displacement, as a part of what is allowed; the middle's alone where that is too great. Where the segment fits, its
-   * first quarter is left out: the error with which the key before starts it says nothing of its length.
+   * Greatest error of a segment, as a part of what is allowed; only of its middle or its later part where that is too great. Where the
+   * segment fits, its first quarter is left out: the error with which the key before starts it says nothing of its length.
    */
   const misfit = (a: number, b: number): number => {
     const start = time(a);
@@ -60,33 +81,27 @@ export function linearTranslationKeys(
     const low = firstAfter(path, start);
     const high = lastBefore(path, time(b));
     path.wantedInto(b, target);
-    to.set(target.subarray(0, 3));
+    for (let i = 0; i < 3; i++) to[i] = target[i];
     if (offCurve && b < last && b > a + 1 && low <= high) fitEnd(start, duration, low, high);
     let square = 0;
     for (let i = 0; i < 3; i++) {
       to[i] = Math.fround(to[i]);
       square += (to[i] - target[i]) * (to[i] - target[i]);
     }
-    let worst = Math.sqrt(square) + target[3];
-    const displacement = (k: number): number => {
-      const share = (times[k] - start) / duration;
-      const x = from[0] + share * (to[0] - from[0]) - wanted[4 * k];
-      const y = from[1] + share * (to[1] - from[1]) - wanted[4 * k + 1];
-      const z = from[2] + share * (to[2] - from[2]) - wanted[4 * k + 2];
-      return Math.sqrt(x * x + y * y + z * z) + wanted[4 * k + 3];
-    };
+    worst = Math.sqrt(square) + target[3];
+    moved = target[3];
     // Nearly always the error is great about the middle.
-    if (low <= high) worst = Math.max(worst, displacement((low + high) >> 1));
-    if (worst > limit) return worst / limit;
+    if (low <= high) look((low + high) >> 1, start, duration);
+    if (worst > limit) return Math.max(part(), BEYOND);
     const early = low + Math.floor((high - low + 1) / 4);
-    let atFirst = 0;
-    for (let k = low; k < early; k++) atFirst = Math.max(atFirst, displacement(k));
-    for (let k = early; k <= high; k++) worst = Math.max(worst, displacement(k));
-    const all = Math.max(worst, atFirst);
-    if (all > limit) return all / limit;
+    for (let k = early; k <= high; k++) look(k, start, duration);
+    if (worst > limit) return Math.max(part(), BEYOND);
+    const error = Math.min(part(), 1);
+    for (let k = low; k < early; k++) look(k, start, duration);
+    if (worst > limit) return Math.max(part(), BEYOND);
     good.set(to);
-    goodWorst = all;
-    return worst / limit;
+    goodWorst = worst;
+    return error;
   };
 
   path.wantedInto(0, from);

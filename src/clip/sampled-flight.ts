@@ -1,5 +1,5 @@
 import type { Flight } from "../flight/flight.js";
-import { conjugate, type Quat } from "../math/quat.js";
+import { conjugate, normalize, type Quat } from "../math/quat.js";
 import type { Body } from "./body.js";
 import type { SampledMotion } from "./sampled-motion.js";
 import { STRIDE, timeGrid } from "./time-grid.js";
@@ -37,7 +37,7 @@ export function sampleOn(
 
   const positions = new Float64Array(3 * samples);
   const rotations = new Float64Array(4 * samples);
-  const fromModel = conjugate(body.axes);
+  const fromModel = conjugate(normalize(body.axes));
   for (let k = 0; k < samples; k++) {
     const t = trueTime(sampleIndex(k));
     const c = flight.centerOfMass(t);
@@ -98,7 +98,8 @@ function rotationInto(
   const mw = w * bw - x * bx - y * by - z * bz;
   const side =
     near[nearOffset] * mx + near[nearOffset + 1] * my + near[nearOffset + 2] * mz + near[nearOffset + 3] * mw;
-  const f = (side < 0 ? -1 : 1) / Math.sqrt(mx * mx + my * my + mz * mz + mw * mw);
+  // Unit as its factors are.
+  const f = side < 0 ? -1 : 1;
   out[offset] = mx * f;
   out[offset + 1] = my * f;
   out[offset + 2] = mz * f;

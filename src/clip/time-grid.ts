@@ -4,7 +4,7 @@ import type { Body } from "./body.js";
 import { bendSurcharge } from "./sampled-motion.js";
 
 /**
- * Times k·`step`, a power of two, which float32 holds exactly; the last is the duration rounded to float32 and stands
+ * Times k·`step`, a power of two or three times one, which float32 holds exactly; the last is the duration rounded to float32 and stands
  * for the flight's own end. Keys may stand at every time, the motion is compared at every `STRIDE`-th and at the keys.
  */
 export interface TimeGrid {
@@ -21,7 +21,7 @@ export interface TimeGrid {
 /** Times of the grid from one sample to the next: keys are placed this much finer than the motion is compared. */
 export const STRIDE = 8;
 /** Greatest part of the tolerance that goes to the surcharge; each percent costs half a percent of keys. */
-const SURCHARGE_SHARE = 0.02;
+const SURCHARGE_SHARE = 0.018;
 /** Samples a flight may have at most: 60 MB. Where it needs more the surcharge grows. */
 const MOST_SAMPLES = 1 << 20;
 /** Radians the prop may turn from one sample to the next, so that the quaternion's sign can be followed. */
@@ -44,7 +44,7 @@ export function timeGrid(flight: Flight, body: Body, toleranceMetres: number): T
     LARGEST_TURN / greatestRate,
     end / 4,
   );
-  const step = powerOfTwoBelow(Math.max(widest, (2 * end) / MOST_SAMPLES)) / STRIDE;
+  const step = roundBelow(Math.max(widest, (2 * end) / MOST_SAMPLES)) / STRIDE;
 
   // In the last interval the true motion is stretched from the flight's own end to the float32 one …
   const stretch = 1 + Math.abs(end - duration) / (step / 2);
@@ -71,10 +71,10 @@ export function endShift(flight: Flight, body: Body): number {
   return (speed + body.reach * greatestRate) * Math.abs(Math.fround(duration) - duration);
 }
 
-/** The largest power of two that is not above `x`. */
-function powerOfTwoBelow(x: number): number {
+/** The largest power of two, or three times one, that is not above `x`. */
+function roundBelow(x: number): number {
   let power = 1;
   while (power > x) power /= 2;
   while (2 * power <= x) power *= 2;
-  return power;
+  return 1.5 * power <= x ? 1.5 * power : power;
 }

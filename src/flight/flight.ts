@@ -80,7 +80,13 @@ export function fly(launch: Launch): Flight {
     energy: turning.energy,
     centerOfMass(time) {
       const t = within(time);
-      return addScaled(addScaled(centerOfMass, velocity, t), gravity, 0.5 * t * t);
+      const half = 0.5 * t * t;
+      // One vector, as clips ask for many.
+      return [
+        centerOfMass[0] + t * velocity[0] + half * gravity[0],
+        centerOfMass[1] + t * velocity[1] + half * gravity[1],
+        centerOfMass[2] + t * velocity[2] + half * gravity[2],
+      ];
     },
     velocity: (t) => addScaled(velocity, gravity, within(t)),
     orientation,
