@@ -43,14 +43,43 @@ export function linearRotationKeys(
   const played: number[] = [];
   const surcharges: number[] = [];
 
-  const chordAt = (sample: number, c: number, s: number): number => {
+  /** Square of the greatest chord at the samples `low` to `high`, at least one. */
+  const greatestChord = (start: number, speed: number, low: number, high: number): number => {
     const { from, side } = circle;
-    const k = 4 * sample;
-    const x = c * from[0] + s * side[0] - rotations[k];
-    const y = c * from[1] + s * side[1] - rotations[k + 1];
-    const z = c * from[2] + s * side[2] - rotations[k + 2];
-    const w = c * from[3] + s * side[3] - rotations[k + 3];
-    return x * x + y * y + z * z + w * w;
+    const f0 = from[0];
+    const f1 = from[1];
+    const f2 = from[2];
+    const f3 = from[3];
+    const s0 = side[0];
+    const s1 = side[1];
+    const s2 = side[2];
+    const s3 = side[3];
+    let t = time(sampleIndex(low));
+    let c = cos((t - start) * speed);
+    let s = sin((t - start) * speed);
+    let way = 0;
+    let cosWay = 1;
+    let sinWay = 0;
+    let greatest = 0;
+    for (let k = low; ; k++) {
+      const x = c * f0 + s * s0 - rotations[4 * k];
+      const y = c * f1 + s * s1 - rotations[4 * k + 1];
+      const z = c * f2 + s * s2 - rotations[4 * k + 2];
+      const w = c * f3 + s * s3 - rotations[4 * k + 3];
+      const square = x * x + y * y + z * z + w * w;
+      if (square > greatest) greatest = square;
+      if (k === high) return greatest;
+      const next = time(sampleIndex(k + 1));
+      if (next - t !== way) {
+        way = next - t;
+        cosWay = cos(way * speed);
+        sinWay = sin(way * speed);
+      }
+      t = next;
+      const turned = c * cosWay - s * sinWay;
+      s = s * cosWay + c * sinWay;
+      c = turned;
+    }
   };
 
   /**
@@ -76,34 +105,15 @@ export function linearRotationKeys(
     if (greatest > bound) return Math.sqrt(greatest / bound);
     if (low <= high) {
       // Nearly always the error is great about the middle, and many segments tried are too long.
-      const middle = (low + high) >> 1;
-      const there = (time(sampleIndex(middle)) - start) * speed;
-      const chord = chordAt(middle, cos(there), sin(there));
-      if (chord > bound) return Math.sqrt(chord / bound);
-      const angle = (time(sampleIndex(low)) - start) * speed;
-      let c = cos(angle);
-      let s = sin(angle);
-      let turn = 0;
-      let cosTurn = 1;
-      let sinTurn = 0;
+      const middle = greatestChord(start, speed, (low + high) >> 1, (low + high) >> 1);
+      if (middle > bound) return Math.sqrt(middle / bound);
       const early = low + ((high - low) >> 2);
-      let atFirst = 0;
-      for (let k = low; ; k++) {
-        const chord = chordAt(k, c, s);
-        if (k < early) atFirst = Math.max(atFirst, chord);
-        else greatest = Math.max(greatest, chord);
-        if (k === high) break;
-        const way = (time(sampleIndex(k + 1)) - time(sampleIndex(k))) * speed;
-        if (way !== turn) {
-          turn = way;
-          cosTurn = cos(turn);
-          sinTurn = sin(turn);
-        }
-        const next = c * cosTurn - s * sinTurn;
-        s = s * cosTurn + c * sinTurn;
-        c = next;
+      greatest = Math.max(greatest, greatestChord(start, speed, early, high));
+      if (greatest > bound) return Math.sqrt(greatest / bound);
+      if (early > low) {
+        const atFirst = greatestChord(start, speed, low, early - 1);
+        if (atFirst > bound) return Math.sqrt(atFirst / bound);
       }
-      if (atFirst > bound || greatest > bound) return Math.sqrt(Math.max(atFirst, greatest) / bound);
     }
     good.stored.set(key);
     good.played.set(second);

@@ -55,16 +55,24 @@ export function linearTranslationKeys(
     for (let i = 0; i < 3; i++) to[i] = target[i] + fit.shift[i];
   };
 
-  /** Remembers the greatest displacement of those looked at. */
-  const look = (k: number, start: number, duration: number): void => {
-    const share = (times[k] - start) / duration;
-    const x = from[0] + share * (to[0] - from[0]) - wanted[4 * k];
-    const y = from[1] + share * (to[1] - from[1]) - wanted[4 * k + 1];
-    const z = from[2] + share * (to[2] - from[2]) - wanted[4 * k + 2];
-    const displacement = Math.sqrt(x * x + y * y + z * z) + wanted[4 * k + 3];
-    if (displacement > worst) {
-      worst = displacement;
-      moved = wanted[4 * k + 3];
+  /** Remembers the greatest displacement of those at the times `low` to `high` compared. */
+  const look = (low: number, high: number, start: number, duration: number): void => {
+    const fx = from[0];
+    const fy = from[1];
+    const fz = from[2];
+    const rx = (to[0] - fx) / duration;
+    const ry = (to[1] - fy) / duration;
+    const rz = (to[2] - fz) / duration;
+    for (let k = low; k <= high; k++) {
+      const t = times[k] - start;
+      const x = fx + t * rx - wanted[4 * k];
+      const y = fy + t * ry - wanted[4 * k + 1];
+      const z = fz + t * rz - wanted[4 * k + 2];
+      const displacement = Math.sqrt(x * x + y * y + z * z) + wanted[4 * k + 3];
+      if (displacement > worst) {
+        worst = displacement;
+        moved = wanted[4 * k + 3];
+      }
     }
   };
 
@@ -91,13 +99,13 @@ export function linearTranslationKeys(
     worst = Math.sqrt(square) + target[3];
     moved = target[3];
     // Nearly always the error is great about the middle.
-    if (low <= high) look((low + high) >> 1, start, duration);
+    if (low <= high) look((low + high) >> 1, (low + high) >> 1, start, duration);
     if (worst > limit) return Math.max(part(), BEYOND);
     const early = low + Math.floor((high - low + 1) / 4);
-    for (let k = early; k <= high; k++) look(k, start, duration);
+    look(early, high, start, duration);
     if (worst > limit) return Math.max(part(), BEYOND);
     const error = Math.min(part(), 1);
-    for (let k = low; k < early; k++) look(k, start, duration);
+    look(low, early - 1, start, duration);
     if (worst > limit) return Math.max(part(), BEYOND);
     good.set(to);
     goodWorst = worst;
