@@ -22,7 +22,7 @@ export async function writeGlb(recipe) {
   const document = new Document();
   document.getRoot().getAsset().generator = "tossbake assets/build-props.js";
   const buffer = document.createBuffer();
-  const prop = document.createNode(recipe.name);
+  const prop = document.createNode(`${recipe.name}_model`);
   document.getRoot().setDefaultScene(document.createScene(recipe.name).addChild(prop));
   const materials = new Map();
   for (const part of recipe.parts) {
