@@ -1,7 +1,7 @@
 /** Samples within a segment that its end is fitted to. */
-export const FITTED = 7;
+export const FITTED = 5;
 /** Weighted solutions a fit. */
-const ROUNDS = 3;
+const ROUNDS = 2;
 /** A sample never weighs less than this part of the heaviest: where the greatest error is may change from fit to fit. */
 const LEAST_WEIGHT = 0.01;
 /** Numbers a row: three components of an error, what the first two and the third move by with the end's. */

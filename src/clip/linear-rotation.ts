@@ -128,8 +128,10 @@ export function linearRotationKeys(
   played.push(...first);
   const taken = (): void => {
     first.set(good.played);
-    stored.push(...good.stored);
-    played.push(...good.played);
+    for (let i = 0; i < 4; i++) {
+      stored.push(good.stored[i]);
+      played.push(good.played[i]);
+    }
     surcharges.push(good.surcharge);
   };
   const indices = offCurve

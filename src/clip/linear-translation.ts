@@ -34,6 +34,9 @@ export function linearTranslationKeys(
   let worst = 0;
   let moved = 0;
   let goodWorst = 0;
+  // Of the segments tried, which mostly start where the one before did: where that is, and the first time compared after it.
+  let begun = -1;
+  let first = 0;
 
   /** What is left where the rotation alone moves points by `by`, m. */
   const left = (by: number): number => Math.max(1e-9, limit - by);
@@ -86,7 +89,11 @@ export function linearTranslationKeys(
   const misfit = (a: number, b: number): number => {
     const start = time(a);
     const duration = time(b) - start;
-    const low = firstAfter(path, start);
+    if (a !== begun) {
+      begun = a;
+      first = firstAfter(path, start);
+    }
+    const low = first;
     const high = lastBefore(path, time(b));
     path.wantedInto(b, target);
     for (let i = 0; i < 3; i++) to[i] = target[i];
@@ -124,7 +131,7 @@ export function linearTranslationKeys(
   values.push(from[0], from[1], from[2]);
   const indices = longestWithin(last, misfit, () => {
     from.set(good);
-    values.push(...good);
+    values.push(good[0], good[1], good[2]);
     error = Math.max(error, goodWorst);
   });
   return indices && { indices, interpolation: "LINEAR", values: Float32Array.from(values), error };
