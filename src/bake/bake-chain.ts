@@ -97,7 +97,7 @@ function located<T>(file: ThrowFile, path: readonly string[], answer: () => T): 
     return answer();
   } catch (error) {
     if (!(error instanceof RequestError)) throw error;
-    throw throwFileError(file, new RequestError([...path, ...error.path], error.fault, error.remedy));
+    throw throwFileError(file, error.under(...path));
   }
 }
 

@@ -175,8 +175,7 @@ function bakeThrow(
     return takes.length === 0 ? undefined : { entry, takes };
   } catch (error) {
     if (!(error instanceof RequestError)) throw error;
-    const path = error.path[0] === "bake" ? error.path : ["throws", entry.name, ...error.path];
-    throw throwFileError(file, new RequestError(path, error.fault, error.remedy));
+    throw throwFileError(file, error.path[0] === "bake" ? error : error.under("throws", entry.name));
   }
 }
 

@@ -41,7 +41,7 @@ export async function loadProps(
           ? new RequestError(["model"], `${error.model}: ${error.fault}`, error.hint)
           : error;
       if (!(fault instanceof RequestError)) throw fault;
-      throw throwFileError(file, new RequestError(["props", name, ...fault.path], fault.fault, fault.remedy));
+      throw throwFileError(file, fault.under("props", name));
     }
   }
   return loaded;

@@ -77,9 +77,7 @@ export async function throwWays(
 ): Promise<TakeWays[]> {
   const [{ entry, numbers }] = selectTakes(selectThrows(file, [name]), takes);
   const locate = (error: unknown) =>
-    error instanceof RequestError
-      ? throwFileError(file, new RequestError(["throws", name, ...error.path], error.fault, error.remedy))
-      : error;
+    error instanceof RequestError ? throwFileError(file, error.under("throws", name)) : error;
   if (entry.arrive.facing === undefined)
     throw locate(
       new RequestError(

@@ -260,8 +260,7 @@ function within<T>(path: readonly (string | number)[], answer: () => T): T {
   try {
     return answer();
   } catch (error) {
-    if (error instanceof RequestError)
-      throw new RequestError([...path, ...error.path], error.fault, error.remedy);
+    if (error instanceof RequestError) throw error.under(...path);
     throw error;
   }
 }

@@ -15,4 +15,9 @@ export class RequestError extends Error {
   ) {
     super(`${path.join(".")}: ${fault}; ${remedy}`);
   }
+
+  /** The same, told by somebody who knows more of the way to the key. */
+  under(...keys: readonly (string | number)[]): RequestError {
+    return new RequestError([...keys, ...this.path], this.fault, this.remedy);
+  }
 }
