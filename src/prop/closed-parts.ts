@@ -1,4 +1,5 @@
 import { isClosed, type Part, split } from "./split.js";
+import { triangleArea } from "./vertex.js";
 import { pick, type Triangles, weld } from "./weld.js";
 
 /**
@@ -46,18 +47,19 @@ function withoutSlivers(mesh: Triangles): Triangles {
 }
 
 function isSliver(positions: Float64Array, triangles: Uint32Array, t: number): boolean {
-  const a = 3 * triangles[3 * t];
-  const b = 3 * triangles[3 * t + 1];
-  const c = 3 * triangles[3 * t + 2];
-  const ux = positions[b] - positions[a];
-  const uy = positions[b + 1] - positions[a + 1];
-  const uz = positions[b + 2] - positions[a + 2];
-  const vx = positions[c] - positions[a];
-  const vy = positions[c + 1] - positions[a + 1];
-  const vz = positions[c + 2] - positions[a + 2];
-  const nx = uy * vz - uz * vy;
-  const ny = uz * vx - ux * vz;
-  const nz = ux * vy - uy * vx;
-  const longer = Math.max(ux * ux + uy * uy + uz * uz, vx * vx + vy * vy + vz * vz);
-  return nx * nx + ny * ny + nz * nz <= SLIVER * SLIVER * longer * longer;
+  const longer = Math.max(
+    squaredSide(positions, triangles, 3 * t, 1),
+    squaredSide(positions, triangles, 3 * t, 2),
+  );
+  return 2 * triangleArea(positions, triangles, t) <= SLIVER * longer;
+}
+
+/** From a triangle's first corner, at `first`, to the one `next` after it, squared. */
+function squaredSide(positions: Float64Array, triangles: Uint32Array, first: number, next: number): number {
+  const a = 3 * triangles[first];
+  const b = 3 * triangles[first + next];
+  const x = positions[b] - positions[a];
+  const y = positions[b + 1] - positions[a + 1];
+  const z = positions[b + 2] - positions[a + 2];
+  return x * x + y * y + z * z;
 }
