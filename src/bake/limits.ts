@@ -95,7 +95,8 @@ const greatestSpeed = ({ flight }: FlyingBody): number =>
   Math.max(length(flight.velocity(0)), length(flight.velocity(flight.duration)));
 
 /** Turned about glTF's +Y through its own middle. */
-function worldBox({ box, turn }: Limits["clear"][number], host: Conversion): Box {
+/** World frame. */
+export function worldBox({ box, turn }: Limits["clear"][number], host: Conversion): Box {
   const [a, b] = box.map((corner) => host.vector(corner));
   const across = scale(subtract(b, a), 0.5);
   return {
