@@ -1,0 +1,34 @@
+/** What the stage needs to know of a throw and its prop; the page's data has it and more. */
+
+import type { TakeMotion } from "../../../bake/take-motion.js";
+import type { Quat } from "../../../math/quat.js";
+import type { Vec3 } from "../../../math/vec3.js";
+import type { Prop } from "../../../prop/prop.js";
+
+/** Metres in the model's scene frame, after `scale`. */
+export interface StageProp {
+  name: string;
+  centerOfMass: Vec3;
+  /** `principal.axes`: turns x, y, z onto long, middle, short. */
+  axes: Quat;
+  /** Distance of the furthest point from the centre of mass. */
+  reach: number;
+  /** Edges of the bounding box, for a prop that comes without a mesh. */
+  size: Vec3;
+  /** The file's unit in metres: the throw file's factor on the model. */
+  scale: number;
+  /** Named points that have a path of their own. */
+  points: Readonly<Record<string, Vec3>>;
+  /** Where the prop is a node of its model. */
+  node?: Prop["node"];
+}
+
+export interface StageTake {
+  motion: TakeMotion;
+  /** Name of the baked file that has the clip `motion.name`. */
+  file: string;
+}
+
+export interface StageThrow {
+  takes: readonly StageTake[];
+}
