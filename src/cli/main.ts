@@ -8,6 +8,7 @@ import { VERSION } from "../record/version.js";
 import { ThrowFileError } from "../throwfile/errors.js";
 import { bakeCommand } from "./bake.js";
 import { ExitCode } from "./exit-code.js";
+import { newCommand } from "./new.js";
 import { schemaCommand } from "./schema.js";
 import { verifyCommand } from "./verify.js";
 import { waysCommand } from "./ways.js";
@@ -29,6 +30,7 @@ export async function main(args: readonly string[]): Promise<number> {
     .showHelpAfterError("(tossbake --help lists the commands)")
     .exitOverride();
   const commands = [
+    newCommand(),
     weighCommand(),
     waysCommand(answer),
     bakeCommand(answer),
