@@ -7,6 +7,7 @@ import { MachineError } from "../node/machine-error.js";
 import { VERSION } from "../record/version.js";
 import { ThrowFileError } from "../throwfile/errors.js";
 import { bakeCommand } from "./bake.js";
+import { csvCommand } from "./csv.js";
 import { ExitCode } from "./exit-code.js";
 import { newCommand } from "./new.js";
 import { schemaCommand } from "./schema.js";
@@ -35,6 +36,7 @@ export async function main(args: readonly string[]): Promise<number> {
     waysCommand(answer),
     bakeCommand(answer),
     verifyCommand(answer),
+    csvCommand(answer),
     schemaCommand(),
   ];
   for (const command of commands) program.addCommand(command.copyInheritedSettings(program));

@@ -1,5 +1,5 @@
 import { basename, extname } from "node:path";
-import { Command, InvalidArgumentError } from "commander";
+import { Command } from "commander";
 import { type LoadedProp, loadProps } from "../bake/props.js";
 import { RequestError } from "../math/request-error.js";
 import { length, type Vec3 } from "../math/vec3.js";
@@ -10,6 +10,7 @@ import { nearestModelAxis } from "../prop/model-axis.js";
 import { weigh } from "../prop/prop.js";
 import { formatRecord } from "../record/format.js";
 import { propRecord } from "../record/record-of.js";
+import { positiveNumber } from "./positive-number.js";
 
 export const weighCommand = () =>
   new Command("weigh")
@@ -17,7 +18,7 @@ export const weighCommand = () =>
       "mass, centre of mass, inertia and principal axes of each prop, and what a throw about each axis does",
     )
     .argument("<model|throwfile>", "a .glb or .gltf file, or a throw file: all its props")
-    .option("--density <kg/m3>", "of a bare model (default 1000, water)", positiveNumber)
+    .option("--density <kg/m3>", "of a bare model (default 1000, water)", positiveNumber("kg/m³"))
     .option("--json", "print everything as JSON")
     .addHelpText(
       "after",
@@ -39,13 +40,6 @@ export const weighCommand = () =>
           : `${Array.from(props.values(), describe).join("\n\n")}\n`,
       );
     });
-
-function positiveNumber(text: string): number {
-  const value = Number(text);
-  if (!(value > 0 && value < Number.POSITIVE_INFINITY))
-    throw new InvalidArgumentError("It is a number above 0, in kg/m³.");
-  return value;
-}
 
 const isModel = (path: string) => [".glb", ".gltf"].includes(extname(path).toLowerCase());
 
