@@ -6,6 +6,14 @@ export type { ChainPart } from "./bake/chain.js";
 export type { MotionState } from "./bake/motion.js";
 export type { ModelSource } from "./bake/props.js";
 export { type ReducedClip, type ReduceOptions, reduceRigidClips } from "./bake/reduce-rigid-clips.js";
+export {
+  chainMotion,
+  type FlownPart,
+  type Motion,
+  motionOf,
+  type TakeMotion,
+  takeMotion,
+} from "./bake/take-motion.js";
 export { type ListedWay, type TakeWays, throwWays } from "./bake/ways.js";
 export type { WrittenSpin } from "./bake/written-spin.js";
 export { type ClipStyle, clipTrack } from "./clip/clip-track.js";
@@ -43,6 +51,7 @@ export { type Shape, shapeModel } from "./prop/shape.js";
 export type { ClipRecord, PartRecord, PropRecord, TakesRecord } from "./record/clip-record.js";
 export { formatRecord } from "./record/format.js";
 export { recordOf } from "./record/record-of.js";
+export { type TakeTableOptions, takeTable } from "./record/take-table.js";
 export { VERSION } from "./record/version.js";
 export { ThrowFileError } from "./throwfile/errors.js";
 export { parseThrowFile } from "./throwfile/parse.js";
