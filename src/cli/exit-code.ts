@@ -5,7 +5,7 @@ export const ExitCode = {
   checkFailed: 1,
   /** Usage, throw file or model. */
   wrongRequest: 2,
-  /** A folder that cannot be written, a full disk. */
+  /** No fault of the request: a folder that cannot be written, a full disk, or a fault of this program's own. */
   machine: 3,
   interrupted: 130,
 } as const;

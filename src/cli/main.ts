@@ -9,6 +9,7 @@ import { ThrowFileError } from "../throwfile/errors.js";
 import { bakeCommand } from "./bake.js";
 import { csvCommand } from "./csv.js";
 import { ExitCode } from "./exit-code.js";
+import { describeCommands, inOrder } from "./help.js";
 import { newCommand } from "./new.js";
 import { schemaCommand } from "./schema.js";
 import { verifyCommand } from "./verify.js";
@@ -25,8 +26,10 @@ export async function main(args: readonly string[]): Promise<number> {
     .description(
       "Turns a written description of a throw into glTF animation clips that move as the real prop would.",
     )
+    .usage("COMMAND …")
     .version(VERSION, "--version", "print the version")
-    .helpOption("--help", "say how a command is used")
+    .helpOption("--help", "say how tossbake, or a command, is used")
+    .configureHelp({ subcommandTerm: (command) => command.name() })
     .helpCommand(false)
     .showHelpAfterError("(tossbake --help lists the commands)")
     .exitOverride();
@@ -39,7 +42,8 @@ export async function main(args: readonly string[]): Promise<number> {
     csvCommand(answer),
     schemaCommand(),
   ];
-  for (const command of commands) program.addCommand(command.copyInheritedSettings(program));
+  for (const command of inOrder(commands)) program.addCommand(command.copyInheritedSettings(program));
+  describeCommands(program);
   try {
     await program.parseAsync(args, { from: "user" });
     return code;
@@ -48,16 +52,17 @@ export async function main(args: readonly string[]): Promise<number> {
   }
 }
 
-/** Prints what went wrong in one message and says whose fault it is; anything unforeseen is ours and keeps its stack. */
+/** Prints what went wrong in one message and says whose fault it is. */
 function explain(error: unknown): number {
   if (error instanceof CommanderError) return error.exitCode === 0 ? ExitCode.done : ExitCode.wrongRequest;
   if (error instanceof ThrowFileError || error instanceof ModelError || error instanceof RequestError) {
     process.stderr.write(`${error.message}\n`);
     return ExitCode.wrongRequest;
   }
-  if (error instanceof MachineError) {
-    process.stderr.write(`${error.message}\n`);
-    return ExitCode.machine;
-  }
-  throw error;
+  process.stderr.write(error instanceof MachineError ? `${error.message}\n` : ownFault(error));
+  return ExitCode.machine;
 }
+
+/** Anything unforeseen. It must not look like drift or like a wrong request, and whoever mends it needs the stack. */
+export const ownFault = (error: unknown): string =>
+  `This is a fault of tossbake ${VERSION} itself, not of what was asked for. Please report it with your command line and these lines:\n${error instanceof Error ? error.stack : String(error)}\n`;
