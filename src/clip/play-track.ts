@@ -16,22 +16,32 @@ export interface PlayedPose {
  * The values of both channels at time `t` in s, as a player of the file has them: glTF 2.0 specification, Appendix C
  * (Interpolation Modes); before the first and after the last key they stand still.
  */
-export function playTrack(track: Track, t: number): PlayedPose {
-  const { translation, rotation } = track;
+export function playTrack({ translation, rotation }: Track, t: number): PlayedPose {
   return {
-    translation:
-      translation.times.length > 0 ? (components(translation, 3, t) as unknown as Vec3) : [0, 0, 0],
-    rotation:
-      rotation.interpolation === "LINEAR"
-        ? slerpRotation(rotation, t)
-        : normalize(components(rotation, 4, t) as unknown as Quat),
+    translation: translation.times.length > 0 ? playTranslation(translation, t) : [0, 0, 0],
+    rotation: playRotation(rotation, t),
   };
 }
 
+/** Keys as any file may have them: STEP keeps a value until the next key. */
+export interface PlayedChannel extends Omit<Channel, "interpolation"> {
+  interpolation: Channel["interpolation"] | "STEP";
+}
+
+/** One channel alone, as above. */
+export const playTranslation = (channel: PlayedChannel, t: number): Vec3 =>
+  components(channel, 3, t) as unknown as Vec3;
+
+export const playRotation = (channel: PlayedChannel, t: number): Quat =>
+  channel.interpolation === "LINEAR"
+    ? slerpRotation(channel, t)
+    : normalize(components(channel, 4, t) as unknown as Quat);
+
 /** Each component for itself. */
-function components(channel: Channel, size: number, t: number): number[] {
+function components(channel: PlayedChannel, size: number, t: number): number[] {
   const { times, values, interpolation } = channel;
   const { key, next, share } = locate(times, t);
+  if (interpolation === "STEP") return Array.from(values.subarray(size * key, size * (key + 1)));
   if (interpolation === "LINEAR")
     return Array.from(
       { length: size },
@@ -51,7 +61,7 @@ function components(channel: Channel, size: number, t: number): number[] {
   );
 }
 
-function slerpRotation(channel: Channel, t: number): Quat {
+function slerpRotation(channel: PlayedChannel, t: number): Quat {
   const { key, next, share } = locate(channel.times, t);
   const a = rotationAt(channel, key);
   const b = rotationAt(channel, next);
@@ -67,7 +77,7 @@ function slerpRotation(channel: Channel, t: number): Quat {
 }
 
 /** A stored rotation; numbers of a file leave it a little off unit length, int16 ones 32767 times as long. */
-function rotationAt({ values }: Channel, key: number): Quat {
+function rotationAt({ values }: PlayedChannel, key: number): Quat {
   const i = 4 * key;
   return normalize([values[i], values[i + 1], values[i + 2], values[i + 3]]);
 }

@@ -86,7 +86,7 @@ const parentOf = ({ nodes }: GltfJson, index: number): number | undefined => {
 };
 
 /** A frame as an even scale, a rotation and a translation; undefined where it is none. */
-function evenFrame({ linear, origin }: Frame): MovedNode["parent"] | undefined {
+export function evenFrame({ linear, origin }: Frame): MovedNode["parent"] | undefined {
   const scale = cbrt(determinant(linear));
   const rotation = frameRotation(linear);
   if (!(scale > 0) || !rotation) return undefined;
