@@ -1,5 +1,6 @@
 /** The two kinds of URI a model may carry: data: URIs, and files in its own folder or below (RFC 3986, RFC 2397). */
 
+import { base64 } from "../math/base64.js";
 import { ModelError } from "./model.js";
 
 export const isDataUri = (uri: string): boolean => /^data:/i.test(uri);
@@ -54,12 +55,7 @@ export function dataUriBytes(model: string, where: string, uri: string): Uint8Ar
 }
 
 /** The base64 data: URI of `bytes`. */
-export function bytesDataUri(bytes: Uint8Array): string {
-  let binary = "";
-  // In pieces: a call takes only so many arguments.
-  for (let i = 0; i < bytes.length; i += 0x2000)
-    binary += String.fromCharCode(...bytes.subarray(i, i + 0x2000));
-  return `data:application/octet-stream;base64,${btoa(binary)}`;
-}
+export const bytesDataUri = (bytes: Uint8Array): string =>
+  `data:application/octet-stream;base64,${base64(bytes)}`;
 
 const shown = (uri: string): string => (uri.length > 60 ? `${uri.slice(0, 60)}…` : uri);

@@ -21,7 +21,7 @@ export interface OpenedThrowFile {
 
 /** @throws ThrowFileError for what is written in it, RequestError for a file that cannot be read */
 export async function openThrowFile(path: string): Promise<OpenedThrowFile> {
-  const text = await readText(path);
+  const text = await readThrowFile(path);
   const inputs = new Set([resolve(path)]);
   return {
     text,
@@ -35,7 +35,8 @@ export async function openThrowFile(path: string): Promise<OpenedThrowFile> {
   };
 }
 
-async function readText(path: string): Promise<string> {
+/** @throws RequestError for a file that cannot be read or is no text */
+export async function readThrowFile(path: string): Promise<string> {
   const wrong = (fault: string) => new RequestError([path], fault, "name a throw file (YAML or JSON)");
   try {
     const status = await stat(path);

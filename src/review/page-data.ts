@@ -84,16 +84,23 @@ export const pageData = (file: ThrowFile, bake: Bake, record: TakesRecord): Page
   throws: pageThrows(file, bake, record).map((shown) => ({ ...shown, stamp: record.throwFile.sha256 })),
 });
 
+/** What is known of a throw file that cannot be read yet. */
+export const emptyPage = (title: string): PageData => ({
+  title,
+  version: VERSION,
+  frameRate: 30,
+  props: {},
+  throws: [],
+});
+
 /** What is known before anything is baked. */
 export function pageHead(file: ThrowFile): PageData {
-  const names = [...file.throws.values(), ...file.chains.values()];
+  const entries = [...file.throws.values(), ...file.chains.values()];
   return {
-    title: file.name.replace(/^.*[\\/]/, ""),
-    version: VERSION,
+    ...emptyPage(file.name.replace(/^.*[\\/]/, "")),
     frameRate: file.frameRate,
     ...(file.host && { host: file.host }),
-    props: {},
-    throws: names.map((entry) => ({
+    throws: entries.map((entry) => ({
       name: entry.name,
       isChain: "throws" in entry,
       takes: [],
