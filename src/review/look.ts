@@ -3,7 +3,7 @@
 export const FONT_FAMILY = "system-ui, 'Segoe UI', Roboto, 'Helvetica Neue', 'Noto Sans', Arial, sans-serif";
 
 /** Sizes of text by class, units of a sheet. */
-export const FONT_SIZE = { title: 20, heading: 14, label: 12, small: 10.5 } as const;
+export const FONT_SIZE = { title: 20, heading: 14, sentence: 15, label: 12, small: 10.5 } as const;
 
 /** On paper, and where the surroundings are dark. The two lie far enough apart in lightness to be told apart in greyscale. */
 type Tint = readonly [light: string, dark: string];
@@ -81,9 +81,11 @@ const STYLES = {
   lead: line(FAINT, 0.6),
   title: text(FONT_SIZE.title, INK, { "font-weight": 600 }),
   heading: text(FONT_SIZE.heading, INK, { "font-weight": 600 }),
+  sentence: text(FONT_SIZE.sentence, INK),
   label: text(FONT_SIZE.label, INK),
   faint: text(FONT_SIZE.label, FAINT),
   small: text(FONT_SIZE.small, FAINT),
+  number: text(FONT_SIZE.small, INK, { "font-weight": 600 }),
   "long-text": text(FONT_SIZE.label, RUST),
   "middle-text": text(FONT_SIZE.label, SEA),
   "short-text": text(FONT_SIZE.label, MOSS),
