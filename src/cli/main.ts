@@ -8,6 +8,7 @@ import { VERSION } from "../record/version.js";
 import { ThrowFileError } from "../throwfile/errors.js";
 import { bakeCommand } from "./bake.js";
 import { csvCommand } from "./csv.js";
+import { completionCommand } from "./completion.js";
 import { ExitCode } from "./exit-code.js";
 import { describeCommands, inOrder } from "./help.js";
 import { newCommand } from "./new.js";
@@ -41,6 +42,7 @@ export async function main(args: readonly string[]): Promise<number> {
     verifyCommand(answer),
     csvCommand(answer),
     schemaCommand(),
+    completionCommand(),
   ];
   for (const command of inOrder(commands)) program.addCommand(command.copyInheritedSettings(program));
   describeCommands(program);
