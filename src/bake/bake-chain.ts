@@ -1,16 +1,18 @@
-/** The clips of a chain: solved, cut and named. */
+/** The clip of a chain's take: solved, cut and named. */
 
 import type { Track } from "../clip/track.js";
 import { RequestError } from "../math/request-error.js";
 import { rounded } from "../math/rounded.js";
+import type { Prop } from "../prop/prop.js";
 import { throwFileError } from "../throwfile/errors.js";
 import type { ChainEntry, ThrowEntry, ThrowFile } from "../throwfile/types.js";
-import type { Bake, BakedThrow } from "./bake.js";
-import { type ChainTake, chainMovement, cutChain, solveChain, UnheldChain } from "./chain.js";
+import { type ChainTake, cutChain, solveChain, UnheldChain } from "./chain.js";
 import { clipName, type FiledClip, fileName } from "./files.js";
 import { UnheldLimits } from "./limits.js";
 import { cuesOf } from "./motion.js";
-import { type Nearest, nearestFinder } from "./nearest.js";
+import { type Compared, compared, type Nearest } from "./nearest.js";
+import type { TakeNote } from "./notes.js";
+import type { ChosenChain } from "./plan.js";
 import type { LoadedProp } from "./props.js";
 import { solveTake, type Take } from "./take.js";
 
@@ -29,66 +31,34 @@ export interface BakedChain {
   takes: BakedChainTake[];
 }
 
-/** A chain with what it has of its first throw. */
-export type ChosenChain = ChainEntry & Pick<ThrowEntry, "prop" | "takes">;
-
-export function selectChains(file: ThrowFile, only?: readonly string[]): ChosenChain[] {
-  return [...file.chains.values()]
-    .filter(({ name }) => !only || only.includes(name))
-    .map((entry) => {
-      const { prop, takes } = file.throws.get(entry.throws[0]) as ThrowEntry;
-      return { ...entry, prop, takes };
-    });
-}
-
-/** A chain's takes; its throws' own are those of the throws baked, or else solved for it alone. */
-export function bakeChain(
+/**
+ * A chain's take; its throws' own takes are solved for it, as no take needs another.
+ *
+ * @throws ThrowFileError for a throw that has no flight there; UnheldChain or UnheldLimits for a take that is left out
+ */
+export function bakeChainTake(
   file: ThrowFile,
   entry: ChosenChain,
-  numbers: readonly number[],
-  { prop }: LoadedProp,
-  throws: readonly BakedThrow[],
-  unheld: Bake["unheld"],
-  onTake: () => void,
-): BakedChain | undefined {
-  const nearest = nearestFinder(prop.reach);
-  const takeOf = (member: string, number: number): Take => {
-    const baked = throws.find(({ entry: { name } }) => name === member);
-    const take = baked?.takes.find((other) => other.take.number === number)?.take;
-    const own = file.throws.get(member) as ThrowEntry;
-    const left = unheld.find(({ name }) => name === clipName(own, number));
-    if (left) throw new UnheldChain(`${left.name}, a part of it, is left out`);
-    return take ?? located(file, ["throws", member], () => solveTake(file, own, prop, number));
-  };
-  const takes = numbers.flatMap((number): BakedChainTake[] => {
-    const name = clipName(entry, number);
+  prop: Prop,
+  number: number,
+): Omit<BakedChainTake, "nearest"> {
+  const own = (member: string): Take => {
+    const thrown = file.throws.get(member) as ThrowEntry;
     try {
-      const take = located(file, [], () =>
-        solveChain(
-          file,
-          entry,
-          prop,
-          entry.throws.map((member) => takeOf(member, number)),
-        ),
-      );
-      return [
-        {
-          ...take,
-          name,
-          file: fileName(file, entry.name, name),
-          track: located(file, [], () => cutChain(file, entry, prop, take)),
-          nearest: nearest(number, chainMovement(take)),
-        },
-      ];
-    } catch (reason) {
-      if (!(reason instanceof UnheldChain || reason instanceof UnheldLimits)) throw reason;
-      unheld.push({ name, reason });
-      return [];
-    } finally {
-      onTake();
+      return located(file, ["throws", member], () => solveTake(file, thrown, prop, number));
+    } catch (error) {
+      if (!(error instanceof UnheldLimits)) throw error;
+      throw new UnheldChain(`${clipName(thrown, number)}, a part of it, is left out`);
     }
-  });
-  return takes.length === 0 ? undefined : { entry, prop: entry.prop, takes };
+  };
+  const take = located(file, [], () => solveChain(file, entry, prop, entry.throws.map(own)));
+  const name = clipName(entry, number);
+  return {
+    ...take,
+    name,
+    file: fileName(file, entry.name, name),
+    track: located(file, [], () => cutChain(file, entry, prop, take)),
+  };
 }
 
 /** Says where in the throw file a request stands that cannot be met. */
@@ -101,18 +71,35 @@ function located<T>(file: ThrowFile, path: readonly string[], answer: () => T): 
   }
 }
 
-/** What of a chain goes into files. */
-export const chainClips = ({ entry, prop, takes }: BakedChain, props: Bake["props"]): FiledClip[] =>
-  takes.map((baked) => ({
-    name: baked.name,
-    track: baked.track,
-    extras: rounded(chainExtras(entry, baked)),
-    throwName: entry.name,
-    prop: props.get(prop) as LoadedProp,
-  }));
+/** What it is compared by with other takes: the whole clip. */
+export const chainCompared = ({ duration, parts }: ChainTake): Compared =>
+  compared(
+    duration,
+    parts.map(({ start, take: { flight } }) => ({ start, flight })),
+  );
+
+export const chainNote = ({ name, number, parts }: Omit<BakedChainTake, "nearest">): TakeNote => ({
+  name,
+  take: number,
+  greatestRate: Math.max(...parts.map(({ take }) => take.flight.greatestRate)),
+  warnings: [],
+});
+
+/** What of a chain's take goes into a file. */
+export const chainClip = (
+  entry: ChainEntry,
+  baked: Omit<BakedChainTake, "nearest">,
+  prop: LoadedProp,
+): FiledClip => ({
+  name: baked.name,
+  track: baked.track,
+  extras: rounded(chainExtras(entry, baked)),
+  throwName: entry.name,
+  prop,
+});
 
 /** What an engine needs to take over from the clip, part by part; times are within the clip. */
-const chainExtras = (entry: ChainEntry, { number, parts }: BakedChainTake) => ({
+const chainExtras = (entry: ChainEntry, { number, parts }: ChainTake) => ({
   chain: entry.name,
   take: number,
   parts: parts.map(({ throw: name, take, start, end, release, arrival }) => ({

@@ -9,7 +9,6 @@ import type { Prop } from "../prop/prop.js";
 import type { ChainEntry, ThrowFile } from "../throwfile/types.js";
 import { hostFrame } from "./host.js";
 import { type MotionState, modelRotation, motionState } from "./motion.js";
-import type { Movement } from "./nearest.js";
 import { arrivalOf } from "./start.js";
 import { cutParts, retake, type Take } from "./take.js";
 
@@ -93,26 +92,6 @@ export const cutChain = (file: ThrowFile, { loop }: ChainEntry, prop: Prop, { pa
     parts.map(({ take }) => take),
     loop,
   );
-
-/** Where it is at any time, standing still between its throws. */
-export function chainMovement({ parts, duration }: ChainTake): Movement {
-  const at = (t: number) => {
-    const part = parts.find(({ end }) => t <= end) ?? parts[parts.length - 1];
-    const { flight } = part.take;
-    return { flight, time: Math.max(0, Math.min(flight.duration, t - part.start)) };
-  };
-  return {
-    duration,
-    centerOfMass(t) {
-      const { flight, time } = at(t);
-      return flight.centerOfMass(time);
-    },
-    orientationInto(t, out, offset) {
-      const { flight, time } = at(t);
-      flight.orientationInto(time, out, offset);
-    },
-  };
-}
 
 function checkLoop(file: ThrowFile, name: string, prop: Prop, thrown: readonly Take[]): void {
   const last = thrown[thrown.length - 1];

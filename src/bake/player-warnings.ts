@@ -1,40 +1,34 @@
 /** What some players of glTF do to a file, told before it is opened there: facts about importers, from their sources and issue threads. */
 
 import type { ThrowFile } from "../throwfile/types.js";
-import type { BakedThrow } from "./bake.js";
-import type { BakedChain } from "./bake-chain.js";
 import { addedNames } from "./graft.js";
+import { RESAMPLED_AT, type ThrowNotes } from "./notes.js";
 import type { LoadedProp } from "./props.js";
-
-/** Hz at which some importers sample every clip again; between two samples they take the short way round. */
-const RESAMPLED_AT = 30;
 
 /** One line each, for people. */
 export function playerWarnings(
-  { bake }: ThrowFile,
-  throws: readonly BakedThrow[],
-  chains: readonly BakedChain[],
+  { bake }: Pick<ThrowFile, "bake">,
+  notes: readonly ThrowNotes[],
   props: ReadonlyMap<string, LoadedProp>,
 ): string[] {
-  const used = new Set([...throws.map(({ entry }) => entry.prop), ...chains.map(({ prop }) => prop)]);
+  const made = notes.filter(({ takes }) => takes > 0);
+  const used = new Set(made.map(({ prop }) => prop));
   return [
-    ...throws.flatMap(spinWarning),
-    ...[...throws, ...chains].flatMap(({ entry: { name } }) => flagWarning(name)),
+    ...made.flatMap(spinWarning),
+    ...made.flatMap(({ name }) => flagWarning(name)),
     ...Array.from(props).flatMap(([name, loaded]) =>
       used.has(name) ? nodeWarnings(bake.layout, loaded) : [],
     ),
   ];
 }
 
-function spinWarning({ entry, takes }: BakedThrow): string[] {
-  const limit = Math.PI * RESAMPLED_AT;
-  const fast = takes.filter(({ take }) => take.flight.greatestRate > limit);
-  if (fast.length === 0) return [];
-  const most = Math.max(...fast.map(({ take }) => take.flight.greatestRate)) / (2 * Math.PI);
-  const which = fast.length === 1 ? fast[0].name : `${fast.length} takes of ${entry.name}`;
-  const [turn, show] = fast.length === 1 ? ["turns", "shows it"] : ["turn", "shows them"];
+function spinWarning({ name, fast: { count, most, name: first } }: ThrowNotes): string[] {
+  if (count === 0) return [];
+  const rate = (most / (2 * Math.PI)).toPrecision(3);
+  const which = count === 1 ? first : `${count} takes of ${name}`;
+  const [turn, show] = count === 1 ? ["turns", "shows it"] : ["turn", "shows them"];
   return [
-    `${which} ${turn} up to ${most.toPrecision(3)} times a second, over 180° in 1/${RESAMPLED_AT} s: an importer that samples clips again at ${RESAMPLED_AT} Hz ${show} turning otherwise`,
+    `${which} ${turn} up to ${rate} times a second, over 180° in 1/${RESAMPLED_AT} s: an importer that samples clips again at ${RESAMPLED_AT} Hz ${show} turning otherwise`,
   ];
 }
 

@@ -57,7 +57,11 @@ export interface TakeMotion {
   parts: FlownPart[];
 }
 
-export function takeMotion(file: ThrowFile, { entry }: BakedThrow, baked: BakedTake): TakeMotion {
+export function takeMotion(
+  file: ThrowFile,
+  { entry }: Pick<BakedThrow, "entry">,
+  baked: Omit<BakedTake, "nearest">,
+): TakeMotion {
   const { take, name } = baked;
   const { before, after } = take.drawn.hold;
   return {
@@ -70,7 +74,11 @@ export function takeMotion(file: ThrowFile, { entry }: BakedThrow, baked: BakedT
   };
 }
 
-export function chainMotion(file: ThrowFile, chain: BakedChain, baked: BakedChainTake): TakeMotion {
+export function chainMotion(
+  file: ThrowFile,
+  chain: Pick<BakedChain, "entry" | "prop">,
+  baked: Omit<BakedChainTake, "nearest">,
+): TakeMotion {
   return {
     name: baked.name,
     throw: chain.entry.name,

@@ -14,10 +14,11 @@ import { cross, distance, length, negate, scale, subtract, type Vec3 } from "../
 import type { Prop } from "../prop/prop.js";
 import { throwFileError } from "../throwfile/errors.js";
 import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
-import { type BakeOptions, selectTakes, selectThrows } from "./bake.js";
+import type { BakeOptions } from "./bake.js";
 import { type Conversion, hostFrame } from "./host.js";
 import { UnheldLimits } from "./limits.js";
 import { modelRotation } from "./motion.js";
+import { selectTakes, throwNamed } from "./plan.js";
 import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
 import { solveTake, type Take } from "./take.js";
 import { plainAxes, rounding, type WrittenSpin, written } from "./written-spin.js";
@@ -75,7 +76,7 @@ export async function throwWays(
   name: string,
   { takes, onTake }: Pick<BakeOptions, "takes" | "onTake"> = {},
 ): Promise<TakeWays[]> {
-  const [{ entry, numbers }] = selectTakes(selectThrows(file, [name]), takes);
+  const [{ entry, numbers }] = selectTakes([throwNamed(file, name)], takes);
   const locate = (error: unknown) =>
     error instanceof RequestError ? throwFileError(file, error.under("throws", name)) : error;
   if (entry.arrive.facing === undefined)

@@ -1,6 +1,6 @@
 import { Command } from "commander";
 import { bake } from "../bake/bake.js";
-import { type TakeWarning, takeWarnings } from "../bake/take-warnings.js";
+import type { TakeWarning } from "../bake/notes.js";
 import { RequestError } from "../math/request-error.js";
 import { mergeRecord } from "../node/kept-record.js";
 import { writeFiles } from "../node/output-folder.js";
@@ -62,7 +62,7 @@ export const bakeCommand = (answer: (code: number) => void) =>
         );
         await writeFiles(output, files);
       }
-      const notes = [...baked.warnings, ...takeWarnings(baked.throws).map(warningText)];
+      const notes = [...baked.warnings, ...baked.notes.flatMap(({ warnings }) => warnings).map(warningText)];
       if (options.json) {
         process.stdout.write(formatRecord(fresh));
         for (const note of notes) process.stderr.write(`${note}\n`);

@@ -1,4 +1,4 @@
-import { nearestFinder } from "../../src/bake/nearest.js";
+import { compared, nearestFinder } from "../../src/bake/nearest.js";
 import { loadProps } from "../../src/bake/props.js";
 import { solveTake } from "../../src/bake/take.js";
 import { drawDistance, type Features } from "../../src/draw/distance.js";
@@ -80,10 +80,12 @@ function closest(file: ThrowFile, entry: ThrowEntry, prop: Prop): Closest {
   const nearest = nearestFinder(prop.reach);
   const earlier: Features[] = [];
   const least = { draws: Number.POSITIVE_INFINITY, motion: Number.POSITIVE_INFINITY };
-  const found: Closest = { draws: [], motion: [] };
+  const closest: Closest = { draws: [], motion: [] };
   for (let number = 1; number <= Math.max(...COUNTS); number++) {
     const { candidate, flight } = solveTake(file, entry, prop, number);
-    least.motion = Math.min(least.motion, nearest(number, flight)?.distance ?? Number.POSITIVE_INFINITY);
+    const { course, samples } = compared(flight.duration, [{ start: 0, flight }]);
+    const found = nearest(number, course, samples);
+    least.motion = Math.min(least.motion, found?.distance ?? Number.POSITIVE_INFINITY);
     const { features } = drawCandidate(entry, {
       seed: file.seed,
       throwName: entry.name,
@@ -93,8 +95,8 @@ function closest(file: ThrowFile, entry: ThrowEntry, prop: Prop): Closest {
     for (const other of earlier) least.draws = Math.min(least.draws, drawDistance(features, other));
     earlier.push(features);
     if (!COUNTS.includes(number)) continue;
-    found.draws.push(least.draws);
-    found.motion.push(least.motion);
+    closest.draws.push(least.draws);
+    closest.motion.push(least.motion);
   }
-  return found;
+  return closest;
 }

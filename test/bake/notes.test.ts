@@ -1,6 +1,5 @@
 import { expect, test } from "vitest";
 import { bake } from "../../src/bake/bake.js";
-import { takeWarnings } from "../../src/bake/take-warnings.js";
 import { parseThrowFile } from "../../src/throwfile/parse.js";
 
 // What is expected is this program's own promise: every take differs, or the user is told.
@@ -10,7 +9,7 @@ const warningsOf = async (release: string) => {
     `props: { crate: { shape: { box: [0.1, 0.2, 0.3] } } }
 throws: { heave: { prop: crate, takes: 4, release: ${release}, arrive: { at: [0, 1, 2], after: 1 }, spin: { axis: short, turns: 2 } } }`,
   );
-  return takeWarnings((await bake(file, () => Promise.reject())).throws);
+  return (await bake(file, () => Promise.reject())).notes.flatMap(({ warnings }) => warnings);
 };
 
 test("takes that nothing tells apart are named", async () => {
