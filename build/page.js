@@ -24,6 +24,8 @@ export async function bundlePage(folder) {
     format: "esm",
     platform: "browser",
     target: "es2022",
+    // glTF-Transform names them in a class for Node alone
+    external: ["node:*"],
     charset: "utf8",
     legalComments: "inline",
     logLevel: "warning",

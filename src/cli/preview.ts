@@ -1,11 +1,18 @@
+import { stat } from "node:fs/promises";
+import { basename, dirname } from "node:path";
 import { Command, InvalidArgumentError } from "commander";
 import { openBrowser } from "../node/open-browser.js";
+import { writeFiles } from "../node/output-folder.js";
+import { pageOfFolder, pageOfThrowFile } from "../node/page-file.js";
 import { readPageParts } from "../node/page-parts.js";
+import { FolderPreview } from "../node/preview-folder.js";
 import { servePreview } from "../node/preview-server.js";
 import type { PreviewSource } from "../node/preview-source.js";
 import { ThrowFilePreview } from "../node/preview-throw-file.js";
+import { spareInputs } from "../node/spare-inputs.js";
 import { readThrowFile } from "../node/throw-file.js";
 import { ExitCode } from "./exit-code.js";
+import { progress } from "./progress.js";
 
 interface Options {
   port?: number;
@@ -29,9 +36,27 @@ export const previewCommand = (answer: (code: number) => void) =>
       "\nExamples:\n  tossbake preview quay.throws.yaml --open\n  tossbake preview out --page quay.html",
     )
     .action(async (path: string, options: Options) => {
-      await serve(path, options);
-      answer(ExitCode.interrupted);
+      if (options.page === undefined) {
+        await serve(path, options);
+        answer(ExitCode.interrupted);
+      } else if (await writePage(path, options.page)) answer(ExitCode.checkFailed);
     });
+
+/** @returns whether a take had to be left out */
+async function writePage(path: string, output: string): Promise<boolean> {
+  const parts = await readPageParts(PAGE);
+  const shown = progress();
+  const making = (await isFolder(path))
+    ? pageOfFolder(path, parts)
+    : pageOfThrowFile(path, parts, { onTake: shown.update });
+  const { html, inputs, unheld } = await making.finally(shown.end);
+  const [folder, name] = [dirname(output), basename(output)];
+  await spareInputs(folder, [name], inputs);
+  await writeFiles(folder, [{ name, content: html }]);
+  process.stdout.write(`${path} is shown by ${output}\n`);
+  for (const { name, reason } of unheld) process.stderr.write(`${name} is left out: ${reason}\n`);
+  return unheld.length > 0;
+}
 
 /** Until somebody interrupts it. */
 async function serve(path: string, { port = 0, open }: Options): Promise<void> {
@@ -54,10 +79,17 @@ async function serve(path: string, { port = 0, open }: Options): Promise<void> {
 }
 
 async function previewOf(path: string, fail: (error: unknown) => void): Promise<PreviewSource> {
+  if (await isFolder(path)) return FolderPreview.open(path);
   // a file that is not there is no file that is being worked on
   await readThrowFile(path);
   return new ThrowFilePreview(path, WORKER, ({ message }) => process.stderr.write(`${message}\n`), fail);
 }
+
+const isFolder = (path: string): Promise<boolean> =>
+  stat(path).then(
+    (status) => status.isDirectory(),
+    () => false,
+  );
 
 function portNumber(text: string): number {
   const port = Number(text);

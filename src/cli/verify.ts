@@ -2,12 +2,11 @@ import { basename, dirname, join, resolve } from "node:path";
 import { Command } from "commander";
 import { bake } from "../bake/bake.js";
 import { RequestError } from "../math/request-error.js";
-import { length } from "../math/vec3.js";
 import { checkFolder, compareFiles, contentsOf, readBakedFolder } from "../node/baked-folder.js";
 import { type OpenedThrowFile, openThrowFile } from "../node/throw-file.js";
 import type { TakesRecord } from "../record/clip-record.js";
 import { compareBakes, type Drift } from "../record/compare.js";
-import { gravity } from "../record/compare-host.js";
+import { fallsOtherwise } from "../record/compare-host.js";
 import { driftLines } from "../record/compare-report.js";
 import { formatRecord } from "../record/format.js";
 import { recordOf } from "../record/record-of.js";
@@ -115,10 +114,7 @@ async function compareFolders(path: string | undefined, folder: string, other: s
 
 /** A record does not name its host; one whose things do not fall along -Y has one, and its numbers would be told wrongly. */
 function checkAxes(folder: string, { clips }: TakesRecord) {
-  const clip = clips.find((clip) => {
-    const [x, y, z] = gravity(clip);
-    return length([x, Math.max(y, 0), z]) > 1e-6 * length([x, y, z]);
-  });
+  const clip = fallsOtherwise(clips);
   if (!clip) return;
   throw new RequestError(
     [join(folder, "takes.json")],

@@ -2,7 +2,6 @@
 
 import { dirname, join, resolve } from "node:path";
 import { bake } from "../bake/bake.js";
-import { fileName } from "../bake/files.js";
 import type { ModelSource } from "../bake/props.js";
 import { ModelError } from "../gltf/model.js";
 import { textSha256 } from "../math/hash.js";
@@ -16,10 +15,12 @@ import {
   pageHead,
   pageProps,
   pageThrows,
+  shownFile,
 } from "../review/page-data.js";
 import { ThrowFileError } from "../throwfile/errors.js";
 import type { ChainEntry, ThrowEntry, ThrowFile } from "../throwfile/types.js";
 import type { ModelFile } from "./model-files.js";
+import { plainGlb } from "./plain-glb.js";
 import { type OpenedThrowFile, openThrowFile } from "./throw-file.js";
 
 /** A throw file as it is now. */
@@ -74,14 +75,15 @@ export class PreviewBaker {
    */
   async bake(name: string, isStale: () => boolean): Promise<BakedPreview> {
     const { file, text } = this.opened as OpenedThrowFile;
-    const shownFile = forPage(file);
     const onTake = () => {
       if (isStale()) throw new Abandoned(name);
     };
-    const baked = await bake(shownFile, this.source, { only: [name], onTake });
-    const [shown] = pageThrows(shownFile, baked, await recordOf(shownFile, text, baked));
-    for (const { record } of shown.takes) record.file = fileName(file, record.throw, record.name);
-    return { props: pageProps(baked), shown, files: baked.files };
+    const asShown = shownFile(file);
+    const baked = await bake(asShown, this.source, { only: [name], onTake });
+    const [shown] = pageThrows(file, baked, await recordOf(asShown, text, baked));
+    const files: BakedPreview["files"] = [];
+    for (const each of baked.files) files.push({ name: each.name, content: await plainGlb(each.content) });
+    return { props: pageProps(baked), shown, files };
   }
 
   private readonly source: ModelSource = async (model) => {
@@ -110,12 +112,6 @@ export class PreviewBaker {
     return [...new Set([resolve(this.path), ...named, ...read])];
   }
 }
-
-/** Whatever files are asked for, the page has one .glb for each throw, with its mesh. */
-const forPage = (file: ThrowFile): ThrowFile => ({
-  ...file,
-  bake: { ...file.bake, files: "per-throw", container: "glb", mesh: true },
-});
 
 function stampOf(
   file: ThrowFile,

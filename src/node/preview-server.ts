@@ -36,9 +36,7 @@ export async function servePreview(
 ): Promise<PreviewServer> {
   const listening = new Set<ServerResponse>();
   const server = createServer((request, response) => {
-    answer(request, response).catch((error: Error) => {
-      response.destroy(error);
-    });
+    answer(request, response).catch((error: Error) => refuse(response, 500, error.message));
   });
   await listen(server, port);
   const { port: actual } = server.address() as AddressInfo;

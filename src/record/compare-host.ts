@@ -31,6 +31,13 @@ export function gravity({ release, arrival, flight, parts }: ClipRecord): Vec3 {
   return scale(subtract(to.velocity ?? ZERO, from.velocity ?? ZERO), 1 / time);
 }
 
+/** A take that does not fall along -Y, so that the numbers are those of a host; none: as far as can be told, they are glTF's. */
+export const fallsOtherwise = (clips: readonly ClipRecord[]): ClipRecord | undefined =>
+  clips.find((clip) => {
+    const [x, y, z] = gravity(clip);
+    return length([x, Math.max(y, 0), z]) > 1e-6 * length([x, y, z]);
+  });
+
 /** s of flight, without holds. */
 export const airtime = ({ flight, parts = [] }: ClipRecord): number =>
   flight?.time ?? parts.reduce((sum, { time }) => sum + time, 0);

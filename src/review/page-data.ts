@@ -1,7 +1,7 @@
 /** What the preview page is told of a bake: plain data, lengths in metres in glTF's world unless said otherwise. */
 
 import type { Bake } from "../bake/bake.js";
-import { clipName } from "../bake/files.js";
+import { clipName, fileName } from "../bake/files.js";
 import { chainMotion, type TakeMotion, takeMotion } from "../bake/take-motion.js";
 import type { Quat } from "../math/quat.js";
 import { rounded } from "../math/rounded.js";
@@ -77,7 +77,13 @@ export interface PageTake {
   clip: string;
 }
 
-/** Everything of a whole bake. */
+/** The throw file as it is baked for the page: one .glb for each throw, with its mesh, whatever files are asked for. */
+export const shownFile = (file: ThrowFile): ThrowFile => ({
+  ...file,
+  bake: { ...file.bake, files: "per-throw", container: "glb", mesh: true },
+});
+
+/** Everything of a whole bake, that of `file` or of its `shownFile`. */
 export const pageData = (file: ThrowFile, bake: Bake, record: TakesRecord): PageData => ({
   ...pageHead(file),
   props: pageProps(bake),
@@ -125,7 +131,10 @@ const pageProp = (prop: Prop): PageProp => ({
   warnings: [...prop.warnings],
 });
 
-/** The throws and chains that were baked, those of which every take was left out too, without their stamps. */
+/**
+ * The throws and chains that were baked, those of which every take was left out too, without their stamps; records say where the throw file has its
+ * clips.
+ */
 export function pageThrows(file: ThrowFile, bake: Bake, record: TakesRecord): PageThrow[] {
   const records = new Map(record.clips.map((clip) => [clip.name, clip]));
   const motions = motionsOf(file, bake);
@@ -133,8 +142,10 @@ export function pageThrows(file: ThrowFile, bake: Bake, record: TakesRecord): Pa
   return pageHead(file).throws.flatMap((shown) => {
     const { prop, clips } = expected(file, shown);
     const takes = clips.flatMap((clip): PageTake[] => {
-      const [motion, record] = [motions.get(clip), records.get(clip)];
-      return motion && record ? [{ motion, record: rounded(record), file: record.file, clip }] : [];
+      const [motion, found] = [motions.get(clip), records.get(clip)];
+      if (!motion || !found) return [];
+      const record = { ...rounded(found), file: fileName(file, found.throw, clip) };
+      return [{ motion, record, file: found.file, clip }];
     });
     const left = clips.flatMap((name) => {
       const reason = unheld.get(name);
