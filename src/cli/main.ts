@@ -7,11 +7,12 @@ import { MachineError } from "../node/machine-error.js";
 import { VERSION } from "../record/version.js";
 import { ThrowFileError } from "../throwfile/errors.js";
 import { bakeCommand } from "./bake.js";
-import { csvCommand } from "./csv.js";
 import { completionCommand } from "./completion.js";
+import { csvCommand } from "./csv.js";
 import { ExitCode } from "./exit-code.js";
 import { describeCommands, inOrder } from "./help.js";
 import { newCommand } from "./new.js";
+import { previewCommand } from "./preview.js";
 import { schemaCommand } from "./schema.js";
 import { verifyCommand } from "./verify.js";
 import { waysCommand } from "./ways.js";
@@ -39,6 +40,7 @@ export async function main(args: readonly string[]): Promise<number> {
     weighCommand(),
     waysCommand(answer),
     bakeCommand(answer),
+    previewCommand(answer),
     verifyCommand(answer),
     csvCommand(answer),
     schemaCommand(),
