@@ -16,7 +16,10 @@ export interface PlayedPose {
  * The values of both channels at time `t` in s, as a player of the file has them: glTF 2.0 specification, Appendix C
  * (Interpolation Modes); before the first and after the last key they stand still.
  */
-export function playTrack({ translation, rotation }: Track, t: number): PlayedPose {
+export function playTrack(
+  { translation, rotation }: Pick<Track, "translation" | "rotation">,
+  t: number,
+): PlayedPose {
   return {
     translation: translation.times.length > 0 ? playTranslation(translation, t) : [0, 0, 0],
     rotation: playRotation(rotation, t),

@@ -1,8 +1,20 @@
 /** The 3D scene of the preview page: takes played from their baked files, and what explains them. */
 
-import type { Quat } from "../../math/quat.js";
-import type { Vec3 } from "../../math/vec3.js";
-import type { StageProp, StageThrow } from "./stage/input.js";
+import { CameraRig } from "./stage/camera-rig.js";
+import type { Pose } from "./stage/clip-poses.js";
+import { Finder } from "./stage/finder.js";
+import { Fluency } from "./stage/fluency.js";
+import { type GestureTarget, listen } from "./stage/gestures.js";
+import { Grid } from "./stage/grid.js";
+import type { FileSource, StageProp, StageThrow } from "./stage/input.js";
+import { Labels } from "./stage/labels.js";
+import { type Palette, palette } from "./stage/palette.js";
+import { StageRenderer } from "./stage/renderer.js";
+import { Scrubbing } from "./stage/scrubbing.js";
+import { type Setting, settingOf } from "./stage/setting.js";
+import { ShownThrow } from "./stage/shown-throw.js";
+import { TakeScene } from "./stage/take-scene.js";
+import { thinnedSiblings, thinnedWords } from "./stage/thinned.js";
 
 export type { StageProp, StageTake, StageThrow } from "./stage/input.js";
 
@@ -20,70 +32,293 @@ export class Stage {
   onScrubEnd: () => void = () => {};
   /** Told when `thinned` has changed. */
   onThinned: () => void = () => {};
+
+  readonly #renderer: StageRenderer;
+  readonly #rig = new CameraRig();
+  readonly #labels = new Labels();
+  readonly #grid = new Grid(this.#labels);
+  readonly #scrubbing = new Scrubbing(this.#rig);
+  readonly #finder = new Finder();
+  readonly #fluency = new Fluency();
+  readonly #layers: Record<Layer, boolean>;
+  readonly #stopListening: () => void;
+  #colors: Palette;
+  #shown?: ShownThrow;
+  #scene?: TakeScene;
+  #setting?: Setting;
+  #selected: { take: number; second?: number } = { take: 0 };
+  #mostSiblings = Number.POSITIVE_INFINITY;
   #time = 0;
   #view: View = "side";
+  #thinned = "";
+  #asked = 0;
+  #wanted = 0;
+  #showing = 0;
 
   constructor(
     readonly canvas: HTMLCanvasElement,
     readonly options: StageOptions,
-  ) {}
+  ) {
+    this.#renderer = new StageRenderer(canvas);
+    this.#layers = {
+      siblings: true,
+      strobe: false,
+      paths: true,
+      arrows: false,
+      surroundings: true,
+      truth: false,
+    };
+    this.#renderer.behind.add(this.#grid.group);
+    this.#renderer.front.add(this.#finder.group);
+    this.#colors = palette(options.dark);
+    this.#paint();
+    this.#stopListening = listen(canvas, this.#gestures());
+    this.resize();
+  }
 
   /**
    * Shows a throw: the baked files its takes are in are loaded through `file` and played as any engine plays them. Old content goes only when the
    * new one is there; rejects with what is wrong in words, and then the old content stays.
    */
-  async show(
-    _data: StageThrow,
-    _prop: StageProp,
-    _file: (name: string) => Promise<ArrayBuffer>,
-  ): Promise<void> {}
+  async show(data: StageThrow, prop: StageProp, file: FileSource): Promise<void> {
+    const turn = ++this.#showing;
+    const shown = await ShownThrow.open(data, prop, file);
+    if (turn !== this.#showing) return shown.dispose();
+    const old = this.#shown;
+    this.#scene?.dispose();
+    this.#scene = undefined;
+    this.#shown = shown;
+    this.#mostSiblings = Number.POSITIVE_INFINITY;
+    await this.select(0);
+    old?.dispose();
+    void shown.readAll(() => turn === this.#showing && this.#rebuild()).catch(() => {});
+  }
 
   /** Indices into the throw's takes; the second is shown beside it in its own tint. */
-  select(_take: number, _second?: number): void {}
+  async select(take: number, second?: number): Promise<void> {
+    const shown = this.#shown;
+    if (!shown) return;
+    this.#selected = { take, second };
+    const takes = second === undefined ? [take] : [take, second];
+    for (const each of takes) if (!shown.isLoaded(each)) await shown.load(each);
+    if (shown !== this.#shown || this.#selected.take !== take || this.#selected.second !== second) return;
+    this.#rebuild();
+    shown.keepOnly(takes);
+  }
 
   set time(t: number) {
-    this.#time = t;
+    this.#time = Math.max(0, Math.min(this.duration, t));
+    this.#scene?.seek(this.#time);
+    this.#request();
   }
   /** s within the clip. */
   get time(): number {
     return this.#time;
   }
   get duration(): number {
-    return 0;
+    return this.#scene?.course.duration ?? 0;
+  }
+  /** s between two exposures of the strobe. */
+  get strobeStep(): number {
+    return this.#scene?.strobeStep ?? 0;
   }
 
   setView(view: View): void {
     this.#view = view;
+    this.resetView();
   }
   get view(): View {
     return this.#view;
   }
 
-  setLayer(_layer: Layer, _on: boolean): void {}
-  setDark(_dark: boolean): void {}
-  resize(): void {}
+  setLayer(layer: Layer, on: boolean): void {
+    this.#layers[layer] = on;
+    this.#scene?.setLayer(layer, on);
+    this.time = this.#time;
+    this.#tell();
+  }
+
+  setDark(dark: boolean): void {
+    this.#colors = palette(dark);
+    this.#paint();
+    this.#rebuild();
+  }
+
+  resize(): void {
+    const { clientWidth, clientHeight } = this.canvas;
+    this.#renderer.resize(clientWidth, clientHeight);
+    this.#rig.resize(clientWidth, clientHeight);
+    this.resetView();
+  }
 
   /** For keys: turns the camera of the free and following views (elsewhere it goes along the picture), in degrees to the right and up. */
-  turn(_right: number, _up: number): void {}
+  turn(right: number, up: number): void {
+    if (this.#rig.isFlat) this.#rig.pan(-right * 4, up * 4);
+    else this.#rig.turn((right * Math.PI) / 180, (up * Math.PI) / 180);
+    this.#request();
+  }
+
   /** For keys: greater than 1 comes nearer. */
-  zoom(_factor: number): void {}
+  zoom(factor: number): void {
+    this.#rig.zoom(factor);
+    this.#request();
+  }
+
   /** The view as `setView` first gave it. */
-  resetView(): void {}
+  resetView(): void {
+    if (this.#setting) this.#rig.frame(this.#view, this.#setting.framing);
+    this.#request();
+  }
 
   /** Read from the scene graph: place of the centre of mass, m, and what turns the model from as modelled. */
-  pose(): { centerOfMass: Vec3; rotation: Quat } {
-    return { centerOfMass: [0, 0, 0], rotation: [0, 0, 0, 1] };
+  pose(): Pose {
+    return this.#scene?.pose() ?? { centerOfMass: [0, 0, 0], rotation: [0, 0, 0, 1] };
   }
 
   /** Greatest distance of the prop's points between the true flight and the played clip, at `samples` even times; mm. */
-  differences(_samples: number): { times: number[]; millimetres: number[] } {
-    return { times: [], millimetres: [] };
+  differences(samples: number): { times: number[]; millimetres: number[] } {
+    if (!this.#scene || !this.#shown) return { times: [], millimetres: [] };
+    const { course } = this.#scene;
+    const { outer } = this.#shown.body;
+    const times = Array.from({ length: samples }, (_, i) => (course.duration * i) / Math.max(1, samples - 1));
+    return { times, millimetres: times.map((t) => course.difference(t, outer)) };
   }
 
-  /** What is left out to stay fluent, in words for the page, or "". */
+  /** What is left out to stay fluent, or cannot be shown, in words for the page, or "". */
   get thinned(): string {
-    return "";
+    return this.#thinned;
   }
 
-  dispose(): void {}
+  /** Where a moment's centre of mass is in the picture, px from its upper left corner. */
+  screenPlace(t: number): { x: number; y: number } {
+    return this.#scene ? this.#rig.project(this.#scene.place(t)) : { x: 0, y: 0 };
+  }
+
+  /** What the graphics memory holds. */
+  get memory(): { geometries: number; textures: number } {
+    return this.#renderer.memory;
+  }
+
+  dispose(): void {
+    this.#showing++;
+    cancelAnimationFrame(this.#asked);
+    this.#stopListening();
+    this.#scene?.dispose();
+    this.#scene = undefined;
+    this.#shown?.dispose();
+    this.#shown = undefined;
+    this.#grid.clear();
+    this.#finder.dispose();
+    this.#labels.dispose();
+    this.#renderer.dispose();
+  }
+
+  #paint(): void {
+    this.#renderer.ground = this.#colors.ground;
+    this.#labels.halo = this.#colors.ground;
+    this.#finder.color = this.#colors.path;
+  }
+
+  /** Makes the scene of the selected take anew. */
+  #rebuild(): void {
+    const shown = this.#shown;
+    const { take, second } = this.#selected;
+    const course = shown?.courses[take];
+    if (!shown || !course) return;
+    const old = this.#setting;
+    this.#setting = settingOf(course, shown.courses);
+    this.#scene?.dispose();
+    const siblings = thinnedSiblings(shown, [take, second], this.#mostSiblings);
+    const { room } = this.#setting;
+    this.#scene = new TakeScene({
+      shown,
+      take,
+      second,
+      colors: this.#colors,
+      labels: this.#labels,
+      room,
+      siblings,
+    });
+    this.#renderer.behind.add(this.#scene.behind);
+    this.#renderer.front.add(this.#scene.front);
+    for (const [layer, on] of Object.entries(this.#layers)) this.#scene.setLayer(layer as Layer, on);
+    if (JSON.stringify(old?.framing) !== JSON.stringify(this.#setting.framing)) this.resetView();
+    this.#labels.forget();
+    this.time = this.#time;
+    this.#tell();
+  }
+
+  #tell(): void {
+    const { take, second } = this.#selected;
+    const words = this.#shown
+      ? thinnedWords(this.#shown, [take, second], this.#mostSiblings, this.#layers)
+      : "";
+    if (words === this.#thinned) return;
+    this.#thinned = words;
+    this.onThinned();
+  }
+
+  #request(): void {
+    if (this.#asked) return;
+    this.#wanted = performance.now();
+    this.#asked = requestAnimationFrame(() => {
+      this.#asked = 0;
+      this.#draw();
+    });
+  }
+
+  #draw(): void {
+    const scene = this.#scene;
+    if (scene && this.#shown && this.#setting) {
+      const place = scene.place(this.#time);
+      this.#rig.follow(place);
+      this.#grid.fit(this.#rig, this.#setting.grid, this.#colors);
+      this.#finder.fit(this.#rig, place, this.#shown.prop.reach);
+      scene.fit(this.#rig);
+      this.#labels.fit(this.#rig);
+    }
+    this.#renderer.draw(this.#rig);
+    const tooSlow = this.#fluency.picture(performance.now() - this.#wanted);
+    if (tooSlow && this.#layers.siblings) this.#thin();
+  }
+
+  /** Half as many siblings. */
+  #thin(): void {
+    const { take, second } = this.#selected;
+    const now = thinnedSiblings(this.#shown!, [take, second], this.#mostSiblings).length;
+    if (now < 8) return;
+    this.#mostSiblings = Math.floor(now / 2);
+    this.#rebuild();
+  }
+
+  #gestures(): GestureTarget {
+    const scrub = (t: number) => {
+      this.time = t;
+      this.onScrub(this.#time);
+    };
+    const scene = () => this.#scene!;
+    return {
+      holds: (x, y, coarse) =>
+        this.#scene !== undefined && this.#scrubbing.holds(x, y, coarse, scene(), this.#shown!),
+      grab: (x, y) => scrub(this.#scrubbing.grab(x, y, scene(), this.#shown!, this.#time)),
+      drag: (x, y) => this.#scene && scrub(this.#scrubbing.drag(x, y, scene(), this.#time)),
+      drop: () => {
+        this.#scrubbing.drop();
+        this.onScrubEnd();
+      },
+      turn: (right, down) => {
+        if (this.#rig.isFlat) this.#rig.pan(right, down);
+        else this.#rig.turn(-right * 0.008, down * 0.008);
+        this.#request();
+      },
+      pan: (right, down) => {
+        this.#rig.pan(right, down);
+        this.#request();
+      },
+      zoom: (factor, x, y) => {
+        this.#rig.zoom(factor, x, y);
+        this.#request();
+      },
+    };
+  }
 }

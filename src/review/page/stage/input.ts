@@ -3,7 +3,6 @@
 import type { TakeMotion } from "../../../bake/take-motion.js";
 import type { Quat } from "../../../math/quat.js";
 import type { Vec3 } from "../../../math/vec3.js";
-import type { Prop } from "../../../prop/prop.js";
 
 /** Metres in the model's scene frame, after `scale`. */
 export interface StageProp {
@@ -14,21 +13,22 @@ export interface StageProp {
   /** Distance of the furthest point from the centre of mass. */
   reach: number;
   /** Edges of the bounding box, for a prop that comes without a mesh. */
-  size: Vec3;
-  /** The file's unit in metres: the throw file's factor on the model. */
-  scale: number;
+  size?: Vec3;
   /** Named points that have a path of their own. */
   points: Readonly<Record<string, Vec3>>;
-  /** Where the prop is a node of its model. */
-  node?: Prop["node"];
 }
 
 export interface StageTake {
   motion: TakeMotion;
-  /** Name of the baked file that has the clip `motion.name`. */
+  /** Name of the baked file. */
   file: string;
+  /** Name of the animation in it. */
+  clip: string;
 }
 
 export interface StageThrow {
   takes: readonly StageTake[];
 }
+
+/** Hands over a baked file, or one that a .gltf among them names. */
+export type FileSource = (name: string) => Promise<ArrayBuffer>;
