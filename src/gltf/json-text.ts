@@ -1,15 +1,26 @@
 import { createScanner } from "jsonc-parser";
-import { CLOSE_BRACE, CLOSE_BRACKET, COLON, END, OPEN_BRACE, OPEN_BRACKET, STRING } from "./json-tokens.js";
+import {
+  CLOSE_BRACE,
+  CLOSE_BRACKET,
+  COLON,
+  COMMA,
+  END,
+  OPEN_BRACE,
+  OPEN_BRACKET,
+  STRING,
+} from "./json-tokens.js";
 import { ModelError } from "./model.js";
 
 /** Nesting beyond this is refused: no model needs it, and whatever recurses over the value later has a bounded stack. */
 const GREATEST_NESTING = 200;
 /** 256 MB of JSON: a large model with its data inside. */
 const GREATEST_LENGTH = 1 << 28;
+/** Members and items in all: about those of seven thousand nodes, each with a mesh and accessors of its own. */
+const GREATEST_VALUES = 500_000;
 
 /**
- * Parses the JSON of a model, UTF-8, into an object. Throws ModelError for what is not JSON, is nested too deeply, or
- * names a key twice in one object (glTF 2.0, 2.7.1: names must be unique; which of them counts differs between readers).
+ * Parses the JSON of a model, UTF-8, into an object. Throws ModelError for what is not JSON, is nested too deeply, holds too
+ * many values, or names a key twice in one object (glTF 2.0, 2.7.1: names must be unique; which of them counts differs between readers).
  */
 export function parseJson(
   model: string,
@@ -24,7 +35,7 @@ export function parseJson(
   } catch (cause) {
     throw new ModelError(model, "its JSON is not UTF-8", "is it a .glb or .gltf file?", { cause });
   }
-  checkNesting(model, text);
+  checkTokens(model, text);
   try {
     value = JSON.parse(text);
   } catch (cause) {
@@ -41,10 +52,11 @@ export function parseJson(
 }
 
 /** Goes through the text once, without recursion. Text that is not JSON is left for the parser to complain of. */
-function checkNesting(model: string, text: string): void {
+function checkTokens(model: string, text: string): void {
   const scanner = createScanner(text, true);
   const keys: (Set<string> | undefined)[] = []; // of the objects we are in; undefined for arrays
   let word = "";
+  let values = 0;
   for (let token = scanner.scan(); token !== END; token = scanner.scan()) {
     if (token === OPEN_BRACE) keys.push(new Set());
     else if (token === OPEN_BRACKET) keys.push(undefined);
@@ -59,12 +71,18 @@ function checkNesting(model: string, text: string): void {
           "keys must be unique",
         );
       seen?.add(word);
-    }
+    } else if (token === COMMA) values++;
     if (keys.length > GREATEST_NESTING)
       throw new ModelError(
         model,
         `its JSON is nested more than ${GREATEST_NESTING} deep (line ${scanner.getTokenStartLine() + 1})`,
         "no glTF file needs that",
+      );
+    if (values > GREATEST_VALUES)
+      throw new ModelError(
+        model,
+        `its JSON holds more than ${GREATEST_VALUES} values (line ${scanner.getTokenStartLine() + 1})`,
+        "no prop needs that: use a simpler model",
       );
   }
 }

@@ -73,6 +73,11 @@ describe("the container", () => {
       glbOf(`{"asset":{"extras":${"[".repeat(2e5)}${"]".repeat(2e5)}}}`),
       "nested more than 200 deep",
     ],
+    [
+      "a million nodes of two bytes",
+      glbOf(`{"asset":{"version":"2.0"},"nodes":[{}${",{}".repeat(1e6)}]}`),
+      "its JSON holds more than 500000 values",
+    ],
     ["no BIN chunk", glbOf({ asset, buffers: [{ byteLength: 4 }] }), "the file has no BIN chunk for it"],
     [
       "a BIN chunk too short",
