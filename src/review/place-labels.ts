@@ -25,8 +25,8 @@ export interface PlacedLabel extends Label {
   at: number;
   baseline: number;
   anchor: "start" | "middle" | "end";
-  /** It stands so far off that a line has to lead to it. */
-  isLed: boolean;
+  /** It stands so far off that a line has to lead to it: where the line ends. */
+  lead?: readonly [number, number];
 }
 
 export interface TextBox {
@@ -63,9 +63,23 @@ export function placeLabels(
     boxes.push(found.box);
     const { box, isLed, anchor } = found;
     const at = anchor === "start" ? box.left : anchor === "end" ? box.right : (box.left + box.right) / 2;
-    return [{ ...label, at, anchor, baseline: box.bottom - 0.28 * label.size, isLed }];
+    return [
+      {
+        ...label,
+        at,
+        anchor,
+        baseline: box.bottom - 0.28 * label.size,
+        ...(isLed && { lead: nearest(box, label) }),
+      },
+    ];
   });
 }
+
+/** Of a box's edge to what it belongs to. */
+const nearest = ({ left, right, top, bottom }: TextBox, { x, y }: Label): readonly [number, number] => [
+  Math.max(left, Math.min(right, x)),
+  Math.max(top, Math.min(bottom, y)),
+];
 
 interface Candidate extends Pick<PlacedLabel, "anchor"> {
   box: TextBox;
@@ -81,7 +95,7 @@ function best(
   let least = Number.POSITIVE_INFINITY;
   let chosen: Candidate | undefined;
   const order = [...(label.prefer ?? []), ...DIRECTIONS.filter((d) => !label.prefer?.includes(d))];
-  const steps = label.isNeeded ? 40 : 3;
+  const steps = label.isNeeded ? 40 : 4;
   for (let step = 0; step < steps; step++) {
     for (const [rank, direction] of order.entries()) {
       const far = 5 * step;

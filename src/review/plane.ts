@@ -23,13 +23,21 @@ export const around = (bounds: Bounds, [x, y]: Point): Bounds => ({
   high: Math.max(bounds.high, y),
 });
 
-/** The bounds of both, the second's reaching out by no more than `most` to each side. */
-export const grown = (bounds: Bounds, other: Bounds, most: number): Bounds => ({
-  left: Math.min(bounds.left, Math.max(other.left, bounds.left - most)),
-  right: Math.max(bounds.right, Math.min(other.right, bounds.right + most)),
-  low: Math.min(bounds.low, Math.max(other.low, bounds.low - most)),
-  high: Math.max(bounds.high, Math.min(other.high, bounds.high + most)),
-});
+/** A thing that a picture may be enlarged for; where it has no end, its bounds have none. */
+export interface Thing {
+  bounds: Bounds;
+  /** Drawn whole or not at all. */
+  isWhole: boolean;
+}
+
+/** The bounds of both, the thing's reaching out by no more than `most` to each side. */
+export function grown(bounds: Bounds, { bounds: other, isWhole }: Thing, most: number): Bounds {
+  const { left, right, low, high } = bounds;
+  const out = [left - other.left, other.right - right, low - other.low, other.high - high];
+  if (isWhole && out.some((way) => way > most)) return bounds;
+  const [l, r, d, u] = out.map((way) => Math.max(0, Math.min(most, way)));
+  return { left: left - l, right: right + r, low: low - d, high: high + u };
+}
 
 /** Counter-clockwise (Andrew, Information Processing Letters 9, 216, 1979: the monotone chain). */
 export function convexHull2d(points: readonly Point[]): Point[] {

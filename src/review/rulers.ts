@@ -13,6 +13,8 @@ export interface Rulers {
   body: string[];
   /** Of all its texts. */
   boxes: TextBox[];
+  /** x y x y… px, of its lines. */
+  lines: number[][];
   /** Where they end, px. */
   bottom: number;
 }
@@ -20,8 +22,9 @@ export interface Rulers {
 const STEPS = [
   0.001, 0.002, 0.005, 0.01, 0.02, 0.05, 0.1, 0.2, 0.5, 1, 2, 5, 10, 20, 50, 100, 200, 500, 1000,
 ];
-/** Least room between two figures, px. */
+/** Least room between two figures beside and above each other, px. */
 const ROOM = 46;
+const ROOM_UP = 24;
 const TICK = 5;
 /** From the picture to a ruler, px. */
 const GAP = 10;
@@ -38,7 +41,8 @@ export interface RuledPicture {
 }
 
 export function rulers({ bounds, toPage, scale, zero, view }: RuledPicture): Rulers {
-  const step = STEPS.find((size) => size * scale >= ROOM) ?? STEPS[STEPS.length - 1];
+  const stepOf = (room: number) => STEPS.find((size) => size * scale >= room) ?? STEPS[STEPS.length - 1];
+  const [step, stepUp] = [stepOf(ROOM), stepOf(ROOM_UP)];
   const [left, top] = toPage([bounds.left, bounds.high]);
   const [right, bottom] = toPage([bounds.right, bounds.low]);
   const [x, y] = [left - GAP, bottom + GAP];
@@ -54,10 +58,10 @@ export function rulers({ bounds, toPage, scale, zero, view }: RuledPicture): Rul
     const text = figure(value, step);
     texts.push({ text, left: at - textWidth(text, SIZE) / 2, base: y + TICK + SIZE });
   }
-  for (const value of ticks(bounds.low - upright, bounds.high - upright, step)) {
+  for (const value of ticks(bounds.low - upright, bounds.high - upright, stepUp)) {
     const [, at] = toPage([0, value + upright]);
     lines.push([x - TICK, at, x, at]);
-    const text = figure(value, step);
+    const text = figure(value, stepUp);
     texts.push({ text, left: x - TICK - 3 - textWidth(text, SIZE), base: at + 0.36 * SIZE });
   }
   const below = y + TICK + 2.3 * SIZE;
@@ -69,6 +73,7 @@ export function rulers({ bounds, toPage, scale, zero, view }: RuledPicture): Rul
       element("path", { class: "rule", d: pathData(lines, { decimals: 1 }) }),
       ...texts.map(({ text, left, base }) => textAt(left, base, text, { class: "small" })),
     ],
+    lines: lines.slice(0, 2),
     boxes: texts.map(({ text, left, base }) => ({
       left,
       right: left + textWidth(text, SIZE),

@@ -7,7 +7,7 @@ import type { Stretch } from "./course.js";
 import { metres, numeralMetres } from "./figures.js";
 import { FONT_SIZE } from "./look.js";
 import type { Label } from "./place-labels.js";
-import { around, type Bounds, clipped, convexHull2d, NOWHERE, type Point } from "./plane.js";
+import { around, type Bounds, clipped, convexHull2d, NOWHERE, type Point, type Thing } from "./plane.js";
 import { element, pathData } from "./svg.js";
 import { inView, type View } from "./view.js";
 
@@ -54,8 +54,7 @@ function endMarks(motion: Motion, t: number, name: string, { point, offset, aske
 }
 
 export interface Surroundings {
-  /** Of each thing; where one has no end, none. */
-  bounds: Bounds[];
+  bounds: Thing[];
   draw(
     bounds: Bounds,
     toPage: (place: Point | Vec3) => Point,
@@ -65,27 +64,27 @@ export interface Surroundings {
 export function surroundingsOf(stretches: readonly Stretch[], view: View): Surroundings {
   const parts = stretches.flatMap(({ part }) => part ?? []);
   const levels = view.name === "side" ? unique(parts.flatMap(levelsOf)) : [];
-  const boxes = parts
-    .flatMap(({ boxes }) => boxes)
-    .map((box) => convexHull2d(corners(box).map((c) => flat(inView(view, c)))));
+  const boxes = unique(stretches.flatMap((stretch) => boxesOf(stretch, view)));
   return {
     bounds: [
-      ...levels.map(({ height }) => ({ ...NOWHERE, low: height, high: height })),
-      ...boxes.map((hull) => hull.reduce(around, NOWHERE)),
+      ...levels.map(({ height }) => ({ bounds: { ...NOWHERE, low: height, high: height }, isWhole: true })),
+      ...boxes.map(({ whole }) => ({ bounds: whole.reduce(around, NOWHERE), isWhole: false })),
     ],
     draw(bounds, toPage) {
       const inside = levels.filter(
         ({ height }) => height >= bounds.low - 1e-9 && height <= bounds.high + 1e-9,
       );
-      const seen = boxes.map((hull) => clipped(hull, bounds)).filter((hull) => hull.length > 2);
+      const within = (hull: readonly Point[]) => [clipped(hull, bounds)].filter((rest) => rest.length > 2);
+      const seen = boxes.flatMap(({ whole }) => within(whole));
+      const drawn = (look: string, hull: readonly Point[]) =>
+        element("path", {
+          class: look,
+          d: pathData([hull.flatMap((p) => [...toPage(p)])], { closed: true, decimals: 1 }),
+        });
       return {
         shapes: [
-          ...seen.map((hull) =>
-            element("path", {
-              class: "box",
-              d: pathData([hull.flatMap((p) => [...toPage(p)])], { closed: true, decimals: 1 }),
-            }),
-          ),
+          ...seen.map((hull) => drawn("hair", hull)),
+          ...boxes.flatMap(({ cut }) => within(cut)).map((hull) => drawn("box", hull)),
           ...inside.map(({ height, kind }) =>
             levelLine(kind, toPage([bounds.left, height]), toPage([bounds.right, height])),
           ),
@@ -125,6 +124,37 @@ export function surroundingsOf(stretches: readonly Stretch[], view: View): Surro
   };
 }
 
+/** A box as a view shows it, and its cut with the upright plane that the flight is in. */
+interface SeenBox {
+  whole: Point[];
+  cut: Point[];
+  words: string;
+}
+
+function boxesOf({ part, flight }: Stretch, view: View): SeenBox[] {
+  if (!part || !flight) return [];
+  const start = inView(view, part.launch.centerOfMass)[2];
+  return part.boxes.map((box) => {
+    const seen = corners(box).map((corner) => inView(view, corner));
+    const isAbove = view.name === "above";
+    return {
+      whole: convexHull2d(seen.map(flat)),
+      cut: convexHull2d(isAbove ? seen.map(flat) : cutPoints(seen, start)),
+      words: JSON.stringify(box),
+    };
+  });
+}
+
+/** Where the edges between corners (view's axes) pass a depth; lines between other corners pass it within the cut. */
+const cutPoints = (seen: readonly Vec3[], depth: number): Point[] =>
+  seen.flatMap((a, i) =>
+    seen.slice(i + 1).flatMap((b): Point[] => {
+      if (a[2] < depth === b[2] < depth) return [];
+      const share = (depth - a[2]) / (b[2] - a[2]);
+      return [[a[0] + share * (b[0] - a[0]), a[1] + share * (b[1] - a[1])]];
+    }),
+  );
+
 interface Level {
   kind: "floor" | "limit";
   /** m */
@@ -141,8 +171,8 @@ const levelsOf = ({ floor, minHeight, maxHeight }: FlownPart): Level[] => [
 const level = (kind: Level["kind"], height: number | undefined, words: string): Level[] =>
   height === undefined ? [] : [{ kind, height, words: `${words} ${metres(height)}` }];
 
-const unique = (levels: readonly Level[]): Level[] =>
-  levels.filter(({ words }, i) => levels.findIndex((other) => other.words === words) === i);
+const unique = <T extends { words: string }>(things: readonly T[]): T[] =>
+  things.filter(({ words }, i) => things.findIndex((other) => other.words === words) === i);
 
 function levelLine(kind: Level["kind"], [left, y]: Point, [right]: Point): string {
   const line = element("path", { class: kind, d: pathData([[left, y, right, y]], { decimals: 1 }) });

@@ -18,7 +18,8 @@ export interface TurningRowInput {
   /** Numbers of those that the arc shows too. */
   onArc?: ReadonlySet<number>;
   view: View;
-  picked: Picked;
+  /** None: it does not turn. */
+  picked?: Picked;
   /** px */
   width: number;
 }
@@ -37,6 +38,8 @@ const TAIL = 0.45;
 const ARM = 0.62;
 const DETAIL = 0.35;
 const LINES = 3;
+/** One axis needs no dashes to be told from others. */
+const SOLID = "stroke-dasharray:none";
 /** For the names of the figures, px. */
 const GUTTER = 40;
 
@@ -76,7 +79,7 @@ function pose(
   prop: SheetProp,
   { rotation }: Exposure,
   view: View,
-  { axis, across, name }: Picked,
+  picked: Picked | undefined,
   scale: number,
   x: number,
   y: number,
@@ -84,6 +87,12 @@ function pose(
   const turned = multiply(view.rotation, rotation);
   const { rings } = outlineOf(prop.solid, turned, DETAIL / scale);
   const at = ([u, v]: Vec3): [number, number] => [x + scale * u, y - scale * v];
+  const outline = element("path", {
+    class: "body",
+    d: pathData(rings, { closed: true, map: [scale, 0, 0, -scale, x, y], decimals: 1 }),
+  });
+  if (!picked) return outline;
+  const { axis, across, name } = picked;
   const rod = rotate(turned, axis);
   const arm = rotate(turned, across);
   const origin: Vec3 = [0, 0, 0];
@@ -91,10 +100,7 @@ function pose(
   const tip = addScaled(origin, arm, ARM * prop.reach);
   const look = name === "any" ? "long" : name;
   return [
-    element("path", {
-      class: "body",
-      d: pathData(rings, { closed: true, map: [scale, 0, 0, -scale, x, y], decimals: 1 }),
-    }),
+    outline,
     armSign(at(origin), at(tip), arm[2] >= 0),
     rodSign(look, at(tail), at(head), rod[2] >= 0),
   ].join("");
@@ -125,7 +131,7 @@ function rodSign(
       ? element("circle", { class: `${look}-dot`, cx, cy, r: 2.2 })
       : element("path", {
           class: look,
-          style: "stroke-dasharray:none",
+          style: SOLID,
           d: pathData(
             [
               [cx - 3, cy - 3, cx + 3, cy + 3],
@@ -134,13 +140,17 @@ function rodSign(
             { decimals: 1 },
           ),
         });
-    return element("circle", { class: look, style: "stroke-dasharray:none", cx, cy, r: 5 }) + middle;
+    return element("circle", { class: look, style: SOLID, cx, cy, r: 5 }) + middle;
   }
   const [ax, ay] = [dx / size, dy / size];
   const wing = (side: number): number[] => [x - 7 * ax + 3.6 * side * ay, y - 7 * ay - 3.6 * side * ax];
   const point = pathData([[...wing(1), x, y, ...wing(-1)]], { closed: true, decimals: 1 });
   return (
-    element("path", { class: look, d: pathData([[u, v, x - 5 * ax, y - 5 * ay]], { decimals: 1 }) }) +
+    element("path", {
+      class: look,
+      style: SOLID,
+      d: pathData([[u, v, x - 5 * ax, y - 5 * ay]], { decimals: 1 }),
+    }) +
     element(
       "path",
       isNear

@@ -50,8 +50,8 @@ function manner({ name, isSpun, turnsOver }: Turning, about: Vec3, ahead: Vec3, 
 function unsteadiness({ isSpun, name, sway, turnsOver }: Turning): string {
   if (turnsOver) return ", which turns over on the way";
   if (sway < CLEAN) return ", steadily";
-  const what = isSpun ? "" : " of its face";
+  if (!isSpun) return `, leaning sideways by up to ${degrees(sway)}`;
   if (sway > LOST) return `, while that axis strays by as much as ${degrees(sway)}`;
   const strong = sway > STRONG ? "strong " : "";
-  return name === "any" ? "" : `, with a ${strong}wobble${what} of up to ${degrees(sway)}`;
+  return name === "any" ? "" : `, with a ${strong}wobble of up to ${degrees(sway)}`;
 }
