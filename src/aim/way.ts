@@ -38,6 +38,9 @@ export interface NearestWay {
 /** A miss, or what rounding may add to it, that is not worth a word, rad. */
 export const MOST_MISS = 1e-9;
 
+/** A way this near the wish, in turns, leaves nothing better to be looked for. */
+const AS_WISHED = 0.1;
+
 /** In the ordered frame, the axis of unit length and turned round for negative turns. */
 export function orderedWish(body: ReducedBody, wish: WayWish): OrderedWish {
   const sign = wish.turns !== undefined && wish.turns < 0 ? -1 : 1;
@@ -73,12 +76,13 @@ export function describeWay(
  * What whoever wished should know of the answer.
  *
  * @param leastTurns the least turns of all ways, where known
+ * @param offWish how far it is from the wish, in turns
  */
-export function warningsFor(way: Way, wish: OrderedWish, leastTurns?: number): string[] {
+export function warningsFor(way: Way, wish: OrderedWish, leastTurns?: number, offWish = 0): string[] {
   const warnings: string[] = [];
-  if (way.family && way.family !== "sphere")
+  if (way.family && way.family !== "sphere" && offWish > AS_WISHED)
     warnings.push(
-      `the end pose is a case of its own (${way.family}): its ways may come in continua, of which a few are looked at`,
+      `the end pose is a case of its own (${way.family}): its ways may come in continua, of which a few are looked at, and one nearer the wish may be missed`,
     );
   if (leastTurns !== undefined && wish.turns !== undefined && wish.turns < leastTurns - 1e-9)
     warnings.push(

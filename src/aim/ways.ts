@@ -3,7 +3,7 @@ import type { Vec3 } from "../math/vec3.js";
 import { familyOf } from "./families.js";
 import { polish, type Turn } from "./polish.js";
 import { momentumOf, type Problem, problemOf, spinOf } from "./problem.js";
-import { type Ranked, rank, turnsOf } from "./ranking.js";
+import { nearness, type Ranked, rank, turnsOf } from "./ranking.js";
 import { type Candidate, search } from "./search.js";
 import { type Turning, turningOf } from "./turning.js";
 import {
@@ -82,7 +82,8 @@ export function nearestWay(request: Turn, wish: WayWish): NearestWay {
   }
   const way = firstGood(problem, ranked, family);
   const least = wanted <= reach ? leastOf(problem, candidates) : undefined;
-  return { way, warnings: warningsFor(way, ordered, least) };
+  const offWish = nearness({ ...way, signedShare: problem.body.toOrdered(way.signedShare) }, ordered);
+  return { way, warnings: warningsFor(way, ordered, least, offWish) };
 }
 
 function firstGood(problem: Problem, ranked: Ranked[], family: string | undefined): Way {

@@ -1,7 +1,9 @@
 /** The ways a prop can get from its release pose to its arrival pose, and the spin to write for each. */
 
 import type { AimedArrival, ArrivalWish } from "../aim/arrival.js";
+import { familyOf } from "../aim/families.js";
 import { solveFacing } from "../aim/landing.js";
+import { problemOf } from "../aim/problem.js";
 import type { Way, WayWish } from "../aim/way.js";
 import { allWays } from "../aim/ways.js";
 import { wishFor } from "../aim/wish-for.js";
@@ -48,6 +50,8 @@ export interface TakeWays {
   duration: number;
   /** Whether these are all ways from `leastTurns` to `mostTurns`, or some of those that bring one direction where it is asked for. */
   isEvery: boolean;
+  /** Of exact solutions, to which the poses belong: the ways may come in continua, and those listed are some of them. */
+  family?: string;
   leastTurns: number;
   mostTurns: number;
   ways: ListedWay[];
@@ -102,16 +106,20 @@ export async function throwWays(
 function takeWays(file: ThrowFile, entry: ThrowEntry, prop: Prop, number: number): TakeWays {
   const { take, unheld } = solved(file, entry, prop, number);
   const aim = aimOf(take, prop, hostFrame(file.host).fromWorld);
-  const isEvery = aim.wish.facing.kind === "pose";
+  const isPose = aim.wish.facing.kind === "pose";
+  const named = isPose ? familyOf(problemOf(aim.aimed.turn)) : undefined;
+  // a sphere's are countable: turns about one axis
+  const family = named === "sphere" ? undefined : named;
   const wished = Math.abs(aim.asked.turns ?? turnsAboutMomentum(take.flight));
   const leastTurns = Math.max(0, Math.floor(wished) - AROUND);
   const mostTurns = Math.ceil(wished) + AROUND;
-  const ways = isEvery ? everyWay(aim, leastTurns, mostTurns) : someWays(aim, wished);
+  const ways = isPose ? everyWay(aim, leastTurns, mostTurns) : someWays(aim, wished);
   return {
     take: number,
     candidate: take.candidate,
     duration: take.flight.duration,
-    isEvery,
+    isEvery: isPose && family === undefined,
+    ...(family && { family }),
     leastTurns,
     mostTurns,
     ways: ways.sort((a, b) => a.turns - b.turns),

@@ -50,10 +50,12 @@ Example:
 const facts = ({ unheld, ...take }: TakeWays) => ({ ...take, unheld: unheld ? unheld.message : null });
 
 function describe(name: string, take: TakeWays, unit: string): string {
-  const { ways, duration, isEvery, leastTurns, mostTurns, warnings, unheld } = take;
+  const { ways, duration, isEvery, family, leastTurns, mostTurns, warnings, unheld } = take;
   const extent = isEvery
     ? `the ${ways.length} ways of ${leastTurns} to ${mostTurns} turns`
-    : `${ways.length} of the ways, near the wish: one direction leaves the roll free`;
+    : family === undefined
+      ? `${ways.length} of the ways, near the wish: one direction leaves the roll free`
+      : `${ways.length} of the ways of ${leastTurns} to ${mostTurns} turns: the end pose is a case of its own (${family}), whose ways may come in continua`;
   const head = ["", "turns", "long", "middle", "short", unit, "spin /s", "miss °", "spin to write"];
   return [
     `${name}, take ${take.take}, ${duration.toFixed(3)} s: ${extent}`,
