@@ -2,22 +2,26 @@ import type { Contour } from "./contour.js";
 
 /** What a contour covers, on a grid: which nodes are inside, and where it crosses the lines between nodes. Lengths in cells. */
 export interface Mask {
-  /** Nodes a row, and rows. */
+  /** Nodes a row. */
   readonly columns: number;
-  readonly rows: number;
   /** 1 a node that is covered; none on the rim is. */
   readonly inside: Uint8Array;
-  /** From each node to the next in its row, and to the next in its column. */
-  readonly along: Crossings;
-  readonly upward: Crossings;
+  /**
+   * By the number of the cell's side, 2 · node for the one to the next node in its row, + 1 for the one to the next in its column.
+   * Of all sides in rows that part what is covered from what is not, and of most in columns; of some others too.
+   */
+  readonly crossings: Map<number, Crossing>;
 }
 
-export interface Crossings {
-  /** Place between the two nodes, 0 to 1, where one of them is covered. */
-  readonly place: Float64Array;
+export interface Crossing {
+  /** Between the side's two nodes, 0 to 1. */
+  readonly place: number;
   /** The segment that crosses there; −1: none is known. */
-  readonly segment: Int32Array;
+  readonly segment: number;
 }
+
+/** Of a side of which nothing is known. */
+export const MIDWAY: Crossing = { place: 0.5, segment: -1 };
 
 /** Cells: gaps as wide come from rounding, between edges that were one. */
 const CRACK = 1e-6;
@@ -27,41 +31,27 @@ const CRACK = 1e-6;
  * bounds of x and y. What is too thin to cover any node is drawn a cell thick.
  */
 export function maskOf(contour: Contour, columns: number, rows: number): Mask {
-  const mask: Mask = {
-    columns,
-    rows,
-    inside: new Uint8Array(columns * rows),
-    along: crossings(columns * rows),
-    upward: crossings(columns * rows),
-  };
-  const { inside, along, upward } = mask;
+  const inside = new Uint8Array(columns * rows);
+  const crossings = new Map<number, Crossing>();
   eachSpan(contour, 0, rows, (row, from, to, first, last) => {
     const low = Math.ceil(from);
     const high = Math.floor(to);
     if (low > high) return;
-    inside.fill(1, row * columns + low, row * columns + high + 1);
-    note(along, row * columns + low - 1, from - (low - 1), first);
-    note(along, row * columns + high, to - high, last);
+    const start = row * columns;
+    inside.fill(1, start + low, start + high + 1);
+    crossings.set(2 * (start + low - 1), { place: from - (low - 1), segment: first });
+    crossings.set(2 * (start + high), { place: to - high, segment: last });
   });
   eachSpan(contour, 1, columns, (column, from, to, first, last) => {
     const low = Math.ceil(from);
     const high = Math.floor(to);
     if (low > high) return;
-    note(upward, (low - 1) * columns + column, from - (low - 1), first);
-    note(upward, high * columns + column, to - high, last);
+    crossings.set(2 * ((low - 1) * columns + column) + 1, { place: from - (low - 1), segment: first });
+    crossings.set(2 * (high * columns + column) + 1, { place: to - high, segment: last });
   });
+  const mask = { columns, inside, crossings };
   keepThin(contour, mask);
   return mask;
-}
-
-const crossings = (count: number): Crossings => ({
-  place: new Float64Array(count).fill(0.5),
-  segment: new Int32Array(count).fill(-1),
-});
-
-function note({ place, segment }: Crossings, at: number, where: number, which: number): void {
-  place[at] = where;
-  segment[at] = which;
 }
 
 /**
@@ -115,7 +105,7 @@ function eachSpan(
 }
 
 /** Where a segment goes through a cell of which no node is covered, the node nearest to it is. */
-function keepThin({ count, ends }: Contour, { columns, inside }: Mask): void {
+function keepThin({ count, ends }: Contour, { columns, inside, crossings }: Mask): void {
   for (let s = 0; s < count; s++) {
     const x = ends[4 * s];
     const y = ends[4 * s + 1];
@@ -128,7 +118,9 @@ function keepThin({ count, ends }: Contour, { columns, inside }: Mask): void {
       const py = y + (dy * i) / steps;
       const node = Math.floor(py) * columns + Math.floor(px);
       if (inside[node] || inside[node + 1] || inside[node + columns] || inside[node + columns + 1]) continue;
-      inside[Math.floor(py + 0.5) * columns + Math.floor(px + 0.5)] = 1;
+      const thin = Math.floor(py + 0.5) * columns + Math.floor(px + 0.5);
+      inside[thin] = 1;
+      for (const side of [2 * thin - 2, 2 * thin]) if (!crossings.has(side)) crossings.set(side, MIDWAY);
     }
   }
 }

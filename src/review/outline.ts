@@ -15,7 +15,7 @@ export interface Outline {
 
 /** Of `detail`: what the grid and the leaving out of points may take; a cell's diagonal and they together are below 1. */
 const CELL = 0.5;
-const STRAIGHT = 0.25;
+const STRAIGHT = 0.12;
 /** No finer than so many cells across. */
 const MOST_CELLS = 2000;
 /** Cells²: what is smaller is left out beside greater. */

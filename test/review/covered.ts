@@ -79,3 +79,22 @@ export function overlap(a: Uint8Array, b: Uint8Array): number {
   });
   return both / either;
 }
+
+/** Whether some point no more than so many steps from the point `i` has that value. */
+export function within(
+  covered: Uint8Array,
+  { points }: Grid,
+  i: number,
+  steps: number,
+  value: number,
+): boolean {
+  const column = i % points;
+  const row = (i - column) / points;
+  for (let dy = -steps; dy <= steps; dy++)
+    for (let dx = -steps; dx <= steps; dx++) {
+      const [x, y] = [column + dx, row + dy];
+      if (dx * dx + dy * dy > steps * steps || x < 0 || y < 0 || x >= points || y >= points) continue;
+      if (covered[y * points + x] === value) return true;
+    }
+  return false;
+}
