@@ -45,6 +45,8 @@ export class Stage {
   #colors: Palette;
   #shown?: ShownThrow;
   #scene?: TakeScene;
+  /** Left, and to be let go of when the next picture is drawn. */
+  #left: { dispose(): void }[] = [];
   #setting?: Setting;
   #selected: { take: number; second?: number } = { take: 0 };
   #mostSiblings = Number.POSITIVE_INFINITY;
@@ -54,6 +56,7 @@ export class Stage {
   #asked = 0;
   #wanted = 0;
   #showing = 0;
+  #selecting = 0;
 
   constructor(
     readonly canvas: HTMLCanvasElement,
@@ -85,12 +88,11 @@ export class Stage {
     const shown = await ShownThrow.open(data, prop, file);
     if (turn !== this.#showing) return shown.dispose();
     const old = this.#shown;
-    this.#scene?.dispose();
-    this.#scene = undefined;
+    this.#leave();
     this.#shown = shown;
     this.#mostSiblings = Number.POSITIVE_INFINITY;
     await this.select(0);
-    old?.dispose();
+    if (old) this.#left.push(old);
     void shown.readAll(() => turn === this.#showing && this.#rebuild()).catch(() => {});
   }
 
@@ -98,10 +100,11 @@ export class Stage {
   async select(take: number, second?: number): Promise<void> {
     const shown = this.#shown;
     if (!shown) return;
-    this.#selected = { take, second };
+    const turn = ++this.#selecting;
     const takes = second === undefined ? [take] : [take, second];
     for (const each of takes) if (!shown.isLoaded(each)) await shown.load(each);
-    if (shown !== this.#shown || this.#selected.take !== take || this.#selected.second !== second) return;
+    if (shown !== this.#shown || turn !== this.#selecting) return;
+    this.#selected = { take, second };
     this.#rebuild();
     shown.keepOnly(takes);
   }
@@ -203,8 +206,8 @@ export class Stage {
     this.#showing++;
     cancelAnimationFrame(this.#asked);
     this.#stopListening();
-    this.#scene?.dispose();
-    this.#scene = undefined;
+    this.#leave();
+    this.#letGo();
     this.#shown?.dispose();
     this.#shown = undefined;
     this.#grid.clear();
@@ -227,7 +230,7 @@ export class Stage {
     if (!shown || !course) return;
     const old = this.#setting;
     this.#setting = settingOf(course, shown.courses);
-    this.#scene?.dispose();
+    this.#leave();
     const siblings = thinnedSiblings(shown, [take, second], this.#mostSiblings);
     const { room } = this.#setting;
     this.#scene = new TakeScene({
@@ -243,9 +246,21 @@ export class Stage {
     this.#renderer.front.add(this.#scene.front);
     for (const [layer, on] of Object.entries(this.#layers)) this.#scene.setLayer(layer as Layer, on);
     if (JSON.stringify(old?.framing) !== JSON.stringify(this.#setting.framing)) this.resetView();
-    this.#labels.forget();
     this.time = this.#time;
     this.#tell();
+  }
+
+  #leave(): void {
+    if (!this.#scene) return;
+    this.#scene.leave();
+    this.#left.push(this.#scene);
+    this.#scene = undefined;
+  }
+
+  #letGo(): void {
+    for (const scene of this.#left) scene.dispose();
+    this.#left = [];
+    this.#labels.forget();
   }
 
   #tell(): void {
@@ -278,6 +293,7 @@ export class Stage {
       this.#labels.fit(this.#rig);
     }
     this.#renderer.draw(this.#rig);
+    this.#letGo();
     const tooSlow = this.#fluency.picture(performance.now() - this.#wanted);
     if (tooSlow && this.#layers.siblings) this.#thin();
   }

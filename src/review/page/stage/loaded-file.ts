@@ -1,8 +1,18 @@
 /** A baked file as three.js loads it. */
 
-import { type AnimationClip, BufferGeometry, type Group, type Object3D } from "three";
+import {
+  type AnimationClip,
+  BufferGeometry,
+  type Group,
+  type Mesh,
+  type MeshStandardMaterial,
+  type Object3D,
+} from "three";
 import { type GLTF, GLTFLoader } from "three/examples/jsm/loaders/GLTFLoader.js";
 import { asGlb, type Container } from "./container.js";
+
+/** 0 to 1 */
+const MOST_METAL = 0.3;
 
 export interface LoadedFile {
   scene: Group;
@@ -34,6 +44,7 @@ export async function loadFile(container: Container): Promise<LoadedFile> {
     missing.push("Its textures are compressed with Basis Universal, which this page has no decoder for.");
   const gltf = await loader.parseAsync(asGlb(shown), "");
   const nodes = nodesOf(gltf);
+  dullMetal(gltf.scene);
   return {
     scene: gltf.scene,
     animations: gltf.animations,
@@ -49,6 +60,17 @@ const EMPTY_MESHES = {
     done(new BufferGeometry());
   },
 };
+
+/**
+ * Metal shows nothing but what is round it, and here nothing is: without this it is black. Surroundings to mirror would have to be blurred for each
+ * roughness first, which takes software rendering ten seconds.
+ */
+function dullMetal(scene: Group): void {
+  scene.traverse((object) => {
+    for (const material of [(object as Mesh).material ?? []].flat() as Partial<MeshStandardMaterial>[])
+      if (material.metalness !== undefined) material.metalness = Math.min(material.metalness, MOST_METAL);
+  });
+}
 
 function nodesOf({ scene, parser }: GLTF): Map<number, Object3D> {
   const nodes = new Map<number, Object3D>();

@@ -22,7 +22,7 @@ export interface Palette {
 
 const LIGHT: Palette = {
   ground: "#f7f4ec",
-  grid: "#e3ddd0",
+  grid: "#ddd5c5",
   scale: "#857d6e",
   sibling: "#e4ddce",
   strobe: "#b9b09d",
@@ -41,7 +41,7 @@ const LIGHT: Palette = {
 
 const DARK: Palette = {
   ground: "#1d1c1a",
-  grid: "#34312b",
+  grid: "#3b372f",
   scale: "#948d7e",
   sibling: "#3a3731",
   strobe: "#6a6457",

@@ -74,7 +74,7 @@ export class Surroundings {
     this.#crosses.push(cross);
     this.group.add(cross);
     const whose = point === "centerOfMass" ? "" : `${point} `;
-    if (what) this.#say(`${whose}${what}`, at, [0.5, -0.7], this.#colors.mark);
+    if (what) this.#say(`${whose}${what}`, at, [0.5, 1.6], this.#colors.mark);
   }
 
   #level(height: number, { low, high }: Room, what: string): void {

@@ -120,20 +120,24 @@ export class TakeScene {
     this.#surroundings.fit((place) => rig.metresPerPixel(place));
   }
 
+  /** Leaves the stage; what it holds in the graphics memory stays until `dispose`, so that a scene that takes its place need not compile the same again. */
+  leave(): void {
+    this.#options.labels.remove([...this.#names, ...this.#pathNames]);
+    this.played.dispose();
+    this.#second?.played.dispose();
+    this.behind.removeFromParent();
+    this.front.removeFromParent();
+  }
+
+  /** After `leave`. */
   dispose(): void {
-    const { labels } = this.#options;
-    labels.remove([...this.#names, ...this.#pathNames]);
     this.#siblings.dispose();
     this.#strobe.dispose();
     this.#arrows.dispose();
     this.#surroundings.dispose();
+    this.#tint.dispose();
     discard(this.#truth);
     discard(this.#paths);
-    this.played.dispose();
-    this.#second?.played.dispose();
-    this.#tint.dispose();
-    this.behind.removeFromParent();
-    this.front.removeFromParent();
   }
 
   #exposures(): Ghosts {
