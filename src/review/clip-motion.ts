@@ -9,8 +9,8 @@ import { multiply, type Quat, rotate } from "../math/quat.js";
 import { RequestError } from "../math/request-error.js";
 import { add, scale, type Vec3, ZERO } from "../math/vec3.js";
 import { weigh } from "../prop/prop.js";
-import { recordedCenter } from "./recorded-center.js";
-import { type SheetProp, sheetProp } from "./sheet-input.js";
+import { recordedCenter, recordedFlights } from "./recorded-flight.js";
+import { type SheetFlight, type SheetProp, sheetProp } from "./sheet-input.js";
 import { solidOf } from "./solid.js";
 
 /** A clip that moves one rigid piece. */
@@ -22,6 +22,8 @@ export interface ClipMotion {
   /** When that is, s within the clip. */
   start: number;
   body: ClipBody;
+  /** When it flies, s of the motion; only where the clip says so. */
+  flights?: SheetFlight[];
 }
 
 /** The piece moved, in the frame of its node; clips that move the same node share it. */
@@ -65,7 +67,9 @@ export async function clipMotions(model: Model): Promise<(ClipMotion | LeftClip)
     const pose = poseOf(rigid.path);
     const body = await bodyOf(rigid, recordedCenter(clip.extras, rigid, pose));
     if ("reason" in body) return { name, ...body };
-    return { name, start, body, motion: motionOf(pose, body.prop.centerOfMass, start, end) };
+    const motion = motionOf(pose, body.prop.centerOfMass, start, end);
+    const flights = start === 0 ? recordedFlights(clip.extras, end) : undefined;
+    return { name, start, body, motion, ...(flights && { flights }) };
   }
 
   async function bodyOf(

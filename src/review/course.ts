@@ -5,11 +5,11 @@ import { type Flight, fly } from "../flight/flight.js";
 import { turnsAboutMomentum } from "../flight/turns.js";
 import { angleBetween } from "../math/quat.js";
 import { distance, type Vec3 } from "../math/vec3.js";
-import type { SheetTake } from "./sheet-input.js";
+import type { SheetFlight, SheetTake } from "./sheet-input.js";
 
 /** Times in s within the clip, turns counted from the clip's start. */
 export interface Stretch {
-  /** Of the throw; a clip of others has one stretch without a name. */
+  /** Of the throw; a clip of others has none. */
   name?: string;
   from: number;
   to: number;
@@ -23,8 +23,9 @@ export interface Stretch {
 }
 
 /** At least one. */
-export function stretchesOf({ motion, take, turns }: SheetTake): Stretch[] {
-  if (!take) return [foreignStretch(motion, turns)];
+export function stretchesOf(sheetTake: SheetTake): Stretch[] {
+  const { take } = sheetTake;
+  if (!take) return seenStretches(sheetTake);
   let before = 0;
   return take.parts.map((part) => {
     const flight = fly(part.launch);
@@ -47,32 +48,47 @@ export function stretchesOf({ motion, take, turns }: SheetTake): Stretch[] {
   });
 }
 
+/** Nothing is known but the motion, and perhaps when it flies. */
+function seenStretches({ motion, turns, flights }: SheetTake): Stretch[] {
+  let before = 0;
+  return (flights ?? [{ from: 0, to: motion.duration }]).map((flight, _, all) => {
+    const stretch = seenStretch(motion, flight, before, all.length === 1 ? turns : undefined);
+    before += stretch.turns;
+    return stretch;
+  });
+}
+
 /** Steps over which the turning of a clip is added up: fine enough for many turns. */
 const STEPS = 2048;
 
-/** Nothing is known but the motion: turns are the angle turned through, scaled to the count where one is given. */
-function foreignStretch(motion: Motion, turns?: number): Stretch {
-  const { duration } = motion;
+/** Turns are the angle turned through, scaled to the count where one is given. */
+function seenStretch(
+  motion: Motion,
+  { name, from, to }: SheetFlight,
+  before: number,
+  turns?: number,
+): Stretch {
+  const duration = to - from;
   const sums = new Float64Array(STEPS + 1);
-  let before = motion.rotation(0);
+  let last = motion.rotation(from);
   let size = 0;
-  const first = motion.centerOfMass(0);
+  const first = motion.centerOfMass(from);
   for (let i = 1; i <= STEPS; i++) {
-    const t = (duration * i) / STEPS;
+    const t = from + (duration * i) / STEPS;
     const now = motion.rotation(t);
-    sums[i] = sums[i - 1] + angleBetween(before, now) / (2 * Math.PI);
-    before = now;
+    sums[i] = sums[i - 1] + angleBetween(last, now) / (2 * Math.PI);
+    last = now;
     size = Math.max(size, distance(first, motion.centerOfMass(t)));
   }
   const whole = turns ?? sums[STEPS];
   const factor = sums[STEPS] === 0 ? 0 : whole / sums[STEPS];
   const turnsAt = (t: number): number => {
-    if (duration === 0) return 0;
-    const place = Math.max(0, Math.min(STEPS, (t / duration) * STEPS));
+    if (duration === 0) return before;
+    const place = Math.max(0, Math.min(STEPS, ((t - from) / duration) * STEPS));
     const i = Math.min(STEPS - 1, Math.floor(place));
-    return factor * (sums[i] + (place - i) * (sums[i + 1] - sums[i]));
+    return before + factor * (sums[i] + (place - i) * (sums[i + 1] - sums[i]));
   };
-  return { from: 0, to: duration, travels: size > 1e-6, turnsAt, turns: whole };
+  return { name, from, to, travels: size > 1e-6, turnsAt, turns: whole };
 }
 
 /** Places of the centre of mass at even steps, ends included. */

@@ -18,6 +18,13 @@ export interface SheetProp {
   reach: number;
 }
 
+export interface SheetFlight {
+  /** Of the throw. */
+  name?: string;
+  from: number;
+  to: number;
+}
+
 export interface SheetTake {
   /** Of the clip. */
   name: string;
@@ -26,6 +33,8 @@ export interface SheetTake {
   take?: TakeMotion;
   /** In all; worked out where it is left out. */
   turns?: number;
+  /** Where no take is known, the flights within the clip, s; left out, the whole clip is one. */
+  flights?: readonly SheetFlight[];
 }
 
 /** A throw or chain, or any clip of one rigid body. */

@@ -1,12 +1,14 @@
-/** Where the centre of mass of a clip that tossbake baked is: its extras say where it goes. */
+/** What the extras of a clip that tossbake baked say of it: where its centre of mass goes, and when it flies. */
 
 import type { RigidClip } from "../gltf/rigid-clip.js";
 import { rotateBack } from "../math/quat.js";
 import { distance, scale, subtract, type Vec3, ZERO } from "../math/vec3.js";
 import type { NodePose } from "./clip-motion.js";
+import type { SheetFlight } from "./sheet-input.js";
 
 /** What is read of them. */
 interface Flown {
+  throw?: unknown;
   release: { centerOfMass: Vec3 };
   arrival: { centerOfMass: Vec3 };
   flight: { start: number; time: number };
@@ -35,6 +37,20 @@ export function recordedCenter(
     seen.every((center) => distance(center, other) <= SLACK.metres + SLACK.share * distance(center, ZERO));
   return fits(place) ? { place, fits } : undefined;
 }
+
+/** When it flies, and what the throws are called; undefined where the extras do not say so, or not of this clip. */
+export function recordedFlights(extras: unknown, duration: number): SheetFlight[] | undefined {
+  let end = 0;
+  const flights = flightsOf(extras).map(({ throw: name, flight: { start, time } }): SheetFlight => {
+    const isNext = start >= end - INSTANT && time > 0;
+    end = isNext ? start + time : Number.NaN;
+    return { ...(typeof name === "string" && { name }), from: start, to: Math.min(duration, start + time) };
+  });
+  return flights.length > 0 && end <= duration + INSTANT ? flights : undefined;
+}
+
+/** s: clips' ends are rounded to float32. */
+const INSTANT = 1e-4;
 
 function centersOf({ release, arrival, flight }: Flown, pose: (t: number) => NodePose): Vec3[] {
   const seenFrom = ({ place, rotation }: NodePose, center: Vec3) =>
