@@ -34,6 +34,7 @@ export async function bundlePage(folder) {
     absWorkingDir: ROOT,
     entryPoints: { page: join(SOURCE, "page.css") },
     outdir: folder,
+    bundle: true,
     minify: true,
     charset: "utf8",
     logLevel: "warning",

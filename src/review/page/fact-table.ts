@@ -1,0 +1,53 @@
+/** A take's numbers as a table; with a second take in two columns, what differs marked. */
+
+import { el } from "./dom.js";
+import { type FactGroup, type PairedRow, paired } from "./fact-rows.js";
+
+/** @param names of the takes: one, or two */
+export function factTable(
+  caption: string,
+  names: readonly string[],
+  first: FactGroup[],
+  second?: FactGroup[],
+): HTMLElement {
+  const columns = second ? 3 : 1;
+  return el(
+    "table",
+    {},
+    el("caption", { class: "unseen" }, caption),
+    second &&
+      el(
+        "thead",
+        {},
+        el("tr", {}, el("td"), ...names.map((name) => el("th", { scope: "col" }, name)), el("td")),
+      ),
+    ...first.map(({ title, rows }) => {
+      const others = second?.find((group) => group.title === title)?.rows;
+      return el(
+        "tbody",
+        {},
+        el("tr", { class: "group" }, el("th", { scope: "rowgroup", colspan: 1 + columns }, title)),
+        ...(second
+          ? paired(rows, others ?? []).map(pairedRow)
+          : rows.map(({ label, text, about }) => el("tr", {}, rowHead(label, about), el("td", {}, text)))),
+      );
+    }),
+  );
+}
+
+const rowHead = (label: string, about?: string): HTMLElement =>
+  el("th", { scope: "row", title: about }, label);
+
+const pairedRow = ({ label, about, texts, differs }: PairedRow): HTMLElement =>
+  el(
+    "tr",
+    { class: differs ? "differs" : "same" },
+    rowHead(label, about),
+    ...texts.map((text) => el("td", {}, text)),
+    el(
+      "td",
+      { class: "sign" },
+      el("span", { "aria-hidden": "true" }, differs ? "≠" : "="),
+      el("span", { class: "unseen" }, differs ? "differs" : "same"),
+    ),
+  );

@@ -1,0 +1,49 @@
+/** Lets the page follow what its source has to say. */
+
+import type { App } from "./app.js";
+import { newsWords } from "./banner.js";
+import type { Source } from "./source.js";
+import { throwOf } from "./state.js";
+
+export function follow({ store, files, strips, say }: App, source: Source): void {
+  if (!source.live) return;
+  let asking = false;
+  let again = false;
+
+  async function ask(): Promise<void> {
+    again = true;
+    if (asking) return;
+    asking = true;
+    while (again) {
+      again = false;
+      await take().catch(() => undefined);
+    }
+    asking = false;
+  }
+
+  async function take(): Promise<void> {
+    const before = store.state.data;
+    const after = await source.data(store.state.throwName);
+    const stamps = new Map(before.throws.map(({ name, stamp }) => [name, stamp]));
+    const changed = after.throws.filter(({ name, stamp }) => stamp !== stamps.get(name));
+    files.forget(changed.flatMap(({ takes }) => takes.map(({ file }) => file)));
+    if (changed.some(({ name }) => stamps.get(name) !== undefined)) strips.forget();
+    const news = newsWords(before, after);
+    store.send({ type: "data", data: after });
+    if (news !== undefined) say(news);
+  }
+
+  source.onChange(ask);
+  source.onConnection((connected) => {
+    const wasGone = !store.state.connected;
+    store.send({ type: "connected", on: connected });
+    if (connected && wasGone) ask();
+  });
+  // The server bakes what is looked at first.
+  store.watch(
+    (state) => [throwOf(state)],
+    (shown) => {
+      if (shown && shown.stamp === undefined) ask();
+    },
+  );
+}

@@ -1,0 +1,101 @@
+/** The takes of the throw, as strips, in the order that was asked for. */
+
+import type { App } from "./app.js";
+import { el } from "./dom.js";
+import { listBox, type Option } from "./list-box.js";
+import { type Measured, measureOf } from "./measures.js";
+import { missedWords } from "./misses.js";
+import { placeAmong } from "./order.js";
+import { listed, measured, propOf, type State, throwOf } from "./state.js";
+import { oldVerdict, verdictOf } from "./verdicts.js";
+
+export function takeList({ store, strips }: App): HTMLElement {
+  const list = listBox<number>("Takes", "takes", (take, second) =>
+    store.send(second && take !== store.state.take ? { type: "beside", take } : { type: "take", take }),
+  );
+  const none = el("p", { class: "none", hidden: true });
+  const showAll = el(
+    "button",
+    {
+      type: "button",
+      hidden: true,
+      onclick: () => store.send({ type: "sift", change: { keep: "all", least: undefined, most: undefined } }),
+    },
+    "Show all takes",
+  );
+
+  store.watch(
+    ({ data, throwName, order, verdicts, beside }) => [data, throwName, order, verdicts, beside],
+    () => {
+      const { state } = store;
+      const takes = listed(state);
+      const values = measured(state).flatMap((each) => measureOf(state.order.by).of(each) ?? []);
+      list.show(
+        takes.map((each) => option(each, state, values)),
+        state.take,
+      );
+      const hidden = measured(state).length - takes.length;
+      showAll.hidden = hidden === 0;
+      none.hidden = takes.length > 0;
+      none.textContent = emptyWords(state, hidden);
+    },
+  );
+  store.watch(
+    ({ take }) => [take],
+    (take) => list.choose(take),
+  );
+
+  function option(each: Measured, state: State, values: readonly number[]): Option<number> {
+    const { take, number } = each;
+    const prop = propOf(state, throwOf(state));
+    const verdict = verdictOf(state.verdicts, take.motion);
+    const isBeside = number === state.beside;
+    const measure = measureOf(state.order.by);
+    const value = measure.of(each);
+    const said = measure.key === "number" ? undefined : value === null ? "none" : measure.say(value);
+    const marks = [
+      verdict ?? (oldVerdict(state.verdicts, take.motion) && "changed since you decided"),
+      missedWords(each) && "misses",
+      isBeside && "beside",
+    ].filter((mark) => typeof mark === "string");
+    return {
+      key: number,
+      classes: [verdict ?? "", isBeside ? "beside" : ""].join(" "),
+      label: [`take ${number}`, said && `${measure.label} ${said}`, ...marks].filter(Boolean).join(", "),
+      content: () => [
+        el(
+          "span",
+          { class: "take-head" },
+          el("span", { class: "number" }, String(number)),
+          said !== undefined && el("span", { class: "value" }, said),
+        ),
+        el("span", { class: "take-strip" }, prop && strips.strip(take, prop, "takes")),
+        said !== undefined && value !== null && bar(placeAmong(value, values)),
+        el(
+          "span",
+          { class: "marks" },
+          ...marks.map((mark) => el("span", { class: `mark ${mark.split(" ")[0]}` }, mark)),
+        ),
+      ],
+    };
+  }
+
+  return el("div", { class: "take-list" }, list.element, el("div", { class: "none-row" }, none, showAll));
+}
+
+/** Where the value lies between the least and the greatest of all takes. */
+function bar(place: number | null): HTMLElement | null {
+  if (place === null) return null;
+  const filled = el("span", { class: "bar-fill" });
+  filled.style.setProperty("width", `${Math.round(place * 100)}%`);
+  return el("span", { class: "bar" }, filled);
+}
+
+function emptyWords(state: State, hidden: number): string {
+  const shown = throwOf(state);
+  if (hidden > 0) return "No take is so.";
+  if (!shown) return "There is no throw yet.";
+  return shown.stamp === undefined && shown.unheld.length === 0
+    ? "Its takes are being baked."
+    : "No take could be made.";
+}
