@@ -8,7 +8,7 @@ import { fromOrigin } from "../clip/time-grid.js";
 import { type Channel, type Track, trackBytes } from "../clip/track.js";
 import { length, ZERO } from "../math/vec3.js";
 import { nodeBall } from "./node-ball.js";
-import { leftAlone } from "./reducible.js";
+import { leftAlone, STILL_SCALE } from "./reducible.js";
 
 export interface ReduceOptions {
   /** No point of a node's geometry is moved further than this, scene frame, m. */
@@ -37,8 +37,8 @@ const LEAST_STEPS = 4 / 0x80_00_00;
  * toleranceMetres: 0.001 }))`. Translation and rotation of a node are cut together, by the same proof as throws: no point of the geometry at or
  * below the node is further than the tolerance from where the clip had it, at any time. The first and the last keys stay, to float32.
  *
- * What cannot be proved, or would not get smaller, is left as it was and told to `onClip`: other curves than linear ones, scaled or
- * morphing or skinned geometry, none at all, and nodes above or below others that the same clip moves.
+ * What cannot be proved, or would not get smaller, is left as it was and told to `onClip`: other curves than linear ones, a scale
+ * that changes, morphing geometry, none at all, and nodes above or below others that the same clip moves.
  */
 export function reduceRigidClips(options: ReduceOptions): (document: Document) => void {
   const { onClip = () => undefined } = options;
@@ -61,14 +61,15 @@ function reduced(
   node: Node,
   { toleranceMetres, keys = "linear" }: ReduceOptions,
 ): Omit<ReducedClip, "clip" | "node"> {
-  const channels = clip.listChannels().filter((channel) => channel.getTargetNode() === node);
+  const all = clip.listChannels().filter((channel) => channel.getTargetNode() === node);
+  const channels = all.filter((channel) => channel.getTargetPath() !== "scale");
   const left = (why: string) => ({ left: why, error: 0, bytes: { before, after: before } });
   let before = 0;
   for (const channel of channels) {
     const sampler = channel.getSampler();
     before += (sampler?.getInput()?.getByteLength() ?? 0) + (sampler?.getOutput()?.getByteLength() ?? 0);
   }
-  const reason = leftAlone(clip, node, channels);
+  const reason = leftAlone(clip, node, all);
   if (reason !== undefined) return left(reason);
   const of = (path: string) => channels.find((channel) => channel.getTargetPath() === path);
   const [translation, rotation] = [of("translation"), of("rotation")];
@@ -80,6 +81,8 @@ function reduced(
   };
   const ball = nodeBall(node);
   if (ball === undefined) return left("nothing at or below the node has geometry");
+  // as much as a scale that stands still may make of it
+  if (all.length > channels.length) ball.radius += STILL_SCALE * (length(ball.center) + ball.radius);
   // Turned about its own origin alone, or not at all, the node needs only that.
   const body: Body = !rotation
     ? { centerOfMass: ZERO, axes: [0, 0, 0, 1], reach: 0 }

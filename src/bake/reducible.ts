@@ -1,5 +1,8 @@
 import type { Animation, AnimationChannel, Node } from "@gltf-transform/core";
 
+/** Share by which the keys of a scale that stands still may differ from the node's own: what exporters that sample a pose leave. */
+export const STILL_SCALE = 1e-4;
+
 /** Why a node's part of a clip is no rigid motion that can be proved; undefined where it is one. */
 export function leftAlone(
   clip: Animation,
@@ -8,12 +11,14 @@ export function leftAlone(
 ): string | undefined {
   const paths = channels.map((channel) => channel.getTargetPath());
   for (const [i, path] of paths.entries()) {
+    if (path === "scale" && standsStill(node, channels[i])) continue;
     if (path !== "translation" && path !== "rotation") return `it animates ${path} too`;
     if (paths.indexOf(path) !== i) return `it has two channels for ${path}`;
   }
   for (const channel of channels) {
     const sampler = channel.getSampler();
     const path = channel.getTargetPath();
+    if (path === "scale") continue;
     if (sampler?.getInterpolation() !== "LINEAR")
       return `its ${path} is ${sampler?.getInterpolation()}, not LINEAR`;
     const fault = keysFault(channel);
@@ -25,7 +30,6 @@ export function leftAlone(
   let reason: string | undefined;
   node.traverse((below) => {
     if (below !== node && moved.has(below)) reason ??= `it moves the node "${below.getName()}" below too`;
-    if (below.getSkin()) reason ??= `"${below.getName()}" has a skin, which its joints move`;
     if (
       below
         .getMesh()
@@ -33,10 +37,22 @@ export function leftAlone(
         .some((primitive) => primitive.listTargets().length > 0)
     )
       reason ??= `"${below.getName()}" morphs`;
-    if (below.listParents().some((parent) => parent.propertyType === "Skin"))
-      reason ??= `"${below.getName()}" is a joint of a skin`;
   });
   return reason;
+}
+
+/** Whether a scale's keys are all the node's own: between equal keys a line or step is still. */
+function standsStill(node: Node, channel: AnimationChannel): boolean {
+  const sampler = channel.getSampler();
+  const output = sampler?.getOutput();
+  if (!output || sampler?.getInterpolation() === "CUBICSPLINE") return false;
+  const own = node.getScale();
+  const element: number[] = [];
+  for (let i = 0; i < output.getCount(); i++) {
+    output.getElement(i, element);
+    if (!own.every((s, axis) => Math.abs(element[axis] - s) <= STILL_SCALE * Math.abs(s))) return false;
+  }
+  return true;
 }
 
 function keysFault(channel: AnimationChannel): string | undefined {

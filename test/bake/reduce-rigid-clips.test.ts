@@ -1,7 +1,7 @@
 import RAPIER from "@dimforge/rapier3d-compat";
 import { type Animation, Document, type Node, NodeIO } from "@gltf-transform/core";
 import { ALL_EXTENSIONS } from "@gltf-transform/extensions";
-import { AnimationMixer, type Object3D, Vector3 } from "three";
+import { AnimationMixer, type Object3D, type SkinnedMesh, Vector3 } from "three";
 import { GLTFLoader } from "three/examples/jsm/loaders/GLTFLoader.js";
 import { beforeAll, describe, expect, it } from "vitest";
 import { type ReducedClip, reduceRigidClips } from "../../src/bake/reduce-rigid-clips.js";
@@ -116,8 +116,11 @@ function vertices(scene: Object3D): Vector3[] {
     // biome-ignore lint/suspicious/noExplicitAny: a mesh or points
     const positions = (object as any).geometry?.getAttribute("position");
     const step = Math.max(1, Math.floor((positions?.count ?? 0) / 12));
-    for (let i = 0; i < (positions?.count ?? 0); i += step)
-      found.push(new Vector3().fromBufferAttribute(positions, i).applyMatrix4(object.matrixWorld));
+    for (let i = 0; i < (positions?.count ?? 0); i += step) {
+      const place = new Vector3().fromBufferAttribute(positions, i);
+      if ("isSkinnedMesh" in object) (object as SkinnedMesh).applyBoneTransform(i, place);
+      found.push(place.applyMatrix4(object.matrixWorld));
+    }
   });
   return found;
 }
@@ -202,5 +205,64 @@ describe("one channel alone", () => {
     const { before, after, reports } = await reduce(document, { toleranceMetres: 0.001 });
     expect(reports[0].left).toBeUndefined();
     expect(await apart(before, after, "drop")).toBeLessThanOrEqual(reports[0].error + 1e-6);
+  });
+});
+
+describe("what exporters write of rigid pieces", () => {
+  it("is cut all the same: a scale that stands still", async () => {
+    const document = await recordedBox();
+    const [clip] = document.getRoot().listAnimations();
+    const [node] = document.getRoot().listNodes();
+    node.setScale([1.5, 1.5, 1.5]);
+    addChannel(document, clip, node, "scale", [0, 1, 2], [1.5, 1.5, 1.5, 1.50001, 1.5, 1.5, 1.5, 1.5, 1.5]);
+    const { before, after, reports } = await reduce(document, { toleranceMetres: 0.001 });
+    expect(reports[0].left).toBeUndefined();
+    expect(await apart(before, after, "drop")).toBeLessThanOrEqual(reports[0].error + 1e-6);
+  });
+
+  it("is cut within the tolerance where two joints share a skin's vertices", async () => {
+    const document = await recordedBox();
+    const [clip] = document.getRoot().listAnimations();
+    const [joint] = document.getRoot().listNodes();
+    const [scene] = document.getRoot().listScenes();
+    const mesh = joint.getMesh()!;
+    joint.setMesh(null);
+    const other = document.createNode("other").setTranslation([0, 0.3, 0]);
+    const times = Array.from({ length: 240 }, (_, i) => i / 100);
+    const turn = times.flatMap((t) => [Math.sin(4 * t), 0, 0, Math.cos(4 * t)]);
+    addChannel(document, clip, other, "rotation", times, turn);
+    const [buffer] = document.getRoot().listBuffers();
+    const accessor = (type: "VEC4" | "MAT4", array: Float32Array | Uint16Array) =>
+      document.createAccessor().setType(type).setArray(array).setBuffer(buffer);
+    const lift = (y: number) => [1, 0, 0, 0, 0, 1, 0, 0, 0, 0, 1, 0, 0, y, 0, 1];
+    const skin = document
+      .createSkin()
+      .addJoint(joint)
+      .addJoint(other)
+      .setInverseBindMatrices(accessor("MAT4", Float32Array.from([...lift(0), ...lift(-0.3)])));
+    // Corner by corner more of the second joint.
+    mesh
+      .listPrimitives()[0]
+      .setMode(4)
+      .setAttribute(
+        "JOINTS_0",
+        accessor(
+          "VEC4",
+          new Uint16Array(32).map((_, i) => (i % 4 === 1 ? 1 : 0)),
+        ),
+      )
+      .setAttribute(
+        "WEIGHTS_0",
+        accessor(
+          "VEC4",
+          Float32Array.from({ length: 32 }, (_, i) => [7 - (i >> 2), i >> 2, 0, 0][i % 4] / 7),
+        ),
+      );
+    scene.addChild(other).addChild(document.createNode("shown").setMesh(mesh).setSkin(skin));
+    const { before, after, reports } = await reduce(document, { toleranceMetres: 0.001 });
+    expect(reports.map(({ left }) => left)).toEqual([undefined, undefined]);
+    const shown = await apart(before, after, "drop");
+    expect(shown).toBeGreaterThan(1e-4);
+    expect(shown).toBeLessThanOrEqual(Math.max(...reports.map(({ error }) => error)) + 1e-6);
   });
 });
