@@ -13,6 +13,7 @@ import { type Compared, compared, type Nearest } from "./nearest.js";
 import type { TakeNote } from "./notes.js";
 import type { LoadedProp } from "./props.js";
 import { cutTake, solveTake, type Take } from "./take.js";
+import { takeDoubts } from "./take-doubts.js";
 
 /** A take and the clip that was made of it. */
 export interface BakedTake {
@@ -66,7 +67,7 @@ export const takeNote = ({ name, take }: Pick<BakedTake, "name" | "take">): Take
   name,
   take: take.number,
   greatestRate: take.flight.greatestRate,
-  warnings: "warnings" in take.aimed ? take.aimed.warnings : [],
+  warnings: [...takeDoubts(take.flight.launch), ...("warnings" in take.aimed ? take.aimed.warnings : [])],
 });
 
 /** What of a take goes into a file. */

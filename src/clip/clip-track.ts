@@ -30,6 +30,9 @@ export interface ClipStyle {
   frameRate?: number;
 }
 
+/** m: what is thrown further than this is more likely thrown in another unit. */
+const ANOTHER_UNIT = 500;
+
 /** m a point may be moved by int16 keys, for each m from the origin, and as much again for the search's room. */
 const INT16_TURN = 2.5e-4;
 
@@ -84,12 +87,18 @@ const standing = (flight: Flight): Flight => ({
 });
 
 function tooFine(flight: Flight, body: Body, tolerance: number, least: number): RequestError {
-  const far = greatestCoordinate(flight, body).toPrecision(2);
+  const far = Number(greatestCoordinate(flight, body).toPrecision(2));
   // Two digits, rounded up.
   const needed = Number((1.06 * least).toPrecision(2));
+  if (far >= ANOTHER_UNIT)
+    return new RequestError(
+      ["bake", "tolerance"],
+      `the flight goes up to ${far} m from the world's origin, where the keys' numbers cannot hold a tolerance of ${tolerance} m`,
+      `likeliest the places are meant in another unit: write metres (1.2 for 1200 mm), or name the unit with host.unit; else needs at least ${needed} m`,
+    );
   return new RequestError(
     ["bake", "tolerance"],
-    `a tolerance of ${tolerance} m is finer than the keys' numbers can hold over ${flight.duration} s and up to ${Number(far)} m from the world's origin`,
+    `a tolerance of ${tolerance} m is finer than the keys' numbers can hold over ${flight.duration} s and up to ${far} m from the world's origin`,
     `needs at least ${needed} m`,
   );
 }

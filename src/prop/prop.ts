@@ -5,12 +5,14 @@ import { IDENTITY, type Quat } from "../math/quat.js";
 import { RequestError } from "../math/request-error.js";
 import { scale as scaleVector, type Vec3 } from "../math/vec3.js";
 import type { Density } from "./density.js";
+import { doubts } from "./doubts.js";
 import { combine, type MassProperties, pointMass, scaleDensity, scaleLengths } from "./mass.js";
 import { USUAL_WALL } from "./mass-of-surfaces.js";
 import { type Matter, measureModel, measureShape } from "./measure.js";
 import { type AxisNames, axisNames, type Principal, principalAxes } from "./principal.js";
 import type { Shape } from "./shape-kind.js";
 import { statedInertia } from "./stated-inertia.js";
+import { boxOf } from "./vertex.js";
 
 /** A place of the prop, and axes there. */
 export interface NamedPoint {
@@ -91,6 +93,7 @@ export async function weigh(name: string, source: Model | Shape, options: PropOp
     : measureShape(name, source, matter));
   const body = settleMass(measured.body && scaleLengths(measured.body, scale), options);
   const reach = measured.reachFrom(scaleVector(body.centerOfMass, 1 / scale)) * scale;
+  const extremes = scale === 1 ? measured.extremes : measured.extremes.map((value) => value * scale);
   return {
     name,
     ...body,
@@ -98,11 +101,11 @@ export async function weigh(name: string, source: Model | Shape, options: PropOp
     names: axisNames(body.inertia),
     reach,
     size: scaleVector(measured.size, scale),
-    extremes: scale === 1 ? measured.extremes : measured.extremes.map((value) => value * scale),
+    extremes,
     points: namedPoints(options.points ?? {}, source, scale),
     scale,
     ...(node && { node }),
-    warnings: [...measured.warnings, ...reachWarnings(reach)],
+    warnings: [...measured.warnings, ...doubts(options, body, boxOf(extremes)), ...reachWarnings(reach)],
   };
 }
 
