@@ -48,15 +48,19 @@ export function planOf(file: ThrowFile, options: PlanOptions = {}): Planned[] {
   const all = selectTakes(
     [
       ...chosen(file.throws.values()),
-      ...chosen(file.chains.values()).map((entry): ChosenChain => {
-        const { prop, takes } = file.throws.get(entry.throws[0]) as ThrowEntry;
-        return { ...entry, prop, takes };
-      }),
+      ...chosen(file.chains.values()).map(({ name }) => chosenNamed(file, name)),
     ],
     takes,
   );
   checkCounts(file, all);
   return shard ? all.map(({ entry, numbers }) => ({ entry, numbers: shareOf(numbers, shard) })) : all;
+}
+
+/** A throw or chain that the file has. */
+export function chosenNamed(file: ThrowFile, name: string): ThrowEntry | ChosenChain {
+  const chain = file.chains.get(name);
+  const entry = file.throws.get(chain ? chain.throws[0] : name) as ThrowEntry;
+  return chain ? { ...chain, prop: entry.prop, takes: entry.takes } : entry;
 }
 
 /** @throws RequestError where there is none */

@@ -1,144 +1,121 @@
 import { Command } from "commander";
-import { bake } from "../bake/bake.js";
-import type { TakeWarning } from "../bake/notes.js";
 import { RequestError } from "../math/request-error.js";
-import { mergeRecord } from "../node/kept-record.js";
-import { writeFiles } from "../node/output-folder.js";
-import { spareInputs } from "../node/spare-inputs.js";
-import { openThrowFile } from "../node/throw-file.js";
-import type { ClipRecord, TakesRecord } from "../record/clip-record.js";
-import { formatRecord } from "../record/format.js";
-import { recordOf } from "../record/record-of.js";
+import { bakeFolder } from "../node/bake-folder.js";
+import { Interrupted, watchForStop } from "../node/interrupted.js";
+import { type OpenedThrowFile, openThrowFile } from "../node/throw-file.js";
+import { bakeReport, noteLines } from "./bake-report.js";
 import { ExitCode } from "./exit-code.js";
+import { jobCount } from "./job-count.js";
 import { progress } from "./progress.js";
-import { span, table } from "./table.js";
-import { takeList } from "./take-list.js";
+import { shardOf } from "./shard-of.js";
 import { takeRange } from "./take-range.js";
 
 interface Options {
   output?: string;
   only?: string[];
   takes?: [number, number];
+  jobs?: number;
+  shard?: { index: number; of: number };
+  resume?: boolean;
   dryRun?: boolean;
   json?: boolean;
 }
 
-/** A take that is further from its mark than this, in m or rad, has missed it. */
-const MISS_METRES = 1e-4;
-const MISS_RADIANS = (0.01 * Math.PI) / 180;
-
 export const bakeCommand = (answer: (code: number) => void) =>
   new Command("bake")
     .description("solve every throw of a throw file and write its clips and takes.json")
-    .argument("<throwfile>", "what is thrown and how (YAML or JSON)")
+    // optional for the parser alone: the names after --only take up a throw file behind them
+    .argument("[throwfile]", "what is thrown and how (YAML or JSON)")
+    .usage("[options] <throwfile>")
     .option("-o, --output <dir>", "folder for the clips; needed unless --dry-run")
     .option("--only <name...>", "these throws and chains alone; others' clips and records stay as they are")
-    .option("--takes <a-b>", "these takes alone, such as 3-7; with --dry-run", takeRange)
+    .option(
+      "--takes <a-b>",
+      "these takes alone, such as 3-7; with --dry-run or with bake: { files: per-take }",
+      takeRange,
+    )
+    .option("--jobs <n>", "threads that share the work; default the cores, for the same bytes", jobCount)
+    .option("--resume", "go on where a bake into this folder was stopped")
+    .option(
+      "--shard <i/n>",
+      "this machine's share of the takes, such as 2/8, with bake: { files: per-take }; tossbake merge puts them together",
+      shardOf,
+    )
     .option("--dry-run", "solve and print, but write nothing")
     .option("--json", "print the record instead of the table")
     .addHelpText("after", "\nExample:\n  tossbake bake quay.throws.yaml -o out")
-    .action(async (path: string, options: Options) => {
-      if (options.takes && !options.dryRun)
-        throw new RequestError(
-          ["--takes"],
-          "a throw's file holds all its takes, so that some of them cannot be written alone",
-          "add --dry-run to see them, or list the takes wanted under the throw's own takes",
-        );
-      const { output } = options;
-      if (output === undefined && !options.dryRun)
+    .action(async (path: string | undefined, options: Options, command: Command) => {
+      const only = options.only && [...options.only];
+      // no throw has a dot in its name
+      const throwFile = path ?? (only?.at(-1)?.includes(".") ? only.pop() : undefined);
+      if (throwFile === undefined) return command.error("error: missing required argument 'throwfile'");
+      const { output, dryRun = false } = options;
+      if (output === undefined && !dryRun)
         throw new RequestError(["--output"], "no folder is named to write to", "add -o DIR, or --dry-run");
-      const { file, text, models, inputs } = await openThrowFile(path);
-      const shown = progress();
-      const { only, takes } = options;
-      const baked = await bake(file, models, { only, takes, onTake: shown.update }).finally(shown.end);
-      const fresh = await recordOf(file, text, baked);
-      if (output !== undefined && !options.dryRun) {
-        const record = await mergeRecord(output, fresh, file);
-        const files = [...baked.files, { name: "takes.json", content: formatRecord(record) }];
-        await spareInputs(
-          output,
-          files.map(({ name }) => name),
-          inputs,
-        );
-        await writeFiles(output, files);
-      }
-      const notes = [...baked.warnings, ...baked.notes.flatMap(({ warnings }) => warnings).map(warningText)];
-      if (options.json) {
-        process.stdout.write(formatRecord(fresh));
-        for (const note of notes) process.stderr.write(`${note}\n`);
-      } else process.stdout.write(report(fresh, notes, options));
-      for (const { name, reason } of baked.unheld)
-        process.stderr.write(`${name} is left out: ${reason.message}\n`);
-      if (fresh.clips.some(missed) || baked.unheld.length > 0) answer(ExitCode.checkFailed);
+      const opened = await openThrowFile(throwFile);
+      checkTakes(opened, options);
+      await bakeAndTell(throwFile, opened, { ...options, only }, answer);
     });
 
-const missed = ({ miss }: ClipRecord) =>
-  (miss.position ?? 0) > MISS_METRES || (miss.angle ?? 0) > MISS_RADIANS;
-
-function warningText({ throwName, takes, text, differs }: TakeWarning): string {
-  const more = differs ? ` (take ${takes[0]}; other numbers for the others)` : "";
-  return `${throwName}, ${takeList(takes)}: ${text}${more}`;
+async function bakeAndTell(
+  path: string,
+  opened: OpenedThrowFile,
+  { only, takes, shard, jobs, resume, dryRun = false, json = false, output }: Options,
+  answer: (code: number) => void,
+): Promise<void> {
+  const shown = progress();
+  const stop = watchForStop();
+  let counts: [number, number] = [0, 0];
+  const printed: string[] = [];
+  try {
+    const report = await bakeFolder(path, opened, dryRun ? undefined : output, {
+      only,
+      takes,
+      shard,
+      jobs,
+      resume,
+      signal: stop.signal,
+      onTakes: (done, total) => {
+        counts = [done, total];
+        shown.update(done, total);
+      },
+      onNote: (text) => process.stderr.write(`${text}\n`),
+      ...(json && { shown: { write: async (text) => void printed.push(text) } }),
+    }).finally(shown.end);
+    if (json) for (const text of printed) process.stdout.write(text);
+    else
+      process.stdout.write(
+        bakeReport(
+          report,
+          dryRun ? ", nothing written (--dry-run)" : ` written to ${output}${withRecord(shard)}`,
+        ),
+      );
+    for (const line of [...(json ? noteLines(report) : []), ...leftOut(report.left)])
+      process.stderr.write(`${line}\n`);
+    if (report.throws.some(({ missed }) => missed.length > 0) || report.left.length > 0)
+      answer(ExitCode.checkFailed);
+  } catch (error) {
+    if (!(error instanceof Interrupted)) throw error;
+    const kept = dryRun
+      ? ""
+      : `; what is done is kept, and the same command with --resume goes on from there`;
+    throw new Interrupted(`stopped after ${counts[0]} of ${counts[1]} takes${kept}`);
+  } finally {
+    stop.end();
+  }
 }
 
-function missLine({ name, miss }: ClipRecord): string {
-  const ways = [
-    (miss.position ?? 0) > MISS_METRES
-      ? [`its mark by ${((miss.position ?? 0) * 1000).toPrecision(3)} mm`]
-      : [],
-    (miss.angle ?? 0) > MISS_RADIANS
-      ? [`its orientation by ${(((miss.angle ?? 0) * 180) / Math.PI).toPrecision(3)}°`]
-      : [],
-  ];
-  return `${name} misses ${ways.flat().join(" and ")}`;
-}
+const withRecord = (shard?: Options["shard"]) =>
+  shard ? `: shard ${shard.index} of ${shard.of}, for tossbake merge` : ", with takes.json";
 
-function report(record: TakesRecord, notes: readonly string[], options: Options): string {
-  const names = [...new Set(record.clips.map((clip) => clip.throw))];
-  const rows = names.map((name) => {
-    const clips = record.clips.filter((clip) => clip.throw === name);
-    return [
-      name,
-      clips[0].prop,
-      String(clips.length),
-      span(
-        clips.map((clip) => clip.duration),
-        2,
-      ),
-      span(
-        clips.map((clip) => clip.turns),
-        2,
-      ),
-      span(
-        clips.map((clip) => clip.keys.translation + clip.keys.rotation),
-        0,
-      ),
-      span(
-        clips.map((clip) => clip.bytes),
-        0,
-      ),
-      Math.max(...clips.map((clip) => clip.error * 1000)).toFixed(3),
-      clips[0].file,
-    ];
-  });
-  const warnings = Object.entries(record.props).flatMap(([name, prop]) =>
-    prop.warnings.map((text) => `${name}: ${text}`),
-  );
-  const misses = record.clips.filter(missed).map(missLine);
-  const head = ["throw", "prop", "takes", "time s", "turns", "keys", "bytes/clip", "within mm", "file"];
-  const end = options.dryRun
-    ? ", nothing written (--dry-run)"
-    : ` written to ${options.output}, with takes.json`;
-  return `${table(head, rows)}\n\n${[...warnings, ...notes, ...misses].map((line) => `${line}\n`).join("")}${counted(record.clips.length, "take")} of ${whatIsIn(record)}${end}\n`;
-}
+const leftOut = (left: readonly { name: string; reason: string }[]) =>
+  left.map(({ name, reason }) => `${name} is left out: ${reason}`);
 
-function whatIsIn({ clips }: TakesRecord): string {
-  const names = (isChain: boolean) =>
-    new Set(clips.filter(({ parts }) => (parts !== undefined) === isChain).map((clip) => clip.throw)).size;
-  const [throws, chains] = [names(false), names(true)];
-  return [
-    ...(throws > 0 || chains === 0 ? [counted(throws, "throw")] : []),
-    ...(chains > 0 ? [counted(chains, "chain")] : []),
-  ].join(" and ");
+function checkTakes({ file }: OpenedThrowFile, { takes, dryRun }: Options): void {
+  if (takes && !dryRun && file.bake.files !== "per-take")
+    throw new RequestError(
+      ["--takes"],
+      "a throw's file holds all its takes, so that some of them cannot be written alone",
+      "add --dry-run to see them, list the takes wanted under the throw's own takes, or write bake: { files: per-take }",
+    );
 }
-
-const counted = (count: number, what: string) => `${count} ${what}${count === 1 ? "" : "s"}`;

@@ -3,6 +3,7 @@
 import { Command, CommanderError } from "commander";
 import { ModelError } from "../gltf/model.js";
 import { RequestError } from "../math/request-error.js";
+import { Interrupted } from "../node/interrupted.js";
 import { MachineError } from "../node/machine-error.js";
 import { VERSION } from "../record/version.js";
 import { ThrowFileError } from "../throwfile/errors.js";
@@ -62,6 +63,10 @@ function explain(error: unknown): number {
   if (error instanceof ThrowFileError || error instanceof ModelError || error instanceof RequestError) {
     process.stderr.write(`${error.message}\n`);
     return ExitCode.wrongRequest;
+  }
+  if (error instanceof Interrupted) {
+    process.stderr.write(`${error.message}\n`);
+    return ExitCode.interrupted;
   }
   process.stderr.write(error instanceof MachineError ? `${error.message}\n` : ownFault(error));
   return ExitCode.machine;

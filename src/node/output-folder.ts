@@ -32,11 +32,18 @@ export async function writeFiles(folder: string, files: readonly OutputFile[]): 
     for (const file of staged) await rename(file.temporary, file.path);
   } catch (error) {
     for (const file of staged) await rm(file.temporary, { force: true }).catch(() => undefined);
-    throw new MachineError(
-      `${folder}: cannot be written (${reason(error)}); choose a folder that can, with -o`,
-    );
+    throw unwritable(folder, error);
   }
 }
+
+/** What the machine says of a folder that it will not write to. */
+export const unwritable = (folder: string, error: unknown): MachineError =>
+  error instanceof MachineError
+    ? error
+    : new MachineError(
+        `${folder}: cannot be written (${reason(error)}); choose a folder that can, with -o`,
+        ["ENOSPC", "EDQUOT"].includes(String((error as NodeJS.ErrnoException).code)),
+      );
 
 // the process number keeps two bakes into one folder out of each other's temporary files
 const temporaryName = (folder: string, name: string) => join(folder, `.${name}.${process.pid}.part`);
@@ -49,7 +56,7 @@ async function removeLeftovers(folder: string): Promise<void> {
   }
 }
 
-function isRunning(id: number): boolean {
+export function isRunning(id: number): boolean {
   try {
     // signal 0 asks, and does nothing
     return process.kill(id, 0);
@@ -58,16 +65,24 @@ function isRunning(id: number): boolean {
   }
 }
 
-/** Not `mkdir`'s own recursion: it never ends where a folder takes no new ones and says that it is not there (/proc). */
-async function makeFolder(path: string): Promise<void> {
+/**
+ * Not `mkdir`'s own recursion: it never ends where a folder takes no new ones and says that it is not there (/proc).
+ *
+ * @returns the folders that it made, the outermost first
+ */
+export async function makeFolder(path: string): Promise<string[]> {
   try {
     await mkdir(path);
+    return [path];
   } catch (error) {
     const { code } = error as NodeJS.ErrnoException;
     if (code === "ENOENT" && dirname(path) !== path) {
-      await makeFolder(dirname(path));
+      const above = await makeFolder(dirname(path));
       await mkdir(path);
-    } else if (!(await isFolder(path))) throw error;
+      return [...above, path];
+    }
+    if (!(await isFolder(path))) throw error;
+    return [];
   }
 }
 
@@ -76,7 +91,7 @@ async function refuseFolder(path: string): Promise<void> {
   if (await isFolder(path)) throw Object.assign(new Error(path), { code: "EISDIR" });
 }
 
-const isFolder = (path: string): Promise<boolean> =>
+export const isFolder = (path: string): Promise<boolean> =>
   stat(path).then(
     (status) => status.isDirectory(),
     () => false,

@@ -20,8 +20,11 @@ export interface OpenedThrowFile {
 }
 
 /** @throws ThrowFileError for what is written in it, RequestError for a file that cannot be read */
-export async function openThrowFile(path: string): Promise<OpenedThrowFile> {
-  const text = await readThrowFile(path);
+export const openThrowFile = async (path: string): Promise<OpenedThrowFile> =>
+  openedText(path, await readThrowFile(path));
+
+/** The same, its text as somebody has read it. */
+export function openedText(path: string, text: string): OpenedThrowFile {
   const inputs = new Set([resolve(path)]);
   return {
     text,

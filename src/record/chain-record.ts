@@ -1,22 +1,24 @@
 /** The record of a chain's take. */
 
-import type { BakedChain, BakedChainTake } from "../bake/bake-chain.js";
+import type { BakedChainTake } from "../bake/bake-chain.js";
+import type { ChainTake } from "../bake/chain.js";
 import { hostFrame } from "../bake/host.js";
 import { axisShares, turnsAboutMomentum } from "../flight/turns.js";
 import type { Prop } from "../prop/prop.js";
-import type { ThrowFile } from "../throwfile/types.js";
+import type { ChainEntry, ThrowFile } from "../throwfile/types.js";
 import type { ClipRecord } from "./clip-record.js";
 import { missAngle, missedBy, trackRecord } from "./take-record.js";
 
 /** What a start taken from the throw before leaves of a throw's draws. */
 const REPLACED = /^release\.(at|facing|scatter)(\.|$)/;
 
+/** All but its nearest, which takes the others. */
 export function chainRecord(
   file: ThrowFile,
   prop: Prop,
-  { entry }: BakedChain,
-  baked: BakedChainTake,
-): ClipRecord {
+  entry: ChainEntry,
+  baked: Omit<BakedChainTake, "nearest">,
+): Omit<ClipRecord, "nearest"> {
   const { parts, track } = baked;
   const flights = parts.map(({ take }) => take.flight);
   return {
@@ -45,12 +47,11 @@ export function chainRecord(
       release,
       arrival,
     })),
-    nearest: baked.nearest,
   };
 }
 
 /** Of all parts, above the first one's release. */
-function highest(file: ThrowFile, { parts }: BakedChainTake): ClipRecord["apex"] {
+function highest(file: ThrowFile, { parts }: ChainTake): ClipRecord["apex"] {
   const [first] = parts;
   if (parts.every(({ take }) => take.turnsAlone)) return null;
   const tops = parts.map(({ take, start }) => ({
@@ -62,7 +63,7 @@ function highest(file: ThrowFile, { parts }: BakedChainTake): ClipRecord["apex"]
 }
 
 /** Keys with the throw's name before them. */
-const drawsOf = ({ parts }: BakedChainTake): ClipRecord["draws"] =>
+const drawsOf = ({ parts }: ChainTake): ClipRecord["draws"] =>
   Object.fromEntries(
     parts.flatMap(({ throw: name, take }, i) =>
       Object.entries(take.drawn.draws)

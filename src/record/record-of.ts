@@ -1,12 +1,13 @@
 /** The record of a bake. */
 
-import type { Bake, BakedTake, BakedThrow } from "../bake/bake.js";
+import type { Bake } from "../bake/bake.js";
+import type { BakedTake } from "../bake/bake-take.js";
 import { hostFrame } from "../bake/host.js";
 import type { LoadedProp } from "../bake/props.js";
 import { axisShares, turnsAboutMomentum } from "../flight/turns.js";
 import { textSha256 } from "../math/hash.js";
 import type { Prop } from "../prop/prop.js";
-import type { ThrowFile } from "../throwfile/types.js";
+import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
 import { chainRecord } from "./chain-record.js";
 import type { ClipRecord, PropRecord, TakesRecord } from "./clip-record.js";
 import { missAngle, missedBy, trackRecord } from "./take-record.js";
@@ -15,20 +16,37 @@ import { VERSION } from "./version.js";
 /** @param text of the throw file, for its hash */
 export async function recordOf(file: ThrowFile, text: string, bake: Bake): Promise<TakesRecord> {
   return {
-    format: 1,
-    tossbake: VERSION,
-    throwFile: { name: file.name.replace(/^.*[\\/]/, ""), sha256: await textSha256(text) },
-    props: Object.fromEntries(Array.from(bake.props, ([name, loaded]) => [name, propRecord(loaded)])),
+    ...(await recordHead(file, text, bake.props)),
     clips: [
       ...bake.throws.flatMap((baked) => {
         const { prop } = bake.props.get(baked.entry.prop) as LoadedProp;
-        return baked.takes.map((take) => clipRecord(file, prop, baked, take));
+        return baked.takes.map((take) => ({
+          ...clipRecord(file, prop, baked.entry, take),
+          nearest: take.nearest,
+        }));
       }),
       ...bake.chains.flatMap((chain) => {
         const { prop } = bake.props.get(chain.prop) as LoadedProp;
-        return chain.takes.map((take) => chainRecord(file, prop, chain, take));
+        return chain.takes.map((take) => ({
+          ...chainRecord(file, prop, chain.entry, take),
+          nearest: take.nearest,
+        }));
       }),
     ],
+  };
+}
+
+/** What stands before the clips. */
+export async function recordHead(
+  file: ThrowFile,
+  text: string,
+  props: ReadonlyMap<string, LoadedProp>,
+): Promise<Omit<TakesRecord, "clips">> {
+  return {
+    format: 1,
+    tossbake: VERSION,
+    throwFile: { name: file.name.replace(/^.*[\\/]/, ""), sha256: await textSha256(text) },
+    props: Object.fromEntries(Array.from(props, ([name, loaded]) => [name, propRecord(loaded)])),
   };
 }
 
@@ -47,8 +65,14 @@ export function propRecord({ prop, source, sha256 }: LoadedProp): PropRecord {
   };
 }
 
-function clipRecord(file: ThrowFile, prop: Prop, { entry }: BakedThrow, baked: BakedTake): ClipRecord {
-  const { take, track, release, arrival, nearest } = baked;
+/** All but its nearest, which takes the others. */
+export function clipRecord(
+  file: ThrowFile,
+  prop: Prop,
+  entry: ThrowEntry,
+  baked: Omit<BakedTake, "nearest">,
+): Omit<ClipRecord, "nearest"> {
+  const { take, track, release, arrival } = baked;
   const { flight, aimed } = take;
   const { before, after } = take.drawn.hold;
   return {
@@ -73,6 +97,5 @@ function clipRecord(file: ThrowFile, prop: Prop, { entry }: BakedThrow, baked: B
     candidate: take.candidate,
     draws: take.drawn.draws,
     flight: { start: before, time: flight.duration },
-    nearest,
   };
 }

@@ -165,7 +165,7 @@ describe("a bake that cannot be leaves its folder as it was", () => {
   it("where some throws are baked beside a record that is none", async () => {
     const place = new Workplace();
     mkdirSync(place.out);
-    writeFileSync(place.path("out", "takes.json"), "lost");
+    writeFileSync(place.path("out", "takes.json"), '{ "tossbake": "0.1.0", lost');
     const { code, err } = await run("bake", place.throwFile, "-o", place.out, "--only", "toss");
     expect(code).toBe(2);
     expect(err).toMatch(/takes\.json: is not JSON .*; bake again/);

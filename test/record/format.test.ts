@@ -1,6 +1,8 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { formatRecord } from "../../src/record/format.js";
+import type { ClipRecord, TakesRecord } from "../../src/record/clip-record.js";
+import { clipText, formatRecord, recordPieces, withNearest } from "../../src/record/format.js";
+import { bakeText, LOB } from "./lob.js";
 
 describe("a record as text", () => {
   it("has numbers of 12 significant digits, and writes 0 for what is nothing but rounding", () => {
@@ -52,5 +54,27 @@ describe("a record as text", () => {
     const clip = (turns: number) => ({ name: "lob_01", text: "x".repeat(80), turns, keys: [1, 2] });
     const [a, b] = [1.5, 1.75].map((turns) => formatRecord([clip(1), clip(turns)]).split("\n"));
     expect(a.filter((line, i) => line !== b[i])).toEqual(['    "turns": 1.5,']);
+  });
+});
+
+describe("a record written in pieces", () => {
+  const inPieces = ({ clips, ...head }: TakesRecord): string => {
+    const pieces = recordPieces(head);
+    const texts = clips.map(({ nearest, ...clip }: ClipRecord) => withNearest(clipText(clip), nearest));
+    return [
+      pieces.start,
+      ...texts.map((text, i) => pieces.clip(text, i === 0)),
+      pieces.end(texts.length === 0),
+    ].join("");
+  };
+
+  it("is the text of the whole, with no clip, one and several", async () => {
+    const { record } = await bakeText(LOB);
+    expect(record.clips[0].nearest).toBeNull();
+    expect(record.clips[1].nearest).not.toBeNull();
+    for (const count of [0, 1, 3]) {
+      const part = { ...record, clips: record.clips.slice(0, count) };
+      expect(inPieces(part)).toBe(formatRecord(part));
+    }
   });
 });
