@@ -7,6 +7,8 @@ import type { View } from "../stage.js";
 export interface Framing {
   /** World frame, m. */
   points: readonly Vector3[];
+  /** What is seen with them where the ground is seen from above. */
+  ground: readonly Vector3[];
   /** Room round each of them, m. */
   reach: number;
   /** Level direction of the flight, radians about +Y from +Z towards +X. */
@@ -72,7 +74,8 @@ export class CameraRig {
   }
 
   /** Puts the camera where the view has it at first. */
-  frame(view: View, { points, reach, heading }: Framing): void {
+  frame(view: View, { points: places, ground, reach, heading }: Framing): void {
+    const points = view === "free" ? [...places, ...ground] : places;
     this.view = view;
     // seen from the side the flight goes to the right: the picture's right is (sin heading, 0, cos heading)
     const side = heading - Math.PI / 2;

@@ -4,12 +4,18 @@ import { DoubleSide, DynamicDrawUsage, InstancedMesh, Matrix4, MeshLambertMateri
 import type { Vec3 } from "../../../math/vec3.js";
 import type { Body } from "./body.js";
 
+/** Of the colour: what light and shade make of it. */
+const OWN_SHADE = 0.4;
+
 export class Ghosts {
   readonly mesh: InstancedMesh;
   readonly #fromModel: Matrix4;
 
   constructor({ geometry }: Body, centerOfMass: Vec3, most: number, color: string) {
-    const material = new MeshLambertMaterial({ color, flatShading: true, side: DoubleSide });
+    const material = new MeshLambertMaterial({ flatShading: true, side: DoubleSide });
+    // half of it shines by itself, so that the shades stay pale
+    material.color.set(color).multiplyScalar(OWN_SHADE);
+    material.emissive.set(color).multiplyScalar(1 - OWN_SHADE);
     this.mesh = new InstancedMesh(geometry, material, Math.max(1, most));
     this.mesh.instanceMatrix.setUsage(DynamicDrawUsage);
     this.mesh.frustumCulled = false;
@@ -26,10 +32,6 @@ export class Ghosts {
       this.mesh.setMatrixAt(i, matrix.multiply(this.#fromModel));
     }
     this.mesh.instanceMatrix.needsUpdate = true;
-  }
-
-  set color(color: string) {
-    (this.mesh.material as MeshLambertMaterial).color.set(color);
   }
 
   dispose(): void {

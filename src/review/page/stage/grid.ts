@@ -95,7 +95,9 @@ export class Grid {
     const margin = 0.06 * (axis.high - axis.low);
     if (isFlat && axis.zero + value < axis.low + margin) return;
     if (!isFlat && i === 1) return;
-    this.#sprites.push(this.#labels.add(this.group, text, colors.scale, at(other.low), { anchor }));
+    this.#sprites.push(
+      this.#labels.add(this.group, text, colors.scale, at(other.low), { anchor, isFixed: true }),
+    );
   }
 }
 

@@ -18,7 +18,21 @@ const MARGIN = 3;
 export interface LabelPlace {
   /** Which of the text's points lies at the place: 0 to 1 from the left, and from below. */
   anchor?: readonly [number, number];
+  /** Stays where it is, whatever lies there too. */
+  isFixed?: boolean;
 }
+
+type LabelData = Required<LabelPlace> & { width: number; height: number };
+
+interface Box {
+  left: number;
+  top: number;
+  width: number;
+  height: number;
+}
+
+/** Lines by which a text may give way, upwards where negative. */
+const STEPS = [0, 0.9, -0.9, 1.8, -1.8, 2.7, -2.7, 3.6];
 
 export class Labels {
   readonly #made = new Map<string, { texture: CanvasTexture; width: number; height: number }>();
@@ -31,7 +45,7 @@ export class Labels {
     text: string,
     color: string,
     at: Vector3,
-    { anchor = [0.5, 0.5] }: LabelPlace = {},
+    { anchor = [0.5, 0.5], isFixed = false }: LabelPlace = {},
   ): Sprite {
     const { texture, width, height } = this.#texture(text, color);
     const sprite = new Sprite(
@@ -40,7 +54,7 @@ export class Labels {
     sprite.center.set(...anchor);
     sprite.position.copy(at);
     sprite.renderOrder = 20;
-    sprite.userData = { width, height };
+    sprite.userData = { width, height, anchor, isFixed } satisfies LabelData;
     this.#sprites.add(sprite);
     to.add(sprite);
     return sprite;
@@ -54,12 +68,25 @@ export class Labels {
     }
   }
 
-  /** Before each picture. */
+  /** Before each picture: sizes them, and moves those up or down that would lie on others. */
   fit(rig: CameraRig): void {
     const place = new Vector3();
+    const taken: Box[] = [];
     for (const sprite of this.#sprites) {
+      const { width, height, anchor, isFixed } = sprite.userData as LabelData;
       const metres = rig.metresPerPixel(sprite.getWorldPosition(place));
-      sprite.scale.set(sprite.userData.width * metres, sprite.userData.height * metres, 1);
+      sprite.scale.set(width * metres, height * metres, 1);
+      if (isFixed || !isShown(sprite)) continue;
+      const { x, y } = rig.project(place);
+      const boxAt = (lines: number): Box => ({
+        left: x - anchor[0] * width,
+        top: y - (1 - anchor[1] - lines) * height,
+        width,
+        height,
+      });
+      const lines = STEPS.find((step) => !taken.some((box) => overlap(box, boxAt(step)))) ?? 0;
+      sprite.center.set(anchor[0], anchor[1] + lines);
+      taken.push(boxAt(lines));
     }
   }
 
@@ -109,3 +136,15 @@ export class Labels {
     return made;
   }
 }
+
+function isShown(sprite: Sprite): boolean {
+  for (let object: Object3D | null = sprite; object; object = object.parent)
+    if (!object.visible) return false;
+  return true;
+}
+
+const overlap = (a: Box, b: Box): boolean =>
+  a.left < b.left + b.width &&
+  b.left < a.left + a.width &&
+  a.top + 3 < b.top + b.height &&
+  b.top + 3 < a.top + a.height;

@@ -1,16 +1,18 @@
 /** Draws the stage: what lies behind first, and nothing of it before what is looked at. */
 
 import {
+  type BufferGeometry,
   Color,
   DirectionalLight,
   HemisphereLight,
+  type Mesh,
   type Object3D,
   Scene,
+  type ShaderMaterial,
   Vector2,
   Vector3,
   WebGLRenderer,
 } from "three";
-import type { LineMaterial } from "three/examples/jsm/lines/LineMaterial.js";
 import type { CameraRig } from "./camera-rig.js";
 
 /** Above two pixels a pixel nobody sees a difference. */
@@ -51,8 +53,10 @@ export class StageRenderer {
     const size = this.#renderer.getSize(new Vector2());
     for (const scene of [this.behind, this.front])
       scene.traverseVisible((object) => {
-        const { material } = object as unknown as { material?: LineMaterial };
-        if (material?.isLineMaterial) material.resolution.copy(size);
+        // of lines and outlines, whose width is in pixels
+        (object as Partial<Mesh<BufferGeometry, ShaderMaterial>>).material?.uniforms?.resolution?.value.copy(
+          size,
+        );
       });
     this.#renderer.render(this.behind, camera);
     this.#renderer.clearDepth();

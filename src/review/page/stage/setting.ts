@@ -30,11 +30,14 @@ export function settingOf(course: Course, all: readonly (Course | undefined)[]):
     high.max(point);
   }
   const ahead = headingOf(placesOf(course));
+  const size = low.distanceTo(high);
   const origin = course.place(0, prop.centerOfMass);
   origin.y = groundBelow(course, low.y - prop.reach);
-  const room = new Vector3(1, 0, 1).multiplyScalar(prop.reach + 0.15 * low.distanceTo(high));
+  const room = new Vector3(1, 0, 1).multiplyScalar(prop.reach + 0.15 * size);
+  const isNear = low.y - origin.y < 0.6 * size;
+  const ground = isNear ? [low, high].map(({ x, z }) => new Vector3(x, origin.y, z)) : [];
   return {
-    framing: { points, reach: prop.reach, heading: Math.atan2(ahead.x, ahead.z) },
+    framing: { points, ground, reach: prop.reach, heading: Math.atan2(ahead.x, ahead.z) },
     grid: { origin, ahead, points },
     room: { low: low.sub(room), high: high.add(room) },
   };

@@ -15,7 +15,7 @@ import { PlayedTake } from "./played-take.js";
 const MOST_TRIANGLES = 60_000;
 const MOST_OF_ONE = 3000;
 /** Of the outline of the true flight. */
-const MOST_OF_OUTLINE = 400;
+const MOST_OF_OUTLINE = 12_000;
 
 export class ShownThrow {
   readonly takes: readonly StageTake[];
@@ -46,6 +46,7 @@ export class ShownThrow {
     const each = Math.floor(MOST_TRIANGLES / data.takes.length);
     shown.body = bodyOf(played.content, played.matrix(), prop, Math.max(80, Math.min(MOST_OF_ONE, each)));
     shown.outline = bodyOf(played.content, played.matrix(), prop, MOST_OF_OUTLINE);
+    shown.outline.geometry.computeVertexNormals();
     played.dispose();
     return shown;
   }

@@ -12,7 +12,6 @@ import {
 } from "three";
 import type { FlownPart, Mark } from "../../../bake/take-motion.js";
 import type { Labels } from "./labels.js";
-import { niceNumber } from "./nice-step.js";
 import type { Palette } from "./palette.js";
 import { discard, strokes } from "./strokes.js";
 
@@ -92,7 +91,7 @@ export class Surroundings {
     const size = Math.max(high.x - low.x, high.z - low.z);
     const dash: [number, number] | undefined = what === "floor" ? undefined : [size / 40, size / 60];
     this.group.add(strokes(lines, { color, width: 2, dash }));
-    const text = `${what} ${niceNumber(height, 0.01)} m`;
+    const text = `${what} ${Number(height.toFixed(3))} m`;
     this.#say(text, new Vector3(high.x, height, high.z), [0.5, what === "not above" ? -0.2 : 1.2], color);
   }
 

@@ -1,6 +1,6 @@
 /** The take that is looked at, with all that explains it; made anew when another one is. */
 
-import { EdgesGeometry, Group, type Mesh, MeshStandardMaterial, Vector3 } from "three";
+import { Group, type Mesh, MeshStandardMaterial, Vector3 } from "three";
 import type { Layer } from "../stage.js";
 import { Arrows } from "./arrows.js";
 import type { CameraRig } from "./camera-rig.js";
@@ -9,6 +9,7 @@ import type { Course } from "./course.js";
 import { Ghosts } from "./ghosts.js";
 import type { Labels } from "./labels.js";
 import { niceStep } from "./nice-step.js";
+import { outlineMesh } from "./outline-mesh.js";
 import type { Palette } from "./palette.js";
 import type { PlayedTake } from "./played-take.js";
 import type { ShownThrow } from "./shown-throw.js";
@@ -44,7 +45,7 @@ export class TakeScene {
   readonly #paths = new Group();
   readonly #arrows: Arrows;
   readonly #surroundings: Surroundings;
-  readonly #truth = new Group();
+  readonly #truth: ReturnType<typeof outlineMesh>;
   readonly #tint: MeshStandardMaterial;
   readonly #names: ReturnType<Labels["add"]>[] = [];
   readonly #pathNames: ReturnType<Labels["add"]>[] = [];
@@ -62,9 +63,11 @@ export class TakeScene {
     this.strobeStep = exposureStep(this.course, prop.reach);
     this.#strobe = this.#exposures();
     this.behind.add(this.#siblings.mesh, this.#strobe.mesh);
-    this.#arrows = new Arrows(labels, colors);
     this.#surroundings = new Surroundings(this.course.take.motion.parts, room, labels, colors);
-    this.#truth.add(this.#outline());
+    // what stays is written first: what moves gives way to it
+    this.#drawPaths();
+    this.#arrows = new Arrows(labels, colors);
+    this.#truth = outlineMesh(shown.outline, colors.truth);
     this.front.add(
       this.played.object,
       this.#paths,
@@ -72,7 +75,6 @@ export class TakeScene {
       this.#surroundings.group,
       this.#truth,
     );
-    this.#drawPaths();
     if (this.#second) this.#tintSecond();
   }
 
@@ -136,7 +138,7 @@ export class TakeScene {
     this.#arrows.dispose();
     this.#surroundings.dispose();
     this.#tint.dispose();
-    discard(this.#truth);
+    this.#truth.material.dispose();
     discard(this.#paths);
   }
 
@@ -146,24 +148,6 @@ export class TakeScene {
     const ghosts = new Ghosts(shown.body, shown.prop.centerOfMass, count, colors.strobe);
     ghosts.put(count, (i, out) => this.course.played(i * this.strobeStep, out));
     return ghosts;
-  }
-
-  #outline() {
-    const { shown, colors } = this.#options;
-    const { geometry } = shown.outline;
-    let edges = new EdgesGeometry(geometry, 25);
-    // of something smooth no edge is sharp
-    if (edges.getAttribute("position").count < 24) {
-      edges.dispose();
-      edges = new EdgesGeometry(geometry, 1);
-    }
-    const lines = strokes(edges.getAttribute("position").array, {
-      color: colors.truth,
-      width: 1.2,
-      through: true,
-    });
-    edges.dispose();
-    return lines;
   }
 
   #drawPaths(): void {
