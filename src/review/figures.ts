@@ -1,15 +1,17 @@
-/** Numbers and words as sheets write them. */
+/** Numbers and words as sheets write them; a figure and its unit stay on one line. */
+
+const KEPT = "\u00a0";
 
 /** "1.20 m" */
-export const metres = (value: number): string => `${fixed(value, 2)} m`;
+export const metres = (value: number): string => `${fixed(value, 2)}${KEPT}m`;
 
 /** "0.67 s" */
-export const seconds = (value: number): string => `${fixed(value, 2)} s`;
+export const seconds = (value: number): string => `${fixed(value, 2)}${KEPT}s`;
 
 /** "1.5 turns", "1 turn"; two decimals where there are any. */
 export function turnsText(turns: number): string {
   const text = String(Number(turns.toFixed(2)));
-  return `${text} ${text === "1" ? "turn" : "turns"}`;
+  return `${text}${KEPT}${text === "1" ? "turn" : "turns"}`;
 }
 
 /** Never "-0.00". */
@@ -30,4 +32,4 @@ export const capital = (text: string): string => text.charAt(0).toUpperCase() + 
 
 /** A small distance: "3 mm", "0.12 m". */
 export const numeralMetres = (value: number): string =>
-  value < 0.1 ? `${Number((value * 1000).toPrecision(2))} mm` : metres(value);
+  value < 0.1 ? `${Number((value * 1000).toPrecision(2))}${KEPT}mm` : metres(value);

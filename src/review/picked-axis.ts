@@ -3,7 +3,7 @@
 import type { Flight } from "../flight/flight.js";
 import { acos } from "../math/elementary.js";
 import { conjugate, multiply, rotate, rotateBack } from "../math/quat.js";
-import { addScaled, dot, length, normalize, perpendicular, type Vec3 } from "../math/vec3.js";
+import { addScaled, dot, length, normalize, perpendicular, scale, type Vec3 } from "../math/vec3.js";
 import { tieGroups } from "../prop/principal.js";
 import type { Stretch } from "./course.js";
 import type { SheetProp, SheetTake } from "./sheet-input.js";
@@ -43,7 +43,9 @@ export function turningOf(prop: SheetProp, take: SheetTake, stretch: Stretch): T
     return { axis: axisOf(0), name: "long", across: axisOf(1), isSpun: true, ...still };
   const seen = stretch.flight ? knownTurning(stretch.flight) : seenTurning(prop, take, stretch);
   const picked = pick(seen);
-  const axis = rotate(prop.axes, picked.axis);
+  // the axis that is spun points as the right hand has it
+  const sign = picked.isSpun && dot(picked.axis, seen.start) < 0 ? -1 : 1;
+  const axis = scale(rotate(prop.axes, picked.axis), sign);
   const across = rotate(prop.axes, picked.across);
   let sway = 0;
   let side = 0;

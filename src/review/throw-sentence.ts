@@ -25,10 +25,10 @@ export function throwSentence(prop: SheetProp, take: SheetTake, told: readonly T
   const still = standing(take, stretch);
   if (!stretch.travels)
     return `${who} ${turning}, in ${seconds(stretch.to - stretch.from)}: the turning alone, about its centre of mass${still}.`;
-  return `${who} ${courseWords(take, stretch)} and ${turning}${still}.`;
+  return `${who} ${courseWords(take, stretch)}, and ${turning}${still}.`;
 }
 
-/** "flies 3.00 m, from a height of 1.20 m over 1.73 m to 1.25 m, in 0.67 s," */
+/** "flies 3.00 m, from a height of 1.20 m over 1.73 m to 1.25 m, in 0.67 s" */
 export function courseWords({ motion }: SheetTake, { from, to, part }: Stretch): string {
   const place = (t: number, offset: Vec3): Vec3 =>
     add(motion.centerOfMass(t), rotate(motion.rotation(t), offset));
@@ -39,7 +39,7 @@ export function courseWords({ motion }: SheetTake, { from, to, part }: Stretch):
   const top = apex != null && apex > from && apex < to ? motion.centerOfMass(apex)[1] : undefined;
   const isHigher = top !== undefined && top > Math.max(start[1], end[1]) + 0.005;
   const over = isHigher ? `over a top at ${metres(top)} ` : "";
-  return `flies ${metres(length([x, 0, z]))}, from a height of ${metres(start[1])} ${over}to ${metres(end[1])}, in ${seconds(to - from)},`;
+  return `flies ${metres(length([x, 0, z]))}, from a height of ${metres(start[1])} ${over}to ${metres(end[1])}, in ${seconds(to - from)}`;
 }
 
 function standing({ motion }: SheetTake, { from, to }: Stretch): string {

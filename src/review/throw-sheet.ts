@@ -145,7 +145,7 @@ function captioned(panel: ArcPanel, { told, view }: ArcInput, take: SheetTake): 
 function signs(told: readonly Told[], view: View): string {
   const parts = told.flatMap(({ stretch }) => stretch.part ?? []);
   const isAsked = parts.some(({ release, arrival }) => release.asked || arrival.asked);
-  if (view.name === "above" || told.length > 1) return "";
+  if (view.name === "above" || told[0].exposures[0].number > 1) return "";
   return ` Line: the way of its centre of mass. Square: where it is let go and where it ends${isAsked ? "; ring: the place asked for" : ""}.`;
 }
 

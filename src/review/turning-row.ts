@@ -35,7 +35,7 @@ const NARROWEST = 58;
 /** Times the prop's reach: the picked axis's long end, its short end, the arm square to it. */
 const ROD = 1.12;
 const TAIL = 0.45;
-const ARM = 0.62;
+const ARM = 0.78;
 const DETAIL = 0.35;
 const LINES = 3;
 /** One axis needs no dashes to be told from others. */
