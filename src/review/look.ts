@@ -52,11 +52,13 @@ const STYLES = {
   body: outline(BODY, INK, 0.8),
   picked: outline(BODY, INK, 1.6),
   ghost: outline(PALE, HAIR, 0.6),
+  /** The prop as it once flew, over how it does now: empty and dashed. */
+  "body-before": line(SEA, 1.2, { "stroke-dasharray": "4 2.6" }),
   /** Edges within an outline. */
   crease: line(FAINT, 0.5),
   /** The centre of mass's way, and a second one beside it. */
   path: line(INK, 1.1),
-  "path-before": line(FAINT, 1.1, { "stroke-dasharray": "5 3" }),
+  "path-before": line(SEA, 1.1, { "stroke-dasharray": "5 3" }),
   /** The three principal axes: told apart by their dashes where colours are not seen. */
   long: line(RUST, 1.6),
   middle: line(SEA, 1.6, { "stroke-dasharray": "7 3" }),
@@ -70,6 +72,7 @@ const STYLES = {
   met: { fill: RUST, stroke: PAPER, "stroke-width": 0.8 },
   /** Centre of mass, origin, named points. */
   spot: { fill: INK, stroke: PAPER, "stroke-width": 0.8 },
+  "spot-before": line(SEA, 1.2, { fill: PAPER }),
   sight: line(INK, 1.1),
   /** Floors, limits and boxes. */
   floor: line(FAINT, 1.4),
