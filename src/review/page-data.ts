@@ -1,6 +1,7 @@
 /** What the preview page is told of a bake: plain data, lengths in metres in glTF's world unless said otherwise. */
 
 import type { Bake } from "../bake/bake.js";
+import { takeNote } from "../bake/bake-take.js";
 import { clipName, fileName } from "../bake/files.js";
 import { chainMotion, type TakeMotion, takeMotion } from "../bake/take-motion.js";
 import type { Quat } from "../math/quat.js";
@@ -75,6 +76,8 @@ export interface PageTake {
   file: string;
   /** Name of the animation in it. */
   clip: string;
+  /** What is to be known of it, in words; none where only a record is known. */
+  warnings?: readonly string[];
 }
 
 /** The throw file as it is baked for the page: one .glb for each throw, with its mesh, whatever files are asked for. */
@@ -138,6 +141,9 @@ const pageProp = (prop: Prop): PageProp => ({
 export function pageThrows(file: ThrowFile, bake: Bake, record: TakesRecord): PageThrow[] {
   const records = new Map(record.clips.map((clip) => [clip.name, clip]));
   const motions = motionsOf(file, bake);
+  const warnings = new Map(
+    bake.throws.flatMap(({ takes }) => takes.map((take) => [take.name, takeNote(take).warnings])),
+  );
   const unheld = new Map(bake.unheld.map(({ name, reason }) => [name, reason.message]));
   return pageHead(file).throws.flatMap((shown) => {
     const { prop, clips } = expected(file, shown);
@@ -145,7 +151,8 @@ export function pageThrows(file: ThrowFile, bake: Bake, record: TakesRecord): Pa
       const [motion, found] = [motions.get(clip), records.get(clip)];
       if (!motion || !found) return [];
       const record = { ...rounded(found), file: fileName(file, found.throw, clip) };
-      return [{ motion, record, file: found.file, clip }];
+      const warned = warnings.get(clip) ?? [];
+      return [{ motion, record, file: found.file, clip, ...(warned.length > 0 && { warnings: warned }) }];
     });
     const left = clips.flatMap((name) => {
       const reason = unheld.get(name);
