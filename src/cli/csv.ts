@@ -1,4 +1,5 @@
 import { Command } from "commander";
+import { apart } from "../bake/apart.js";
 import { bake } from "../bake/bake.js";
 import type { LoadedProp } from "../bake/props.js";
 import { chainMotion, takeMotion } from "../bake/take-motion.js";
@@ -6,7 +7,6 @@ import { type OutputFile, writeFiles } from "../node/output-folder.js";
 import { spareInputs } from "../node/spare-inputs.js";
 import { openThrowFile } from "../node/throw-file.js";
 import { takeTable } from "../record/take-table.js";
-import type { ThrowFile } from "../throwfile/types.js";
 import { ExitCode } from "./exit-code.js";
 import { positiveNumber } from "./positive-number.js";
 import { progress } from "./progress.js";
@@ -65,9 +65,3 @@ Example:
       process.stdout.write(`${count} written to ${output}, ${rate ?? file.frameRate} rows a second\n`);
       if (baked.unheld.length > 0) answer(ExitCode.checkFailed);
     });
-
-/** A table each, whatever files the clips would go into. */
-const apart = (file: ThrowFile): ThrowFile => ({
-  ...file,
-  bake: { ...file.bake, files: "per-take", container: "glb", mesh: false },
-});

@@ -12,9 +12,11 @@ import { completionCommand } from "./completion.js";
 import { csvCommand } from "./csv.js";
 import { ExitCode } from "./exit-code.js";
 import { describeCommands, inOrder } from "./help.js";
+import { mergeCommand } from "./merge.js";
 import { newCommand } from "./new.js";
 import { previewCommand } from "./preview.js";
 import { schemaCommand } from "./schema.js";
+import { strobeCommand } from "./strobe.js";
 import { verifyCommand } from "./verify.js";
 import { waysCommand } from "./ways.js";
 import { weighCommand } from "./weigh.js";
@@ -41,7 +43,9 @@ export async function main(args: readonly string[]): Promise<number> {
     weighCommand(),
     waysCommand(answer),
     bakeCommand(answer),
+    mergeCommand(answer),
     previewCommand(answer),
+    strobeCommand(answer),
     verifyCommand(answer),
     csvCommand(answer),
     schemaCommand(),

@@ -1,8 +1,10 @@
 /** The sheets of a bake, from plain data that may have crossed threads. */
 
-import { motionOf, type TakeMotion } from "../bake/take-motion.js";
+import type { Bake } from "../bake/bake.js";
+import { chainMotion, motionOf, type TakeMotion, takeMotion } from "../bake/take-motion.js";
 import type { Model } from "../gltf/model.js";
 import type { Prop } from "../prop/prop.js";
+import type { ThrowFile } from "../throwfile/types.js";
 import { solidOf } from "./outline.js";
 import { type SheetProp, type SheetTake, sheetProp, type ThrowSheetInput } from "./sheet-input.js";
 import { takesSheet } from "./takes-sheet.js";
@@ -26,11 +28,33 @@ export interface NamedSheet {
 /** A sheet for each throw and chain, of the first take that is given, and one of all takes; the same text for the same data. */
 export async function sheetsOf(input: SheetsInput): Promise<NamedSheet[]> {
   const groups = await sheetInputs(input);
+  if (groups.length === 0) return [];
   return [
     ...groups.map((group) => ({ name: `${group.title}.svg`, content: throwSheet(group) })),
     { name: "takes.svg", content: takesSheet({ title: input.title, throws: groups }) },
   ];
 }
+
+/** Of a whole bake. */
+export const sheetsInput = (
+  file: ThrowFile,
+  { props, throws, chains }: Pick<Bake, "props" | "throws" | "chains">,
+): SheetsInput => ({
+  title: file.name.replace(/^.*[\\/]/, ""),
+  props,
+  throws: [
+    ...throws.map((baked) => ({
+      name: baked.entry.name,
+      prop: baked.entry.prop,
+      takes: baked.takes.map((take) => ({ motion: takeMotion(file, baked, take) })),
+    })),
+    ...chains.map((baked) => ({
+      name: baked.entry.name,
+      prop: baked.prop,
+      takes: baked.takes.map((take) => ({ motion: chainMotion(file, baked, take) })),
+    })),
+  ],
+});
 
 /** What the sheets are drawn from; each prop's surface is read once. */
 export async function sheetInputs({ props, throws }: SheetsInput): Promise<ThrowSheetInput[]> {

@@ -15,7 +15,7 @@ import { courseOf, inView, sideView, type View } from "./view.js";
 export const CELL = { width: 130, arc: 62, poses: 30, height: 116 };
 const AIR = 4;
 /** px; an outline leaves the silhouette by no more. */
-const DETAIL = 1.8;
+const DETAIL = 1.2;
 const POSES = 4;
 /** px²: rings that are smaller are left out. */
 const SPECK = 1.5;

@@ -109,10 +109,10 @@ class Group {
       ),
     );
     const rows = Math.ceil(count / COLUMNS);
-    const bar = Number.isFinite(this.#scale) ? [scaleBar(4, rows * CELL.height - 4, this.#scale, "")] : [];
+    const bar = Number.isFinite(this.#scale) ? [scaleBar(4, rows * CELL.height + 4, this.#scale, "")] : [];
     const grid: Drawing = {
       width: COLUMNS * CELL.width,
-      height: rows * CELL.height + 8,
+      height: rows * CELL.height + 12,
       body: element("g", { "text-anchor": "middle" }, `\n${cells.join("\n")}\n`) + bar.join(""),
     };
     const left = this.#over;
