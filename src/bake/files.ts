@@ -1,8 +1,7 @@
 /** Which files the clips of a bake go into, and what those hold. */
 
 import { bareModel } from "../gltf/bare-model.js";
-import { type Graft, type NamedFile, spliceGlb, spliceGltf } from "../gltf/splice.js";
-import { RequestError } from "../math/request-error.js";
+import { type Graft, type NamedFile, spliceAllGlb, spliceAllGltf } from "../gltf/splice.js";
 import type { Prop } from "../prop/prop.js";
 import type { BakeSettings, ThrowFile } from "../throwfile/types.js";
 import { type NamedTrack, oneNodeGraft, turningGraft, twoNodeGraft } from "./graft.js";
@@ -29,7 +28,7 @@ export function fileName(file: ThrowFile, throwName: string, clipName: string): 
 /**
  * The files of these clips, in their order; a .gltf comes after its .bin.
  *
- * @throws ModelError where a model cannot take the clips; RequestError where clips of several props are to be together
+ * @throws ModelError where a model cannot take the clips, or go into one file with another
  */
 export function clipFiles(file: ThrowFile, clips: readonly FiledClip[]): NamedFile[] {
   const groups = new Map<string, FiledClip[]>();
@@ -41,24 +40,15 @@ export function clipFiles(file: ThrowFile, clips: readonly FiledClip[]): NamedFi
 }
 
 function written({ bake }: ThrowFile, name: string, clips: readonly FiledClip[]): NamedFile[] {
-  const [{ prop: loaded }] = clips;
-  const { prop } = loaded;
-  if (clips.some((clip) => clip.prop !== loaded))
-    throw new RequestError(
-      ["bake", "files"],
-      `throws of several props do not go into one file (found together and ${propNames(clips).join(", ")})`,
-      "per-throw, per-take, or a throw file for each prop",
-    );
-  const model = bake.mesh ? loaded.model : bareModel(loaded.model, prop.node !== undefined);
-  const graft = graftOf(bake, prop, clips);
+  const grafts = [...new Set(clips.map(({ prop }) => prop))].map((loaded) => {
+    const { prop, model } = loaded;
+    const own = clips.filter((clip) => clip.prop === loaded);
+    return [bake.mesh ? model : bareModel(model, prop.node !== undefined), graftOf(bake, prop, own)] as const;
+  });
   return bake.container === "gltf"
-    ? spliceGltf(model, graft, name.slice(0, name.lastIndexOf(".")))
-    : [{ name, content: spliceGlb(model, graft) }];
+    ? spliceAllGltf(grafts, name.slice(0, name.lastIndexOf(".")))
+    : [{ name, content: spliceAllGlb(grafts) }];
 }
-
-const propNames = (clips: readonly FiledClip[]) => [
-  ...new Set(clips.map(({ prop }) => `"${prop.prop.name}"`)),
-];
 
 function graftOf({ layout }: BakeSettings, prop: Prop, clips: readonly NamedTrack[]): Graft {
   if (prop.node) return nodeGraft(prop.node, prop.scale, clips);

@@ -3,6 +3,7 @@ import { decompose } from "./decompose.js";
 import { joinGlb } from "./glb.js";
 import { type ClipChannel, checkClipNames, GENERATOR, type Graft, type Rest } from "./graft.js";
 import { imageType } from "./image-type.js";
+import { joinFiles } from "./join-files.js";
 import { JsonEdit } from "./json-edit.js";
 import { type Model, ModelError } from "./model.js";
 import { SamplerPack } from "./sampler-pack.js";
@@ -25,23 +26,47 @@ export interface NamedFile {
  * Throws ModelError where a clip's name is taken, or an animated node cannot be told apart into translation, rotation
  * and scale, or an external image is of an unknown kind.
  */
-export function spliceGlb(model: Model, graft: Graft): Uint8Array {
-  const { text, binary } = splice(model, graft);
-  return joinGlb({
-    json: new TextEncoder().encode(text),
-    ...(binary.length > 0 && { binary }),
-    ...(model.otherChunks && { others: model.otherChunks }),
-  });
-}
+export const spliceGlb = (model: Model, graft: Graft): Uint8Array => spliceAllGlb([[model, graft]]);
 
 /**
  * The same as a .gltf and a .bin beside it, `stem` their common name; what the model had in other files is in the .bin too. Chunks
  * of a GLB that only its extensions know have no place in them and are left out.
  */
-export function spliceGltf(model: Model, graft: Graft, stem: string): NamedFile[] {
-  const { text, binary } = splice(model, graft, `${encodeURIComponent(stem)}.bin`);
+export const spliceGltf = (model: Model, graft: Graft, stem: string): NamedFile[] =>
+  spliceAllGltf([[model, graft]], stem);
+
+/** Several models in one GLB, side by side in its default scene; of the first the same stays as if it were alone. Chunks that only extensions know are its. */
+export function spliceAllGlb(grafts: readonly (readonly [Model, Graft])[]): Uint8Array {
+  const { text, binary } = spliceAll(grafts);
+  const { otherChunks } = grafts[0][0];
+  return joinGlb({
+    json: new TextEncoder().encode(text),
+    ...(binary.length > 0 && { binary }),
+    ...(otherChunks && { others: otherChunks }),
+  });
+}
+
+/** The same as a .gltf and a .bin. */
+export function spliceAllGltf(grafts: readonly (readonly [Model, Graft])[], stem: string): NamedFile[] {
+  const { text, binary } = spliceAll(grafts, `${encodeURIComponent(stem)}.bin`);
   const json = { name: `${stem}.gltf`, content: new TextEncoder().encode(text) };
   return binary.length > 0 ? [{ name: `${stem}.bin`, content: binary }, json] : [json];
+}
+
+function spliceAll(
+  grafts: readonly (readonly [Model, Graft])[],
+  uri?: string,
+): { text: string; binary: Uint8Array } {
+  const [[model, graft]] = grafts;
+  if (grafts.length === 1) return splice(model, graft, uri);
+  const own = grafts.flatMap(([{ json }]) => json.animations ?? []).map(({ name }) => name);
+  for (const [{ name }, { clips }] of grafts) checkClipNames(name, own, clips);
+  const files = grafts.map(([model, graft]) => ({ name: model.name, ...splice(model, graft) }));
+  const joined = joinFiles(files);
+  if (uri === undefined || joined.binary.length === 0) return joined;
+  const edit = new JsonEdit(joined.text);
+  edit.set(["buffers", 0], "uri", uri);
+  return { text: edit.result(), binary: joined.binary };
 }
 
 /** The JSON's text and the bytes of buffer 0; `uri` is where these are to be found, if not in the same file. */

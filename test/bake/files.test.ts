@@ -4,7 +4,6 @@ import { describe, expect, it } from "vitest";
 import { bake } from "../../src/bake/bake.js";
 import { readModel } from "../../src/gltf/read.js";
 import { recordOf } from "../../src/record/record-of.js";
-import { ThrowFileError } from "../../src/throwfile/errors.js";
 import { parseThrowFile } from "../../src/throwfile/parse.js";
 import { jsonOf } from "./baked.js";
 
@@ -63,12 +62,42 @@ describe("files", () => {
     await expect(bake(file, () => Promise.reject(), { only: ["lob"] })).rejects.toThrow(/--only/);
   });
 
-  it("together: throws of two props are refused by their names", async () => {
-    const two = text("{ files: together }").replace("flip: { prop: stick", "flip: { prop: puck");
-    const error = await baked("", two).catch((error) => error);
-    expect(error).toBeInstanceOf(ThrowFileError);
-    expect(error.message).toMatch(/bake\.files: .*"stick", "puck"/);
-  });
+  it.each(["glb", "gltf"])(
+    "together, in a .%s: props side by side, each moved by its own clips",
+    async (container) => {
+      const two = text(`{ files: together, container: ${container} }`).replace(
+        "flip: { prop: stick",
+        "flip: { prop: puck",
+      );
+      const { made, record } = await baked("", two);
+      expect(new Set(record.clips.map(({ file }) => file))).toEqual(new Set([`quay.${container}`]));
+      const content = new Map(made.files.map((file) => [file.name, file.content]));
+      const { json } = await readModel(
+        "quay",
+        content.get(`quay.${container}`)!,
+        async (uri) => content.get(uri)!,
+      );
+      expect(json.scenes![json.scene!].nodes!.map((node) => json.nodes![node].name)).toEqual([
+        "stick",
+        "puck",
+      ]);
+      const moved = json.animations!.map(({ name, channels }) => [
+        name,
+        ...new Set(channels.map(({ target }) => json.nodes![target.node!].name)),
+      ]);
+      expect(moved).toEqual([
+        ["lob_01", "stick"],
+        ["lob_02", "stick"],
+        ["flip_01", "puck"],
+      ]);
+      const report = await validateBytes(content.get(`quay.${container}`)!, {
+        externalResourceFunction: async (uri: string) => content.get(uri)!,
+      });
+      expect(report.issues.messages.filter(({ severity }: { severity: number }) => severity <= 1)).toEqual(
+        [],
+      );
+    },
+  );
 });
 
 describe("container: gltf", () => {
