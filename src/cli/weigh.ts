@@ -1,15 +1,20 @@
-import { basename, extname } from "node:path";
+import { basename, dirname, extname } from "node:path";
 import { Command } from "commander";
 import { type LoadedProp, loadProps } from "../bake/props.js";
 import { RequestError } from "../math/request-error.js";
 import { length, type Vec3 } from "../math/vec3.js";
 import { readModelFile } from "../node/model-files.js";
+import { writeFiles } from "../node/output-folder.js";
+import { spareInputs } from "../node/spare-inputs.js";
 import { openThrowFile } from "../node/throw-file.js";
-import { type AxisBehaviour, kindOf, WOBBLE_DEGREES } from "../prop/kind.js";
+import { kindOf, WOBBLE_DEGREES } from "../prop/kind.js";
 import { nearestModelAxis } from "../prop/model-axis.js";
 import { weigh } from "../prop/prop.js";
 import { formatRecord } from "../record/format.js";
 import { propRecord } from "../record/record-of.js";
+import { throwAbout } from "../review/axis-words.js";
+import { solidOf } from "../review/outline.js";
+import { type WeighSheetProp, weighSheet } from "../review/weigh-sheet.js";
 import { positiveNumber } from "./positive-number.js";
 
 export const weighCommand = () =>
@@ -19,19 +24,23 @@ export const weighCommand = () =>
     )
     .argument("<model|throwfile>", "a .glb or .gltf file, or a throw file: all its props")
     .option("--density <kg/m3>", "of a bare model (default 1000, water)", positiveNumber("kg/m³"))
+    .option("--sheet <file>", "draw each prop with its axes too, into one SVG file")
     .option("--json", "print everything as JSON")
     .addHelpText(
       "after",
-      "\nExamples:\n  tossbake weigh props/spanner.glb --density 7850\n  tossbake weigh quay.throws.yaml",
+      "\nExamples:\n  tossbake weigh props/spanner.glb --density 7850\n  tossbake weigh quay.throws.yaml --sheet props.svg",
     )
-    .action(async (path: string, options: { density?: number; json?: boolean }) => {
+    .action(async (path: string, options: { density?: number; sheet?: string; json?: boolean }) => {
       if (options.density !== undefined && !isModel(path))
         throw new RequestError(
           ["--density"],
           `${path} is a throw file`,
           "densities stand there, under props.NAME.density",
         );
-      const props = isModel(path) ? await weighModel(path, options.density) : await weighAll(path);
+      const { props, inputs } = isModel(path)
+        ? await weighModel(path, options.density)
+        : await weighAll(path);
+      if (options.sheet !== undefined) await writeSheet(options.sheet, path, props, inputs);
       process.stdout.write(
         options.json
           ? formatRecord({
@@ -43,20 +52,42 @@ export const weighCommand = () =>
 
 const isModel = (path: string) => [".glb", ".gltf"].includes(extname(path).toLowerCase());
 
-async function weighModel(path: string, density?: number): Promise<Map<string, LoadedProp>> {
-  const { model, sha256 } = await readModelFile(path, path);
+interface Weighed {
+  props: Map<string, LoadedProp>;
+  /** Paths of the files that were read. */
+  inputs: Iterable<string>;
+}
+
+async function weighModel(path: string, density?: number): Promise<Weighed> {
+  const { model, sha256, paths } = await readModelFile(path, path);
   const name = basename(path, extname(path));
   try {
-    return new Map([[name, { prop: await weigh(name, model, { density }), model, source: path, sha256 }]]);
+    const prop = await weigh(name, model, { density });
+    return { props: new Map([[name, { prop, model, source: path, sha256 }]]), inputs: paths };
   } catch (error) {
     if (!(error instanceof RequestError) || error.path[0] !== "model") throw error;
     throw new RequestError([path], error.fault, error.remedy);
   }
 }
 
-async function weighAll(path: string): Promise<Map<string, LoadedProp>> {
-  const { file, models } = await openThrowFile(path);
-  return loadProps(file, new Set(file.props.keys()), models);
+async function weighAll(path: string): Promise<Weighed> {
+  const { file, models, inputs } = await openThrowFile(path);
+  return { props: await loadProps(file, new Set(file.props.keys()), models), inputs };
+}
+
+async function writeSheet(
+  output: string,
+  path: string,
+  props: Map<string, LoadedProp>,
+  inputs: Iterable<string>,
+): Promise<void> {
+  const [folder, name] = [dirname(output), basename(output)];
+  await spareInputs(folder, [name], inputs);
+  const shown: WeighSheetProp[] = [];
+  for (const { prop, model } of props.values()) shown.push({ prop, solid: await solidOf(model, prop) });
+  await writeFiles(folder, [
+    { name, content: weighSheet(isModel(path) ? basename(path) : `Props of ${basename(path)}`, shown) },
+  ]);
 }
 
 const AXES = ["long", "middle", "short"] as const;
@@ -77,20 +108,24 @@ const facts = (loaded: LoadedProp) => {
 
 function describe({ prop, source }: LoadedProp): string {
   const { kind, axes } = kindOf(prop.principal.moments);
-  const fromOrigin = length(prop.centerOfMass) * 1000;
+  const place = (v: Vec3) => list(v, prop.reach);
+  const [fromOrigin] = withoutRounding([length(prop.centerOfMass)], prop.reach);
   const rows = [
     ["mass", `${short(prop.mass)} kg`],
     ["size", `${prop.size.map(short).join(" × ")} m; reaches ${short(prop.reach)} m from its centre of mass`],
-    ["centre of mass", `${list(prop.centerOfMass)} m, ${short(fromOrigin)} mm from the model's origin`],
+    [
+      "centre of mass",
+      `${place(prop.centerOfMass)} m, ${short(fromOrigin * 1000)} mm from the model's origin`,
+    ],
     ["kind of body", kind],
     ...AXES.flatMap((name, i) => [
       [
         `${name} axis`,
-        `${list(prop.names[name])}, ${alongModel(prop.names[name])}, ${short(prop.principal.moments[i])} kg m²`,
+        `${list(prop.names[name], 1)}, ${alongModel(prop.names[name])}, ${short(prop.principal.moments[i])} kg m²`,
       ],
-      ["", `a throw about it ${behaviour(axes[name])}`],
+      ["", `a throw about it ${throwAbout(axes[name])}`],
     ]),
-    ...Object.entries(prop.points).map(([name, point]) => [`point ${name}`, `${list(point.position)} m`]),
+    ...Object.entries(prop.points).map(([name, point]) => [`point ${name}`, `${place(point.position)} m`]),
     ...prop.warnings.map((text) => ["warning", text]),
   ];
   const width = Math.max(...rows.map(([title]) => title.length));
@@ -105,25 +140,12 @@ function alongModel(direction: Vec3): string {
   return degrees < 0.05 ? `the model's ${axis}` : `${degrees.toFixed(1)}° off the model's ${axis}`;
 }
 
-function behaviour(axis: AxisBehaviour): string {
-  const wobble = `a wobble of ${WOBBLE_DEGREES}°`;
-  switch (axis.behaviour) {
-    case "steady":
-      return `is steady: a small wobble goes round ${short(axis.wobblesPerTurn)} times a turn, one of ${WOBBLE_DEGREES}° ${short(axis.wobblesPerTurnAtWobble)} times`;
-    case "tumbles":
-      return `tumbles: a small wobble grows ${short(axis.growthPerTurn)} times a turn; with ${wobble} it ${turning(axis)}`;
-    case "leans":
-      return `is steady without a wobble only: ${wobble} leans the spin to the ${axis.turnsRound} axis, and it ${turning(axis)}`;
-    case "drifts":
-      return `drifts: with ${wobble} it ${turning(axis)}`;
-  }
-}
-
-function turning({ turnsPerFlip, turnsRound }: Exclude<AxisBehaviour, { behaviour: "steady" }>): string {
-  return turnsPerFlip < 0.5
-    ? `rolls round the ${turnsRound} axis ${short(1 / (2 * turnsPerFlip))} times a turn`
-    : `turns over every ${short(turnsPerFlip)} turns, round the ${turnsRound} axis`;
-}
-
 const short = (value: number) => String(Number(value.toPrecision(4)));
-const list = (v: Vec3) => `[${v.map((value) => (Math.abs(value) < 1e-9 ? 0 : short(value))).join(", ")}]`;
+
+/** Of the size of what is measured: below the last digit that is printed of it, and above what rounding of stored places makes. */
+const ROUNDING = 1e-5;
+
+const withoutRounding = (values: readonly number[], size: number): number[] =>
+  values.map((value) => (Math.abs(value) < ROUNDING * size ? 0 : value));
+
+const list = (v: Vec3, size: number) => `[${withoutRounding(v, size).map(short).join(", ")}]`;
