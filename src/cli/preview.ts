@@ -1,6 +1,7 @@
 import { stat } from "node:fs/promises";
 import { basename, dirname } from "node:path";
 import { Command, InvalidArgumentError } from "commander";
+import { watchForStop } from "../node/interrupted.js";
 import { openBrowser } from "../node/open-browser.js";
 import { writeFiles } from "../node/output-folder.js";
 import { pageOfFolder, pageOfThrowFile } from "../node/page-file.js";
@@ -51,8 +52,8 @@ async function writePage(path: string, output: string): Promise<boolean> {
     : pageOfThrowFile(path, parts, { onTake: shown.update });
   const { html, inputs, unheld } = await making.finally(shown.end);
   const [folder, name] = [dirname(output), basename(output)];
-  await spareInputs(folder, [name], inputs);
-  await writeFiles(folder, [{ name, content: html }]);
+  await spareInputs(folder, [name], inputs, "--page");
+  await writeFiles(folder, [{ name, content: html }], "--page");
   process.stdout.write(`${path} is shown by ${output}\n`);
   for (const { name, reason } of unheld) process.stderr.write(`${name} is left out: ${reason}\n`);
   return unheld.length > 0;
@@ -61,10 +62,11 @@ async function writePage(path: string, output: string): Promise<boolean> {
 /** Until somebody interrupts it. */
 async function serve(path: string, { port = 0, open }: Options): Promise<void> {
   const parts = await readPageParts(PAGE);
+  const stop = watchForStop();
   let fail: (error: unknown) => void = () => undefined;
   const end = new Promise<void>((done, reject) => {
     fail = reject;
-    process.once("SIGINT", () => done());
+    stop.signal.addEventListener("abort", () => done());
   });
   const source = await previewOf(path, fail);
   try {
@@ -75,6 +77,7 @@ async function serve(path: string, { port = 0, open }: Options): Promise<void> {
     await end.finally(() => server.close());
   } finally {
     await source.close();
+    stop.end();
   }
 }
 

@@ -14,9 +14,10 @@ export interface OutputFile {
  * Writes the files into the folder (made where it does not exist), in the order given, so that the last one, the record, never speaks of a
  * file that is not there yet.
  *
+ * @param option by which another folder is named
  * @throws MachineError when the machine will not take them; the temporary files are then gone and the old ones as they were
  */
-export async function writeFiles(folder: string, files: readonly OutputFile[]): Promise<void> {
+export async function writeFiles(folder: string, files: readonly OutputFile[], option = "-o"): Promise<void> {
   const staged = files.map((file) => ({
     ...file,
     path: join(folder, file.name),
@@ -32,16 +33,16 @@ export async function writeFiles(folder: string, files: readonly OutputFile[]): 
     for (const file of staged) await rename(file.temporary, file.path);
   } catch (error) {
     for (const file of staged) await rm(file.temporary, { force: true }).catch(() => undefined);
-    throw unwritable(folder, error);
+    throw unwritable(folder, error, option);
   }
 }
 
 /** What the machine says of a folder that it will not write to. */
-export const unwritable = (folder: string, error: unknown): MachineError =>
+export const unwritable = (folder: string, error: unknown, option = "-o"): MachineError =>
   error instanceof MachineError
     ? error
     : new MachineError(
-        `${folder}: cannot be written (${reason(error)}); choose a folder that can, with -o`,
+        `${folder}: cannot be written (${reason(error)}); choose a folder that can, with ${option}`,
         ["ENOSPC", "EDQUOT"].includes(String((error as NodeJS.ErrnoException).code)),
       );
 
