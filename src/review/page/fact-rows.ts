@@ -8,8 +8,9 @@ export interface FactRow {
   label: string;
   /** "–" where there is none. */
   text: string;
-  /** Why it is worth a look, in words. */
   about?: string;
+  /** That the text says, where it is one number. */
+  value?: number;
 }
 
 export interface FactGroup {
@@ -30,8 +31,8 @@ export function factGroups(measured: Measured): FactGroup[] {
 function motionRows(measured: Measured): FactRow[] {
   const { duration } = measured.take.record;
   return [
-    { label: "Time in the air", text: words.seconds(measured.time) },
-    ...(duration - measured.time > 1e-6 ? [{ label: "Clip with holds", text: words.seconds(duration) }] : []),
+    ...known("Time in the air", measured.time, words.seconds),
+    ...known("Clip with holds", duration - measured.time > 1e-6 ? duration : null, words.seconds),
     ...known("Rise to apex", measured.rise, words.metres),
     ...known("Speed at release", measured.releaseSpeed, words.speed),
     ...known("Speed at arrival", measured.arrivalSpeed, words.speed),
@@ -45,7 +46,7 @@ function turningRows(measured: Measured): FactRow[] {
   const angle =
     "between the axis that it turns round in space and that axis of its own which most of its turning is about";
   return [
-    { label: "Turns", text: words.turns(measured.turns) },
+    ...known("Turns", measured.turns, words.turns),
     {
       label: "About long · middle · short",
       text: `${shares.join(" · ")}\u00a0%`,
@@ -53,8 +54,8 @@ function turningRows(measured: Measured): FactRow[] {
     },
     ...known("Wobble at release", measured.wobbleAtRelease, words.degrees, angle),
     ...known("Wobble at arrival", measured.wobble, words.degrees, angle),
-    { label: "Turning at release", text: words.rate(measured.releaseRate) },
-    { label: "Turning at arrival", text: words.rate(measured.arrivalRate) },
+    ...known("Turning at release", measured.releaseRate, words.rate),
+    ...known("Turning at arrival", measured.arrivalRate, words.rate),
   ];
 }
 
@@ -62,13 +63,14 @@ function clipRows({ take: { record } }: Measured): FactRow[] {
   const { translation, rotation } = record.keys;
   return [
     { label: "Keys of place + rotation", text: `${translation} + ${rotation}` },
-    { label: "Size", text: words.bytes(record.bytes) },
-    {
-      label: "Error, proved",
-      text: words.metres(record.error),
-      about: "no point of the prop is further from the true motion at any time",
-    },
-    { label: "Tolerance", text: words.metres(record.tolerance) },
+    ...known("Size", record.bytes, words.bytes),
+    ...known(
+      "Error, proved",
+      record.error,
+      words.metres,
+      "no point of the prop is further from the true motion at any time",
+    ),
+    ...known("Tolerance", record.tolerance, words.metres),
     ...known("Candidate taken", record.candidate ?? null, String),
   ];
 }
@@ -78,16 +80,21 @@ const known = (
   value: number | null,
   say: (value: number) => string,
   about?: string,
-): FactRow[] => (value === null ? [] : [{ label, text: say(value), about }]);
+): FactRow[] => (value === null ? [] : [{ label, text: say(value), about, value }]);
 
 export function drawnGroup({ take: { record } }: Measured): FactGroup[] {
-  const rows = Object.entries(record.draws).map(([key, value]) => ({ label: key, text: drawnWords(value) }));
+  const rows = Object.entries(record.draws).map(([key, value]) => ({
+    label: key,
+    text: drawnWords(value),
+    ...(typeof value === "number" && { value }),
+  }));
   return rows.length > 0 ? [{ title: "Drawn", rows }] : [];
 }
 
 function drawnWords(value: unknown): string {
   if (typeof value === "number") return words.digits(value, 4);
-  if (Array.isArray(value)) return value.map(drawnWords).join(", ");
+  if (Array.isArray(value))
+    return value.map((each) => (typeof each === "number" ? words.digits(each) : drawnWords(each))).join(", ");
   return typeof value === "string" ? value : JSON.stringify(value);
 }
 
@@ -95,17 +102,35 @@ export interface PairedRow {
   label: string;
   about?: string;
   texts: [string, string];
-  differs: boolean;
+  likeness: Likeness;
 }
+
+/** `near`: by less than anybody would see. */
+export type Likeness = "same" | "near" | "differs";
+
+/** Of the greater one. */
+const NEAR = 0.02;
 
 /** Rows of both, in the order of the first; what only one has stands last. */
 export function paired(a: readonly FactRow[], b: readonly FactRow[]): PairedRow[] {
   const labels = [...new Set([...a, ...b].map(({ label }) => label))];
   return labels.map((label) => {
-    const rows = [a, b].map((list) => list.find((row) => row.label === label));
-    const [first, second] = rows.map((row) => row?.text ?? NONE);
-    return { label, about: (rows[0] ?? rows[1])?.about, texts: [first, second], differs: first !== second };
+    const [first, second] = [a, b].map((list) => list.find((row) => row.label === label));
+    return {
+      label,
+      about: (first ?? second)?.about,
+      texts: [first?.text ?? NONE, second?.text ?? NONE],
+      likeness: likenessOf(first, second),
+    };
   });
+}
+
+function likenessOf(a: FactRow | undefined, b: FactRow | undefined): Likeness {
+  if (a?.text === b?.text) return "same";
+  if (a?.value === undefined || b?.value === undefined) return "differs";
+  return Math.abs(a.value - b.value) <= NEAR * Math.max(Math.abs(a.value), Math.abs(b.value))
+    ? "near"
+    : "differs";
 }
 
 /** How far apart two takes leave and arrive: m between their balance points, from the records' own places. */

@@ -1,7 +1,7 @@
 /** A take's numbers as a table; with a second take in two columns, what differs marked. */
 
 import { el } from "./dom.js";
-import { type FactGroup, type PairedRow, paired } from "./fact-rows.js";
+import { type FactGroup, type Likeness, type PairedRow, paired } from "./fact-rows.js";
 
 /** @param names of the takes: one, or two */
 export function factTable(
@@ -38,16 +38,24 @@ export function factTable(
 const rowHead = (label: string, about?: string): HTMLElement =>
   el("th", { scope: "row", title: about }, label);
 
-const pairedRow = ({ label, about, texts, differs }: PairedRow): HTMLElement =>
-  el(
+const SIGNS: Record<Likeness, [sign: string, words: string]> = {
+  same: ["=", "same"],
+  near: ["≈", "nearly the same"],
+  differs: ["≠", "differs"],
+};
+
+function pairedRow({ label, about, texts, likeness }: PairedRow): HTMLElement {
+  const [sign, words] = SIGNS[likeness];
+  return el(
     "tr",
-    { class: differs ? "differs" : "same" },
+    { class: likeness },
     rowHead(label, about),
     ...texts.map((text) => el("td", {}, text)),
     el(
       "td",
       { class: "sign" },
-      el("span", { "aria-hidden": "true" }, differs ? "≠" : "="),
-      el("span", { class: "unseen" }, differs ? "differs" : "same"),
+      el("span", { "aria-hidden": "true" }, sign),
+      el("span", { class: "unseen" }, words),
     ),
   );
+}

@@ -8,7 +8,6 @@ import { apart, drawnGroup, factGroups } from "./fact-rows.js";
 import { factTable } from "./fact-table.js";
 import type { Measured } from "./measures.js";
 import { missedWords } from "./misses.js";
-import { notesOf } from "./notes.js";
 import { measuredOf, propOf, throwOf } from "./state.js";
 import { metres } from "./words.js";
 
@@ -31,7 +30,7 @@ export function facts(app: App): { element: HTMLElement; drawn(): void } {
       const second = state.beside === state.take ? undefined : measuredOf(state, state.beside);
       title.textContent = first?.take.motion.name ?? shown?.name ?? "Nothing to see yet";
       plot.element.hidden = !first;
-      fill(notes, ...(shown && first ? notesOn(app, shown, first, second) : []));
+      fill(notes, ...(first ? notesOn(app, first, second) : []));
       const names = [first, second].flatMap((each) => (each ? [`take ${each.number}`] : []));
       fill(numbers, first && factTable("Numbers", names, factGroups(first), second && factGroups(second)));
       fill(
@@ -57,11 +56,11 @@ export function facts(app: App): { element: HTMLElement; drawn(): void } {
   };
 }
 
-function notesOn(app: App, shown: PageThrow, first: Measured, second?: Measured): Child[] {
+function notesOn(app: App, first: Measured, second?: Measured): Child[] {
   const { beside, take } = app.store.state;
   return [
     ...[first, second].map((each) => each && missNote(each)),
-    ...notesOf(shown, first.number).map((text) => el("p", { class: "note" }, text)),
+    ...warningNotes(first),
     beside !== undefined && beside === take
       ? el("p", { class: "hint" }, `Take ${beside} stays beside. Choose another take to see both.`)
       : null,
@@ -76,6 +75,9 @@ function missNote(measured: Measured): HTMLElement | null {
     ? null
     : el("p", { class: "note" }, el("strong", {}, `Take ${measured.number} misses ${missed}.`));
 }
+
+const warningNotes = ({ take }: Measured): HTMLElement[] =>
+  (take.warnings ?? []).map((text) => el("p", { class: "note" }, text));
 
 function apartNote(first: Measured, second: Measured): HTMLElement {
   const { release, arrival } = apart(first, second);
@@ -104,10 +106,6 @@ function aboutThrow(shown: PageThrow, prop?: PageProp): Child[] {
   const list = (title: string, items: readonly Child[]) =>
     items.length > 0 ? [el("h3", {}, title), el("ul", {}, ...items.map((item) => el("li", {}, item)))] : [];
   return [
-    ...list(
-      "Takes left out",
-      shown.unheld.map(({ name, reason }) => el("span", {}, el("strong", {}, name), ` ${reason}`)),
-    ),
     ...list(
       "Spin asked for",
       Object.entries(shown.spin ?? {}).map(([key, text]) => `${key}: ${text}`),

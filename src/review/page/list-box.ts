@@ -4,10 +4,8 @@ import { type Child, el, fill } from "./dom.js";
 
 export interface Option<Key> {
   key: Key;
-  /** Made anew when it is another one. */
+  /** Its text is what screen readers say. */
   content: () => Child[];
-  /** Said by screen readers. */
-  label: string;
   classes?: string;
 }
 
@@ -94,11 +92,8 @@ export function listBox<Key extends string | number>(
       const hadFocus = element.contains(document.activeElement);
       items.clear();
       keys = options.map(({ key }) => key);
-      for (const { key, content, label: text, classes: more = "" } of options)
-        items.set(
-          key,
-          el("div", { role: "option", "aria-label": text, class: `option ${more}` }, ...content()),
-        );
+      for (const { key, content, classes: more = "" } of options)
+        items.set(key, el("div", { role: "option", class: `option ${more}` }, ...content()));
       fill(element, ...items.values());
       current = chosen;
       mark();

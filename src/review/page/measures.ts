@@ -64,7 +64,7 @@ export interface Measure {
 export const MEASURES: readonly Measure[] = [
   {
     key: "number",
-    label: "Take number",
+    label: "take number",
     of: (m) => m.number,
     say: String,
     unit: "",
@@ -73,7 +73,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "time",
-    label: "Time",
+    label: "time",
     of: (m) => m.time,
     say: words.seconds,
     unit: "s",
@@ -82,7 +82,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "turns",
-    label: "Turns",
+    label: "turns",
     of: (m) => m.turns,
     say: words.turns,
     unit: "",
@@ -91,7 +91,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "wobble",
-    label: "Wobble at arrival",
+    label: "wobble at arrival",
     of: (m) => m.wobble,
     say: words.degrees,
     unit: "°",
@@ -100,7 +100,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "share",
-    label: "Share about main axis",
+    label: "share about main axis",
     of: (m) => m.share,
     say: words.percent,
     unit: "%",
@@ -109,7 +109,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "miss",
-    label: "Miss",
+    label: "miss",
     of: (m) => m.miss,
     say: words.metres,
     unit: "mm",
@@ -118,7 +118,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "nearest",
-    label: "Distance to most alike",
+    label: "distance from the take most alike",
     of: (m) => m.nearest?.distance ?? null,
     say: words.metres,
     unit: "mm",
@@ -127,7 +127,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "releaseSpeed",
-    label: "Speed at release",
+    label: "speed at release",
     of: (m) => m.releaseSpeed,
     say: words.speed,
     unit: "m/s",
@@ -136,7 +136,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "arrivalSpeed",
-    label: "Speed at arrival",
+    label: "speed at arrival",
     of: (m) => m.arrivalSpeed,
     say: words.speed,
     unit: "m/s",
@@ -145,7 +145,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "rise",
-    label: "Rise to apex",
+    label: "rise to apex",
     of: (m) => m.rise,
     say: words.metres,
     unit: "mm",
@@ -154,7 +154,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "bytes",
-    label: "Size of clip",
+    label: "size of clip",
     of: (m) => m.take.record.bytes,
     say: words.bytes,
     unit: "bytes",

@@ -57,6 +57,7 @@ export class Stage {
   #wanted = 0;
   #showing = 0;
   #selecting = 0;
+  #isMoved = false;
 
   constructor(
     readonly canvas: HTMLCanvasElement,
@@ -91,6 +92,7 @@ export class Stage {
     this.#leave();
     this.#shown = shown;
     this.#mostSiblings = Number.POSITIVE_INFINITY;
+    this.#isMoved = false;
     await this.select(0);
     if (old) this.#left.push(old);
     void shown.readAll(() => turn === this.#showing && this.#rebuild()).catch(() => {});
@@ -151,24 +153,27 @@ export class Stage {
     const { clientWidth, clientHeight } = this.canvas;
     this.#renderer.resize(clientWidth, clientHeight);
     this.#rig.resize(clientWidth, clientHeight);
-    this.resetView();
+    if (!this.#isMoved) return this.resetView();
+    this.#rig.update();
+    this.#request();
   }
 
   /** For keys: turns the camera of the free and following views (elsewhere it goes along the picture), in degrees to the right and up. */
   turn(right: number, up: number): void {
     if (this.#rig.isFlat) this.#rig.pan(-right * 4, up * 4);
     else this.#rig.turn((right * Math.PI) / 180, (up * Math.PI) / 180);
-    this.#request();
+    this.#moved();
   }
 
   /** For keys: greater than 1 comes nearer. */
   zoom(factor: number): void {
     this.#rig.zoom(factor);
-    this.#request();
+    this.#moved();
   }
 
   /** The view as `setView` first gave it. */
   resetView(): void {
+    this.#isMoved = false;
     if (this.#setting) this.#rig.frame(this.#view, this.#setting.framing);
     this.#request();
   }
@@ -245,7 +250,8 @@ export class Stage {
     this.#renderer.behind.add(this.#scene.behind);
     this.#renderer.front.add(this.#scene.front);
     for (const [layer, on] of Object.entries(this.#layers)) this.#scene.setLayer(layer as Layer, on);
-    if (JSON.stringify(old?.framing) !== JSON.stringify(this.#setting.framing)) this.resetView();
+    const isNew = JSON.stringify(old?.framing) !== JSON.stringify(this.#setting.framing);
+    if (isNew && !this.#isMoved) this.resetView();
     this.time = this.#time;
     this.#tell();
   }
@@ -271,6 +277,12 @@ export class Stage {
     if (words === this.#thinned) return;
     this.#thinned = words;
     this.onThinned();
+  }
+
+  /** By hand: it stays so until another view or throw is wanted. */
+  #moved(): void {
+    this.#isMoved = true;
+    this.#request();
   }
 
   #request(): void {
@@ -325,15 +337,15 @@ export class Stage {
       turn: (right, down) => {
         if (this.#rig.isFlat) this.#rig.pan(right, down);
         else this.#rig.turn(-right * 0.008, down * 0.008);
-        this.#request();
+        this.#moved();
       },
       pan: (right, down) => {
         this.#rig.pan(right, down);
-        this.#request();
+        this.#moved();
       },
       zoom: (factor, x, y) => {
         this.#rig.zoom(factor, x, y);
-        this.#request();
+        this.#moved();
       },
     };
   }

@@ -1,9 +1,10 @@
 /** The takes of the throw, as strips, in the order that was asked for. */
 
+import type { PageThrow } from "../page-data.js";
 import type { App } from "./app.js";
-import { el } from "./dom.js";
+import { el, fill } from "./dom.js";
 import { listBox, type Option } from "./list-box.js";
-import { type Measured, measureOf } from "./measures.js";
+import { type Measure, type Measured, measureOf } from "./measures.js";
 import { missedWords } from "./misses.js";
 import { placeAmong } from "./order.js";
 import { listed, measured, propOf, type State, throwOf } from "./state.js";
@@ -24,6 +25,15 @@ export function takeList({ store, strips }: App): HTMLElement {
     "Show all takes",
   );
 
+  const leftOut = el("ul", { class: "left-out" });
+  const box = el(
+    "div",
+    { class: "take-list" },
+    list.element,
+    el("div", { class: "none-row" }, none, showAll),
+    leftOut,
+  );
+
   store.watch(
     ({ data, throwName, order, verdicts, beside }) => [data, throwName, order, verdicts, beside],
     () => {
@@ -38,6 +48,15 @@ export function takeList({ store, strips }: App): HTMLElement {
       showAll.hidden = hidden === 0;
       none.hidden = takes.length > 0;
       none.textContent = emptyWords(state, hidden);
+      fill(leftOut, ...(throwOf(state)?.unheld ?? []).map(leftOutLine));
+    },
+  );
+  // What the new order puts first is what it was asked for.
+  store.watch(
+    ({ order, throwName }) => [order.by, order.highFirst, throwName],
+    () => {
+      list.element.scrollTo(0, 0);
+      box.scrollTo(0, 0);
     },
   );
   store.watch(
@@ -52,7 +71,7 @@ export function takeList({ store, strips }: App): HTMLElement {
     const isBeside = number === state.beside;
     const measure = measureOf(state.order.by);
     const value = measure.of(each);
-    const said = measure.key === "number" ? undefined : value === null ? "none" : measure.say(value);
+    const said = saidOf(each, measure);
     const marks = [
       verdict ?? (oldVerdict(state.verdicts, take.motion) && "changed since you decided"),
       missedWords(each) && "misses",
@@ -61,27 +80,39 @@ export function takeList({ store, strips }: App): HTMLElement {
     return {
       key: number,
       classes: [verdict ?? "", isBeside ? "beside" : ""].join(" "),
-      label: [`take ${number}`, said && `${measure.label} ${said}`, ...marks].filter(Boolean).join(", "),
       content: () => [
         el(
           "span",
           { class: "take-head" },
-          el("span", { class: "number" }, String(number)),
-          said !== undefined && el("span", { class: "value" }, said),
+          el("span", { class: "number" }, unseen("take "), String(number)),
+          said !== undefined && el("span", { class: "value" }, unseen(`, ${measure.label} `), said),
         ),
         el("span", { class: "take-strip" }, prop && strips.strip(take, prop, "takes")),
         said !== undefined && value !== null && bar(placeAmong(value, values)),
         el(
           "span",
           { class: "marks" },
-          ...marks.map((mark) => el("span", { class: `mark ${mark.split(" ")[0]}` }, mark)),
+          ...marks.map((mark) => el("span", { class: `mark ${mark.split(" ")[0]}` }, unseen(", "), mark)),
         ),
       ],
     };
   }
 
-  return el("div", { class: "take-list" }, list.element, el("div", { class: "none-row" }, none, showAll));
+  return box;
 }
+
+/** What the list is in order by, but for the number that each take shows anyway. */
+function saidOf(each: Measured, measure: Measure): string | undefined {
+  const value = measure.of(each);
+  if (measure.key === "number") return undefined;
+  if (value === null) return "none";
+  return measure.key === "nearest" ? `${measure.say(value)} from ${each.nearest?.take}` : measure.say(value);
+}
+
+const leftOutLine = ({ name, reason }: PageThrow["unheld"][number]): HTMLElement =>
+  el("li", {}, el("strong", {}, `${name} is left out:`), ` ${reason}`);
+
+const unseen = (text: string): HTMLElement => el("span", { class: "unseen" }, text);
 
 /** Where the value lies between the least and the greatest of all takes. */
 function bar(place: number | null): HTMLElement | null {

@@ -31,7 +31,6 @@ export function throwList({ store, strips }: App, onPicked: () => void): HTMLEle
     const about = aboutThrow(shown);
     return {
       key: shown.name,
-      label: `${shown.name}, ${about.join(", ")}`,
       content: () => [
         el("span", { class: "throw-strip" }, first && prop && strips.strip(first, prop, "throws")),
         el(
