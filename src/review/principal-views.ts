@@ -166,9 +166,14 @@ function draw(picture: Picture, spots: readonly Spot[], scale: number): Placed {
       ends: [centre[0], centre[1] - scale * low[1] + AXIS, centre[0], centre[1] - scale * high[1] - AXIS],
     },
   ];
-  const drawn = outline.rings.flatMap((ring) =>
-    Array.from(ring, (value, i) => centre[i % 2] + (i % 2 ? -scale : scale) * value),
-  );
+  const lines = [
+    ...axes.map(({ ends }) => ends),
+    ...outline.rings.map((ring) => [
+      ...Array.from(ring, (value, i) => centre[i % 2] + (i % 2 ? -scale : scale) * value),
+      centre[0] + scale * ring[0],
+      centre[1] - scale * ring[1],
+    ]),
+  ];
   const labels = [
     ...axes.map(
       ({ name, ends }, i): Label => ({
@@ -196,11 +201,8 @@ function draw(picture: Picture, spots: readonly Spot[], scale: number): Placed {
     ),
   ];
   const frame = { left: 0, top: TITLE, right: width, bottom: height };
-  const lines = axes.flatMap(({ ends: [x, y, toX, toY] }) =>
-    Array.from({ length: 41 }, (_, i) => [x + ((toX - x) * i) / 40, y + ((toY - y) * i) / 40]).flat(),
-  );
   const marks = spots.map(({ place }) => boxAbout(toPage(place)));
-  const placed = placeLabels(labels, frame, [...drawn, ...lines], marks);
+  const placed = placeLabels(labels, frame, lines.flatMap(pointsAlong), marks);
   return {
     width,
     height,
@@ -220,6 +222,17 @@ function draw(picture: Picture, spots: readonly Spot[], scale: number): Placed {
       ...placed.map(written),
     ].join("\n"),
   };
+}
+
+/** Points of a line of straight pieces, so near to each other that no text stands between them. */
+function pointsAlong(line: readonly number[]): number[] {
+  const points: number[] = [];
+  for (let i = 0; i + 3 < line.length; i += 2) {
+    const [x, y, toX, toY] = line.slice(i, i + 4);
+    const steps = Math.ceil(Math.max(Math.abs(toX - x), Math.abs(toY - y)) / 4) + 1;
+    for (let k = 0; k < steps; k++) points.push(x + ((toX - x) * k) / steps, y + ((toY - y) * k) / steps);
+  }
+  return points;
 }
 
 const boxAbout = ([x, y]: readonly [number, number]): TextBox => ({

@@ -58,6 +58,7 @@ function block({ prop, solid }: WeighSheetProp): Drawing {
         [
           { text: prop.name, look: "heading" },
           { text: facts(prop), look: "label" },
+          { text: kindOf(prop.principal.moments).kind, look: "label" },
           ...beyond.map((text) => ({ text, look: "faint" as const })),
         ],
         INNER,
@@ -71,7 +72,7 @@ function block({ prop, solid }: WeighSheetProp): Drawing {
 }
 
 const facts = (prop: Prop): string =>
-  `${figures(prop.mass)} kg, ${prop.size.map(figures).join(" × ")} m along the model’s x, y, z; reaches ${figures(prop.reach)} m from its centre of mass; ${kindOf(prop.principal.moments).kind}`;
+  `${figures(prop.mass)} kg, ${prop.size.map(figures).join(" × ")} m along the model’s x, y, z; reaches ${figures(prop.reach)} m from its centre of mass`;
 
 /** A line of each axis's look, its moment, and what a throw about it does. */
 function axisTable(prop: Prop): Drawing {
