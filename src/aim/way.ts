@@ -23,6 +23,7 @@ export interface Way {
   family?: string;
 }
 
+/** What is wished of the turning from pose to pose; empty: as little as can be. */
 export interface WayWish {
   /** Turns, negative for the other way about `axis`. */
   turns?: number;
@@ -30,6 +31,7 @@ export interface WayWish {
   axis?: Vec3;
 }
 
+/** The way found, and what whoever wished should know of it. */
 export interface NearestWay {
   way: Way;
   warnings: string[];

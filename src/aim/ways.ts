@@ -19,6 +19,7 @@ import {
 export { type DirectionRequest, nearestDirectionWay } from "./direction.js";
 export type { NearestWay, Way, WayWish } from "./way.js";
 
+/** Two poses, the time between them, and how much a body may turn from one to the other. */
 export interface WaysRequest {
   /** Principal moments in any order and unit. */
   moments: Vec3;
@@ -42,7 +43,8 @@ const MOST_TRIED = 8;
 
 /**
  * Every way from pose to pose within the bounds of turns, in ascending order of turns; for a family of exact solutions (same pose, half turn about
- * a principal axis, symmetric body about its own axis), its members with momenta in the principal planes.
+ * a principal axis, symmetric body about its own axis), its members with momenta in the principal planes. Momenta that lead to the end pose lie on
+ * a cone in the body (conservation of momentum and energy, Landau & Lifshitz, Mechanics, §37); along it they are searched and polished.
  */
 export function allWays(request: WaysRequest): Way[] {
   const problem = problemOf(request);
@@ -59,7 +61,9 @@ export function allWays(request: WaysRequest): Way[] {
 
 /**
  * The way nearest the wish; without one, the one that turns least. A wish for turns is met as nearly as the poses allow, one for an axis by the share
- * of the turning about it, signed, so that backspin never answers topspin.
+ * of the turning about it, signed, so that backspin never answers topspin. The spin found is in the principal frame, rad/s.
+ *
+ * @throws RangeError where no free motion leads there within the turns searched
  */
 export function nearestWay(request: Turn, wish: WayWish): NearestWay {
   const problem = problemOf(request);

@@ -24,6 +24,7 @@ export interface BakedChainTake extends ChainTake {
   nearest: Nearest | null;
 }
 
+/** A chain and its takes, ascending by number. */
 export interface BakedChain {
   entry: ChainEntry;
   /** Of all its throws. */

@@ -24,6 +24,7 @@ import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
 
 export type { BakedTake } from "./bake-take.js";
 
+/** A throw and its takes, ascending by number. */
 export interface BakedThrow {
   entry: ThrowEntry;
   takes: BakedTake[];
@@ -35,6 +36,7 @@ export interface Unheld {
   reason: UnheldLimits | UnheldChain;
 }
 
+/** What a throw file bakes to, in memory. */
 export interface Bake {
   /** The props that were used, in the throw file's order. */
   props: Map<string, LoadedProp>;
@@ -50,6 +52,7 @@ export interface Bake {
   unheld: Unheld[];
 }
 
+/** What of a throw file is baked, and who is told meanwhile. */
 export interface BakeOptions extends Omit<PlanOptions, "shard"> {
   /** Told after each take. */
   onTake?: (done: number, total: number) => void;

@@ -7,6 +7,7 @@ import { negate, type Vec3 } from "../math/vec3.js";
 import type { Prop } from "../prop/prop.js";
 import type { BakeSettings } from "../throwfile/types.js";
 
+/** Keys on their way into a file: the name of the clip they make, and its extras. */
 export interface NamedTrack {
   name: string;
   track: Track;

@@ -10,6 +10,7 @@ import { length, ZERO } from "../math/vec3.js";
 import { nodeBall } from "./node-ball.js";
 import { leftAlone, STILL_SCALE } from "./reducible.js";
 
+/** How far `reduceRigidClips` may move anything, and with which keys. */
 export interface ReduceOptions {
   /** No point of a node's geometry is moved further than this, scene frame, m. */
   toleranceMetres: number;
@@ -19,6 +20,7 @@ export interface ReduceOptions {
   onClip?: (report: ReducedClip) => void;
 }
 
+/** What became of one clip and one node that it moves. */
 export interface ReducedClip {
   clip: string;
   node: string;

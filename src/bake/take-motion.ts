@@ -44,6 +44,7 @@ export interface FlownPart {
   boxes: Box[];
 }
 
+/** A baked take as plain data, from which its motion, marks, boxes and cues can be drawn; glTF's world, m, s, rad. */
 export interface TakeMotion {
   /** Of the clip. */
   name: string;
@@ -57,6 +58,7 @@ export interface TakeMotion {
   parts: FlownPart[];
 }
 
+/** A throw's baked take as plain data, whatever the host: glTF's world, m, s, rad. */
 export function takeMotion(
   file: ThrowFile,
   { entry }: Pick<BakedThrow, "entry">,
@@ -74,6 +76,7 @@ export function takeMotion(
   };
 }
 
+/** A chain's baked take as plain data, its throws one after the other as parts. */
 export function chainMotion(
   file: ThrowFile,
   chain: Pick<BakedChain, "entry" | "prop">,

@@ -26,6 +26,7 @@ import { gapAtArrival, touchDown } from "./touch-down.js";
 import { flyInPlace, turnsAlone } from "./turn-only.js";
 import { arrivalWish, launchWish, mayWobble, turningAxis } from "./wish.js";
 
+/** A take solved: what was drawn, what was aimed for, and the flight that does it. World: glTF's, m, s, rad. */
 export interface Take {
   number: number;
   /** Which of the take's candidates it is. */

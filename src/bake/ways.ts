@@ -25,6 +25,7 @@ import { type LoadedProp, loadProps, type ModelSource } from "./props.js";
 import { solveTake, type Take } from "./take.js";
 import { plainAxes, rounding, type WrittenSpin, written } from "./written-spin.js";
 
+/** One way from the release pose to the arrival pose. */
 export interface ListedWay {
   turns: number;
   /** ∫|ω_a|dt/∫|ω|dt about long, middle, short. */
@@ -43,6 +44,7 @@ export interface ListedWay {
   spin: WrittenSpin | null;
 }
 
+/** The ways of one take, and which of them it takes. */
 export interface TakeWays {
   take: number;
   candidate: number;

@@ -46,6 +46,7 @@ export interface DracoAttribute {
   num_components(): number;
 }
 
+/** What `readModel` is handed to read compressed meshes with; meshopt needs nothing. */
 export interface Decoders {
   /**
    * For KHR_draco_mesh_compression: a new instance of the decoder, asked for only when a model needs it:

@@ -7,6 +7,7 @@ import { ModelError } from "./model.js";
 /** Written into every file we change or make; without a version, so that files of the same content are the same. */
 export const GENERATOR = "tossbake";
 
+/** A node that is added; what is missing is glTF's default. */
 export interface NewNode {
   name: string;
   /** m */
@@ -19,6 +20,7 @@ export interface NewNode {
   holdsScene?: boolean;
 }
 
+/** Keys that move one node. */
 export interface ClipChannel {
   /** A new node, or one of the model's own. */
   target: { added: number } | { node: number };
@@ -30,6 +32,7 @@ export interface ClipChannel {
   values: Float32Array | Int16Array;
 }
 
+/** A glTF animation, its times from 0. */
 export interface NewClip {
   name: string;
   extras?: object;
@@ -44,6 +47,7 @@ export interface Rest {
   scale?: Vec3;
 }
 
+/** What is added to a model. */
 export interface Graft {
   /** The first becomes the only root of the default scene; without any, the scene stays as it is. */
   nodes: NewNode[];

@@ -2,6 +2,7 @@
 
 import { cross, dot, type Vec3 } from "./vec3.js";
 
+/** A 3×3 matrix as three rows. */
 export type Mat3 = readonly [Vec3, Vec3, Vec3];
 
 export const multiplyVector = (m: Mat3, v: Vec3): Vec3 => [dot(m[0], v), dot(m[1], v), dot(m[2], v)];

@@ -15,6 +15,7 @@ import {
   type Vec3,
 } from "./vec3.js";
 
+/** [x, y, z, w], of unit length where it is a rotation; q and -q are the same one. */
 export type Quat = readonly [number, number, number, number];
 
 export const IDENTITY: Quat = [0, 0, 0, 1];

@@ -1,5 +1,6 @@
 /** Vectors of three numbers: small pure functions, no state. */
 
+/** [x, y, z] */
 export type Vec3 = readonly [number, number, number];
 
 export const ZERO: Vec3 = [0, 0, 0];

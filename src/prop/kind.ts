@@ -30,6 +30,7 @@ export type AxisBehaviour =
   /** As good as steady for a while: at the wobble it turns over after more than ten turns. */
   | { readonly behaviour: "drifts"; readonly turnsPerFlip: number; readonly turnsRound: TurnsRound };
 
+/** What a body is, and what a throw about each of its principal axes does. */
 export interface Kind {
   readonly kind: BodyKind;
   readonly axes: {

@@ -3,6 +3,7 @@
 import { RequestError } from "../math/request-error.js";
 import type { Vec3 } from "../math/vec3.js";
 
+/** A primitive body, lengths in m before `scale`. */
 export type Shape =
   /** Whole edges. */
   | { readonly box: Vec3 }

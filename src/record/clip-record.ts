@@ -5,6 +5,7 @@ import type { Mat3 } from "../math/mat3.js";
 import type { Quat } from "../math/quat.js";
 import type { Vec3 } from "../math/vec3.js";
 
+/** A prop's entry in takes.json: kg, m, kg m², in the model's scene frame. */
 export interface PropRecord {
   /** The model's path as the throw file writes it, or the shape as JSON. */
   source: string;
@@ -31,6 +32,7 @@ export interface PartRecord {
   arrival: MotionState;
 }
 
+/** A take's entry in takes.json: SI units and rad; the host's coordinates where the throw file names one, else glTF's. */
 export interface ClipRecord {
   name: string;
   /** Name of the throw, or of the chain. */
@@ -64,6 +66,7 @@ export interface ClipRecord {
   nearest: { take: number; distance: number } | null;
 }
 
+/** All of takes.json. */
 export interface TakesRecord {
   format: 1;
   tossbake: string;

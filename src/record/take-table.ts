@@ -9,6 +9,7 @@ import { rounded } from "../math/rounded.js";
 import { type Vec3, ZERO } from "../math/vec3.js";
 import type { Host } from "../throwfile/types.js";
 
+/** How a take is put into a table. */
 export interface TakeTableOptions {
   /** Rows a second. */
   rate: number;

@@ -217,6 +217,7 @@ export interface Position {
 
 export type KeyPath = readonly (string | number)[];
 
+/** A throw file, checked. Values under `throws` stay as they are written: degrees, and the host's axes and unit. */
 export interface ThrowFile {
   /** As given to `parseThrowFile`, for messages. */
   readonly name: string;
