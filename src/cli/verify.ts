@@ -10,12 +10,21 @@ import { fallsOtherwise } from "../record/compare-host.js";
 import { driftLines } from "../record/compare-report.js";
 import { formatRecord } from "../record/format.js";
 import { recordOf } from "../record/record-of.js";
+import { shapesOfProps } from "../review/drift-shapes.js";
+import {
+  type Compared,
+  refuseCompared,
+  shapesOfFolder,
+  shortNames,
+  writeDriftSheets,
+} from "./drift-pictures.js";
 import { ExitCode } from "./exit-code.js";
 import { progress } from "./progress.js";
 
 interface Options {
   output: string;
   against?: string;
+  sheets?: string;
   json?: boolean;
 }
 
@@ -24,23 +33,30 @@ interface Comparison {
   /** What both sides are, for the last line. */
   checked: TakesRecord;
   title: string;
+  compared: Compared;
 }
 
 export const verifyCommand = (answer: (code: number) => void) =>
   new Command("verify")
     .description(
-      "say what a folder's clips and takes.json differ in from what the throw file bakes now; writes nothing",
+      "say what a folder's clips and takes.json differ in from what the throw file bakes now; writes nothing but, on request, pictures",
     )
     .argument("[throwfile]", "what was baked; with --against only its host's axes and unit count")
     .requiredOption("-o, --output <dir>", "folder that was baked into")
     .option("--against <dir>", "compare with this folder instead: what changed from there to the other")
+    .option(
+      "--sheets <dir>",
+      "draw the takes that drifted, before and after over each other, into this folder",
+    )
     .option("--json", "print every difference as JSON")
     .addHelpText(
       "after",
-      "\nExamples:\n  tossbake verify quay.throws.yaml -o out\n  tossbake verify -o out --against out-before",
+      "\nExamples:\n  tossbake verify quay.throws.yaml -o out\n  tossbake verify -o out --against out-before\n  tossbake verify quay.throws.yaml -o out --sheets drift",
     )
     .action(async (path: string | undefined, options: Options) => {
-      const { drifts, checked, title } = await compare(path, options);
+      const { output, against = output, sheets } = options;
+      if (sheets !== undefined) await refuseCompared(sheets, [output, against]);
+      const { drifts, checked, title, compared } = await compare(path, options);
       const isDrift = drifts.length > 0;
       process.stdout.write(
         options.json
@@ -49,7 +65,11 @@ export const verifyCommand = (answer: (code: number) => void) =>
             ? `${driftLines(drifts).join("\n")}\n\n${title}: ${drifts.length} ${drifts.length === 1 ? "difference" : "differences"}\n`
             : `${title}: no drift in ${checked.clips.length} ${checked.clips.length === 1 ? "take" : "takes"}\n`,
       );
-      if (isDrift) answer(ExitCode.checkFailed);
+      if (!isDrift) return;
+      answer(ExitCode.checkFailed);
+      if (sheets === undefined) return;
+      const told = await writeDriftSheets(sheets, drifts, compared);
+      (options.json ? process.stderr : process.stdout).write(told);
     });
 
 function compare(path: string | undefined, { output, against }: Options): Promise<Comparison> {
@@ -77,6 +97,11 @@ async function compareWithBake(path: string, folder: string): Promise<Comparison
     drifts: compareBakes(before, { record: now }, files, opened.file.host),
     checked: now,
     title: `${folder} beside ${path}`,
+    compared: {
+      before: { name: basename(resolve(folder)), record: before.record, shapes: shapesOfFolder(folder) },
+      now: { name: basename(path), record: now, shapes: shapesOfProps(baked.props) },
+      host: opened.file.host,
+    },
   };
 }
 
@@ -105,10 +130,16 @@ async function compareFolders(path: string | undefined, folder: string, other: s
     ...(await own(folder, now.record)),
     ...(await own(other, before.record)),
   ];
+  const [beforeName, nowName] = shortNames(other, folder);
   return {
     drifts: compareBakes(before, now, files, host),
     checked: now.record,
     title: `${folder} against ${other}`,
+    compared: {
+      before: { name: beforeName, record: before.record, shapes: shapesOfFolder(other) },
+      now: { name: nowName, record: now.record, shapes: shapesOfFolder(folder) },
+      host,
+    },
   };
 }
 

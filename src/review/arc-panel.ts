@@ -188,7 +188,7 @@ function obstacles(
   return lines.flatMap(dense);
 }
 
-function onPage(ring: Float64Array, toPage: ArcLayout["toPage"]): number[] {
+export function onPage(ring: Float64Array, toPage: ArcLayout["toPage"]): number[] {
   const points: number[] = [];
   for (let i = 0; i < ring.length; i += 2) points.push(...toPage([ring[i], ring[i + 1]]));
   return points;
@@ -197,7 +197,7 @@ function onPage(ring: Float64Array, toPage: ArcLayout["toPage"]): number[] {
 /** px between points along a line. */
 const APART = 4;
 
-function dense(line: readonly number[]): number[] {
+export function dense(line: readonly number[]): number[] {
   const points: number[] = [];
   for (let i = 0; i + 3 < line.length; i += 2) {
     const [dx, dy] = [line[i + 2] - line[i], line[i + 3] - line[i + 1]];

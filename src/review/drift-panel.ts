@@ -2,6 +2,7 @@
 
 import { multiply } from "../math/quat.js";
 import type { Vec3 } from "../math/vec3.js";
+import { dense, onPage } from "./arc-panel.js";
 import type { Drawing } from "./drawing.js";
 import type { DriftLayer, DriftPose } from "./drift-layers.js";
 import { thinning } from "./exposures.js";
@@ -28,8 +29,8 @@ export interface DriftPanelInput {
 
 /** Room round the drawing for texts, px. */
 const MARGIN = { left: 62, right: 30, top: 26 };
-/** Of the root of an outline's area: poses are no nearer to each other. */
-const ROOM = 0.8;
+/** Of the root of an outline's area, and of the prop's reach: poses are no nearer to each other. */
+const ROOM = { area: 0.8, reach: 0.5 };
 /** px: an outline leaves the silhouette by no more. */
 const DETAIL = 0.35;
 
@@ -56,9 +57,7 @@ export function driftPanel(input: DriftPanelInput): Drawing {
   const labels = isNumbered
     ? (now.length > 0 ? now : before).flatMap((layer) => numbers(layer, view, toPage))
     : [];
-  const drawn = [...before, ...now].flatMap(({ path }) =>
-    path.flatMap((place) => [...toPage(inView(view, place))]),
-  );
+  const drawn = isNumbered ? [...before, ...now].flatMap((layer) => linesOf(layer, view, toPage, scale)) : [];
   return {
     width,
     height: ruled.bottom,
@@ -108,7 +107,7 @@ function thinned(layer: DriftLayer, view: View): ShownLayer {
     const { rings } = outlineOf(prop.solid, multiply(view.rotation, rotation), prop.reach / 50);
     return sum + areaOf(rings);
   }, 0);
-  const room = ROOM * Math.sqrt(area / poses.length);
+  const room = Math.max(ROOM.area * Math.sqrt(area / poses.length), ROOM.reach * prop.reach);
   const { every } = thinning(
     poses.map(({ centerOfMass }) => inView(view, centerOfMass)),
     room,
@@ -153,6 +152,24 @@ function drawLayer(
     }),
   ];
 }
+
+/** x y x y… px: what a number had better not cover. */
+const linesOf = (
+  { prop, poses, path }: ShownLayer,
+  view: View,
+  toPage: (place: Point | Vec3) => Point,
+  scale: number,
+): number[] => [
+  ...path.flatMap((place) => [...toPage(inView(view, place))]),
+  ...poses.flatMap(({ centerOfMass, rotation }) => {
+    const [x, y] = inView(view, centerOfMass);
+    const { rings } = outlineOf(prop.solid, multiply(view.rotation, rotation), DETAIL / scale);
+    return rings.flatMap((ring) => {
+      const points = onPage(ring, ([right, up]) => toPage([x + right, y + up]));
+      return dense([...points, points[0], points[1]]);
+    });
+  }),
+];
 
 const numbers = (
   { poses, counts }: ShownLayer,

@@ -1,17 +1,11 @@
 /** A take that drifted, on paper: as it was over as it is. */
 
-import { angleBetween } from "../math/quat.js";
-import { distance, type Vec3 } from "../math/vec3.js";
+import type { Vec3 } from "../math/vec3.js";
 import type { Drawing } from "./drawing.js";
-import {
-  type DriftLayer,
-  type DriftPair,
-  type DriftPose,
-  type DriftSide,
-  driftPairs,
-} from "./drift-layers.js";
-import { driftOutline, driftPanel } from "./drift-panel.js";
-import { capital, fixed } from "./figures.js";
+import { type DriftPair, type DriftSide, driftPairs } from "./drift-layers.js";
+import { driftMoments } from "./drift-moments.js";
+import { driftPanel } from "./drift-panel.js";
+import { driftRow } from "./drift-row.js";
 import { FONT_SIZE } from "./look.js";
 import { element, pathData, sheetSvg, textAt } from "./svg.js";
 import { textWidth, wrapped } from "./text-size.js";
@@ -50,8 +44,8 @@ export function driftSheet({ name, text, before, now, beforeName, nowName }: Dri
   const arcs = pairs.filter((pair) => pair.now?.travels || pair.before?.travels);
   const drawings = [
     heading(name, text, beforeName, nowName),
-    ...(arcs.length > 0 ? [...inColumns(arcPanels(arcs)), ...inColumns(endPanels(arcs))] : []),
-    ...pairs.flatMap((pair) => inPlace(pair, pairs.length > 1)),
+    ...(arcs.length > 0 ? [...inColumns(arcPanels(arcs)), ...inColumns(enlargedPanels(arcs))] : []),
+    ...pairs.map((pair) => driftRow(pair, pairs.length > 1, INNER)),
   ];
   let y = 0;
   const body = drawings.map((drawing) => {
@@ -117,39 +111,35 @@ function arcPanels(pairs: readonly DriftPair[]): Panel[] {
       pairs.length > 1 && pair.name
         ? `${pair.name}, from the side`
         : "Seen from the side, thrown from left to right";
-    return panel([pair], sideView(pair.ahead), true, `${title}. Numbers: the poses below.`);
+    return panel([pair], sideView(pair.ahead), { isNumbered: true }, `${title}. Numbers: the poses below.`);
   });
   if (leavesPlane(paths, first.ahead))
     panels.push(
-      panel(pairs, viewFromAbove(first.ahead), true, "Seen from above, the first throw from left to right."),
+      panel(
+        pairs,
+        viewFromAbove(first.ahead),
+        { isNumbered: pairs.length === 1 },
+        "Seen from above, the first throw from left to right.",
+      ),
     );
   return panels;
 }
 
-/** The first pose of all and the last, so large that little is seen. */
-function endPanels(pairs: readonly DriftPair[]): Panel[] {
-  const [first, last] = [pairs[0], pairs[pairs.length - 1]];
-  return [
-    endPanel(first, (poses) => poses[0], "Release"),
-    endPanel(last, (poses) => poses[poses.length - 1], "Arrival"),
-  ];
-}
+const enlargedPanels = (pairs: readonly DriftPair[]): Panel[] =>
+  driftMoments(pairs).map(({ pair, caption }) =>
+    panel([pair], sideView(pair.ahead), { height: ENLARGED }, caption),
+  );
 
-function endPanel(pair: DriftPair, pick: (poses: readonly DriftPose[]) => DriftPose, what: string): Panel {
-  const alone = (layer: DriftLayer | undefined): DriftLayer | undefined =>
-    layer && { ...layer, poses: [pick(layer.poses)], path: [] };
-  const [before, now] = [alone(pair.before), alone(pair.now)];
-  const apart = before && now ? `: ${apartText(before.poses[0], now.poses[0])}` : "";
-  return panel([{ ...pair, before, now }], sideView(pair.ahead), false, `${what}, enlarged${apart}.`);
-}
-
-function panel(pairs: readonly DriftPair[], view: View, isNumbered: boolean, caption: string): Panel {
-  return (width, height) => {
-    const before = pairs.flatMap((pair) => pair.before ?? []);
-    const now = pairs.flatMap((pair) => pair.now ?? []);
-    const most = isNumbered ? height : ENLARGED;
-    return captioned(driftPanel({ before, now, view, width, height: most, isNumbered }), caption);
-  };
+function panel(
+  pairs: readonly DriftPair[],
+  view: View,
+  { isNumbered = false, height: own }: { isNumbered?: boolean; height?: number },
+  caption: string,
+): Panel {
+  const before = pairs.flatMap((pair) => pair.before ?? []);
+  const now = pairs.flatMap((pair) => pair.now ?? []);
+  return (width, height) =>
+    captioned(driftPanel({ before, now, view, width, height: own ?? height, isNumbered }), caption);
 }
 
 function captioned(drawing: Drawing, caption: string): Drawing {
@@ -183,48 +173,6 @@ function inColumns(panels: readonly Panel[]): Drawing[] {
     };
   });
 }
-
-/** Of a pose in place, and of the text below it, px. */
-const CELL = { most: 104, text: 30 };
-
-/** The same poses about their centres of mass, side by side. */
-function inPlace({ name, before, now, ahead }: DriftPair, isNamed: boolean): Drawing[] {
-  const count = Math.max(before?.poses.length ?? 0, now?.poses.length ?? 0);
-  const cell = INNER / count;
-  const room = Math.min(cell - 6, CELL.most);
-  const scale = room / (2 * Math.max(before?.prop.reach ?? 0, now?.prop.reach ?? 0));
-  const view = sideView(ahead);
-  const top = 30;
-  const cells = Array.from({ length: count }, (_, i) => {
-    const place = [cell * (i + 0.5), top + room / 2] as const;
-    const [old, fresh] = [before?.poses[i], now?.poses[i]];
-    const turned = old && fresh ? `${fixed(degreesBetween(old, fresh), 1)}°` : "";
-    return [
-      ...(now && fresh ? [driftOutline(now.prop, fresh, view, scale, place, "now")] : []),
-      ...(before && old ? [driftOutline(before.prop, old, view, scale, place, "before")] : []),
-      textAt(place[0], top + room + 14, String(i + 1), { class: "number", "text-anchor": "middle" }),
-      textAt(place[0], top + room + 27, turned, { class: "small", "text-anchor": "middle" }),
-    ].join("\n");
-  });
-  const title = `${isNamed && name ? `${name}: the` : "The"} same poses in place, turning only`;
-  const which = !now ? " (gone)" : before ? ", and by how much they are turned from each other" : " (new)";
-  return [
-    {
-      width: INNER,
-      height: top + room + CELL.text + 12,
-      body: [textAt(0, 14, `${capital(title)}${which}`, { class: "heading" }), ...cells].join("\n"),
-    },
-  ];
-}
-
-function apartText(before: DriftPose, now: DriftPose): string {
-  const far = distance(before.centerOfMass, now.centerOfMass);
-  const length = far < 1 ? `${Number((far * 1000).toPrecision(2))} mm` : `${fixed(far, 2)} m`;
-  return `${length} apart, turned by ${fixed(degreesBetween(before, now), 1)}°`;
-}
-
-const degreesBetween = (a: DriftPose, b: DriftPose): number =>
-  (angleBetween(a.rotation, b.rotation) * 180) / Math.PI;
 
 function leavesPlane(path: readonly Vec3[], ahead: Vec3): boolean {
   const size = Math.max(
