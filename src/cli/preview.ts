@@ -59,7 +59,7 @@ async function writePage(path: string, output: string): Promise<boolean> {
   return unheld.length > 0;
 }
 
-/** Until somebody interrupts it. */
+/** Until somebody stops it. */
 async function serve(path: string, { port = 0, open }: Options): Promise<void> {
   const parts = await readPageParts(PAGE);
   const stop = watchForStop();
@@ -68,15 +68,20 @@ async function serve(path: string, { port = 0, open }: Options): Promise<void> {
     fail = reject;
     stop.signal.addEventListener("abort", () => done());
   });
-  const source = await previewOf(path, fail);
+  // it may fail before anybody waits for it
+  end.catch(() => undefined);
   try {
-    const server = await servePreview(source, parts, port);
-    process.stdout.write(`${path} is shown at ${server.url} until you press Ctrl+C\n`);
-    if (open && !(await openBrowser(server.url)))
-      process.stderr.write("no program is found that opens a browser: copy the address into one\n");
-    await end.finally(() => server.close());
+    const source = await previewOf(path, fail);
+    try {
+      const server = await servePreview(source, parts, port);
+      process.stdout.write(`${path} is shown at ${server.url} until you press Ctrl+C\n`);
+      if (open && !(await openBrowser(server.url)))
+        process.stderr.write("no program is found that opens a browser: copy the address into one\n");
+      await end.finally(() => server.close());
+    } finally {
+      await source.close();
+    }
   } finally {
-    await source.close();
     stop.end();
   }
 }

@@ -13,7 +13,10 @@ export interface PageParts {
   body: string;
 }
 
-/** What a page may load: its own script and style, and what the reader of models makes of their textures. */
+/**
+ * What a page may load: its own script and style, and what the reader of models makes of their textures. No WebAssembly: models come unpacked
+ * (`node/plain-glb.ts`).
+ */
 const POLICY = "default-src 'none'; img-src data: blob:; base-uri 'none'; form-action 'none'";
 
 /** Sent with the page of a server. */

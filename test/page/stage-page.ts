@@ -2,7 +2,7 @@
 
 import { fileURLToPath } from "node:url";
 import { build } from "esbuild";
-import { type Browser, chromium, type Page } from "playwright-core";
+import type { Browser, Page } from "playwright-core";
 import type { NamedFile } from "../../src/gltf/splice.js";
 import type { StageProp, StageThrow } from "../../src/review/page/stage.js";
 
@@ -36,27 +36,10 @@ export interface StagePage {
   close(): Promise<void>;
 }
 
-let browser: Promise<Browser> | undefined;
-
-export const launched = (): Promise<Browser> => {
-  browser ??= chromium.launch({
-    executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium",
-    args: [
-      "--no-sandbox",
-      "--use-angle=swiftshader",
-      "--enable-unsafe-swiftshader",
-      "--disable-background-networking",
-    ],
-  });
-  return browser;
-};
-
-export const closeBrowser = async (): Promise<void> => {
-  await (await browser)?.close();
-  browser = undefined;
-};
-
-export async function openStage({ width = 900, height = 600, dark = false } = {}): Promise<StagePage> {
+export async function openStage(
+  browser: Browser,
+  { width = 900, height = 600, dark = false } = {},
+): Promise<StagePage> {
   const bundled = await build({
     entryPoints: [ENTRY],
     bundle: true,
@@ -65,7 +48,7 @@ export async function openStage({ width = 900, height = 600, dark = false } = {}
     write: false,
     logLevel: "silent",
   });
-  const context = await (await launched()).newContext({ viewport: { width, height } });
+  const context = await browser.newContext({ viewport: { width, height } });
   const page = await context.newPage();
   const errors: string[] = [];
   page.on("pageerror", (error) => errors.push(String(error)));

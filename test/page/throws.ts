@@ -9,9 +9,10 @@ const PROPS = fileURLToPath(new URL("../../assets/props/", import.meta.url));
 
 export class Workshop {
   readonly folder = mkdtempSync(join(tmpdir(), "tossbake-workshop-"));
-  readonly path = join(this.folder, "yard.throws.yaml");
+  readonly path: string;
 
-  constructor(text: string) {
+  constructor(text: string, name = "yard.throws.yaml") {
+    this.path = join(this.folder, name);
     cpSync(join(PROPS, "spanner.glb"), join(this.folder, "spanner.glb"));
     this.save(text);
   }
