@@ -92,7 +92,7 @@ export const KEYS: readonly Key[] = [
     ({ view, label }, i): Key => ({
       keys: [String(i + 1)],
       label: String(i + 1),
-      does: `camera: ${label.toLowerCase()}`,
+      does: `${label.toLowerCase()} view`,
       group: "Picture",
       run: ({ store }) => store.send({ type: "view", view }),
     }),

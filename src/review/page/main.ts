@@ -62,6 +62,7 @@ function build(app: App, canvas: HTMLCanvasElement, voice: HTMLElement, live: bo
   const keys = keysPanel(app);
   const verdicts = verdictBar(app);
   const numbers = facts(app);
+  const time = timeLine(app);
   const drawn = () => {
     numbers.drawn();
     app.strips.start();
@@ -73,8 +74,8 @@ function build(app: App, canvas: HTMLCanvasElement, voice: HTMLElement, live: bo
       "section",
       { class: "stage-box", "aria-label": "The throw" },
       scene(app, canvas, drawn),
-      timeLine(app),
-      el("div", { class: "tools" }, transport(app), sceneBox(app)),
+      time.element,
+      el("div", { class: "tools" }, transport(app, time.now), sceneBox(app)),
     ),
     el(
       "section",

@@ -118,7 +118,7 @@ export const MEASURES: readonly Measure[] = [
   },
   {
     key: "nearest",
-    label: "distance from the take most alike",
+    label: "distance to most alike",
     of: (m) => m.nearest?.distance ?? null,
     say: words.metres,
     unit: "mm",

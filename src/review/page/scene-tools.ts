@@ -1,13 +1,13 @@
 /** Where the camera stands, and what is drawn beside the prop. */
 
 import type { App } from "./app.js";
-import { el, freshId } from "./dom.js";
+import { el } from "./dom.js";
 import type { Layer, View } from "./stage.js";
 
 export const VIEWS: readonly { view: View; label: string }[] = [
   { view: "side", label: "Side" },
   { view: "top", label: "Top" },
-  { view: "along", label: "Along the flight" },
+  { view: "along", label: "Along" },
   { view: "free", label: "Free" },
   { view: "follow", label: "Following" },
 ];
@@ -22,16 +22,11 @@ export const LAYERS: readonly { layer: Layer; label: string; about: string }[] =
 ];
 
 export function sceneTools({ store, stage }: App): HTMLElement {
-  const group = freshId();
-  const views = VIEWS.map(({ view, label }) => {
-    const input = el("input", {
-      type: "radio",
-      name: group,
-      value: view,
-      onchange: () => store.send({ type: "view", view }),
-    });
-    return { view, input, label: el("label", { class: "chip" }, input, el("span", {}, label)) };
-  });
+  const camera = el(
+    "select",
+    { onchange: () => store.send({ type: "view", view: camera.value as View }) },
+    ...VIEWS.map(({ view, label }) => el("option", { value: view }, `${label} view`)),
+  );
   const layers = LAYERS.map(({ layer, label, about }) => {
     const input = el("input", {
       type: "checkbox",
@@ -45,8 +40,8 @@ export function sceneTools({ store, stage }: App): HTMLElement {
   });
   store.watch(
     ({ view }) => [view],
-    (now) => {
-      for (const { view, input } of views) input.checked = view === now;
+    (view) => {
+      camera.value = view;
     },
   );
   store.watch(
@@ -55,6 +50,16 @@ export function sceneTools({ store, stage }: App): HTMLElement {
       for (const { layer, input } of layers) input.checked = on[layer];
     },
   );
+  const reset = el(
+    "button",
+    {
+      type: "button",
+      "aria-label": "Camera as it was",
+      title: "Camera as it was: V",
+      onclick: () => stage.resetView(),
+    },
+    "↺",
+  );
   const thinned = el("p", { class: "thinned", role: "status" });
   stage.onThinned = () => {
     thinned.textContent = stage.thinned;
@@ -62,14 +67,9 @@ export function sceneTools({ store, stage }: App): HTMLElement {
   return el(
     "div",
     { class: "scene-tools" },
-    el(
-      "fieldset",
-      {},
-      el("legend", {}, "Camera"),
-      ...views.map(({ label }) => label),
-      el("button", { type: "button", class: "quiet", onclick: () => stage.resetView() }, "Reset"),
-    ),
-    el("fieldset", {}, el("legend", {}, "Draw"), ...layers.map(({ label }) => label)),
+    el("label", {}, el("span", { class: "unseen" }, "Camera"), camera),
+    reset,
+    el("fieldset", {}, el("legend", { class: "unseen" }, "Draw"), ...layers.map(({ label }) => label)),
     thinned,
   );
 }

@@ -42,7 +42,7 @@ export function scene(app: App, canvas: HTMLCanvasElement, shown: () => void): H
       const label = VIEWS.find((other) => other.view === view)?.label.toLowerCase();
       canvas.setAttribute(
         "aria-label",
-        name === undefined ? "Nothing to see yet" : `${name}, take ${take}, seen ${label}`,
+        name === undefined ? "Nothing to see yet" : `${name}, take ${take}, ${label} view`,
       );
       caption.textContent = takeOf(store.state)?.motion.name ?? "";
     },

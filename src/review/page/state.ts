@@ -101,7 +101,9 @@ export function reduce(state: State, action: Action): State {
       return { ...state, order: { ...state.order, ...action.change } };
     case "verdict": {
       const take = takeOf(state);
-      return take ? { ...state, verdicts: decide(state.verdicts, take.motion, action.verdict) } : state;
+      return take
+        ? followed(state, { ...state, verdicts: decide(state.verdicts, take.motion, action.verdict) })
+        : state;
     }
     case "clear":
       return state.throwName === undefined
@@ -129,6 +131,14 @@ function keepingKnown(before: PageData, after: PageData): PageData {
       : shown;
   });
   return { ...after, throws };
+}
+
+/** Where only undecided takes are listed, the next one moves up to the place of the one that was decided. */
+function followed(before: State, after: State): State {
+  const at = listed(before).findIndex(({ number }) => number === before.take);
+  const list = listed(after);
+  if (at < 0 || list.length === 0 || list.some(({ number }) => number === before.take)) return after;
+  return { ...after, take: list[Math.min(at, list.length - 1)].number };
 }
 
 /** Throw and takes that there are: what was looked at, or else the first. */

@@ -12,7 +12,8 @@ const PAGE = 10;
 const LETTER = 6.6;
 const GAP = 8;
 
-export function timeLine({ store, player }: App): HTMLElement {
+/** `now` says the time in words. */
+export function timeLine({ store, player }: App): { element: HTMLElement; now: HTMLElement } {
   const id = freshId();
   const slider = el("input", {
     type: "range",
@@ -108,7 +109,7 @@ export function timeLine({ store, player }: App): HTMLElement {
   player.onTime(show);
   new ResizeObserver(layOut).observe(ticks);
 
-  return el("div", { class: "time-line" }, now, el("div", { class: "rail" }, ticks, slider));
+  return { element: el("div", { class: "rail" }, ticks, slider), now };
 }
 
 /** ", apex" while the time is within `close` of a cue, else what came last. */

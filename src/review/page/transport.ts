@@ -13,7 +13,8 @@ const SIGNS = {
 
 const SLOW_WORDS: Record<Slowness, string> = { 1: "1", 2: "½", 4: "¼", 8: "⅛" };
 
-export function transport({ store, player }: App): HTMLElement {
+/** @param now where the time is said */
+export function transport({ store, player }: App, now: HTMLElement): HTMLElement {
   const play = el("button", { type: "button", class: "play", onclick: () => player.toggle() });
   const back = el(
     "button",
@@ -58,6 +59,7 @@ export function transport({ store, player }: App): HTMLElement {
     ahead,
     slow,
     el("label", { class: "chip" }, loop, el("span", {}, "Loop")),
+    now,
   );
 }
 
