@@ -53,7 +53,7 @@ export function planOf(file: ThrowFile, options: PlanOptions = {}): Planned[] {
     takes,
   );
   checkCounts(file, all);
-  return shard ? all.map(({ entry, numbers }) => ({ entry, numbers: shareOf(numbers, shard) })) : all;
+  return shard ? all.map(({ entry, numbers }, i) => ({ entry, numbers: shareOf(numbers, shard, i) })) : all;
 }
 
 /** A throw or chain that the file has. */
@@ -93,8 +93,9 @@ export function selectTakes<Entry extends Pick<ThrowEntry, "takes">>(
   );
 }
 
-function shareOf(numbers: readonly number[], { index, of }: Shard): readonly number[] {
-  const end = (i: number) => Math.floor((numbers.length * i) / of);
+/** Neighbours, as even draws look back; what does not divide evenly falls to another share in each throw. */
+function shareOf(numbers: readonly number[], { index, of }: Shard, nth: number): readonly number[] {
+  const end = (i: number) => Math.floor((numbers.length * i + (nth % of)) / of);
   return numbers.slice(end(index - 1), end(index));
 }
 

@@ -1,6 +1,6 @@
-/** The program as it is installed: its script and one file of all its modules, run in a process of its own. */
+/** The program as it is installed: its script, one file of all its modules and one of what its threads run, in a process of its own. */
 
-import { spawnSync } from "node:child_process";
+import { type ChildProcess, spawn, spawnSync } from "node:child_process";
 import { cpSync, mkdtempSync, rmSync, symlinkSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
@@ -31,8 +31,9 @@ export class Program {
     cpSync(join(ROOT, "package.json"), join(folder, "package.json"));
     symlinkSync(join(ROOT, "node_modules"), join(folder, "node_modules"));
     await build({
-      entryPoints: [join(ROOT, "src/cli/main.ts")],
-      outfile: join(folder, "dist/cli/main.js"),
+      entryPoints: ["cli/main.ts", "node/bake-worker.ts"].map((name) => join(ROOT, "src", name)),
+      outbase: join(ROOT, "src"),
+      outdir: join(folder, "dist"),
       bundle: true,
       platform: "node",
       format: "esm",
@@ -44,6 +45,15 @@ export class Program {
 
   run(args: string[], options: RunOptions = {}): Run {
     return this.node([join(this.folder, "bin/tossbake.js"), ...args], options);
+  }
+
+  /** Started, and left to run. */
+  start(args: string[], { node = [], cwd = this.folder, env = {} }: RunOptions = {}): ChildProcess {
+    return spawn(process.execPath, [...node, join(this.folder, "bin/tossbake.js"), ...args], {
+      cwd,
+      env: { ...process.env, NODE_OPTIONS: "", ...env },
+      stdio: ["ignore", "pipe", "pipe"],
+    });
   }
 
   /** Standard output of a module's text. */
