@@ -51,6 +51,8 @@ export interface PageProp {
   reach: number;
   /** Bounding box; none where only a record is known. */
   size?: Vec3;
+  /** Of that box. */
+  middle?: Vec3;
   points: Record<string, Vec3>;
   warnings: string[];
 }
@@ -130,9 +132,22 @@ const pageProp = (prop: Prop): PageProp => ({
   moments: prop.principal.moments,
   reach: prop.reach,
   size: prop.size,
+  middle: middleOf(prop.extremes),
   points: Object.fromEntries(Object.entries(prop.points).map(([name, { position }]) => [name, position])),
   warnings: [...prop.warnings],
 });
+
+function middleOf(points: Float64Array): Vec3 {
+  const along = (axis: number): number => {
+    let [low, high] = [points[axis], points[axis]];
+    for (let i = axis; i < points.length; i += 3) {
+      low = Math.min(low, points[i]);
+      high = Math.max(high, points[i]);
+    }
+    return (low + high) / 2;
+  };
+  return [along(0), along(1), along(2)];
+}
 
 /**
  * The throws and chains that were baked, those of which every take was left out too, without their stamps; records say where the throw file has its

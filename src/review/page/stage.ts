@@ -153,8 +153,8 @@ export class Stage {
     const { clientWidth, clientHeight } = this.canvas;
     this.#renderer.resize(clientWidth, clientHeight);
     this.#rig.resize(clientWidth, clientHeight);
-    if (!this.#isMoved) return this.resetView();
-    this.#rig.update();
+    if (this.#isMoved) this.#rig.update();
+    else this.resetView();
     this.#request();
   }
 

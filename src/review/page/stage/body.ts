@@ -78,11 +78,14 @@ function placesOf(mesh: Mesh, toModel: Matrix4): Matrix4[] {
 }
 
 /** A box of the prop's size, or of its reach. */
-function boxOf({ size, reach }: StageProp): TriangleMesh {
+function boxOf({ size, middle, centerOfMass: c, reach }: StageProp): TriangleMesh {
   const edge = reach * 1.15;
   const box = new BoxGeometry(...((size ?? [edge, edge, edge]) as [number, number, number]));
   const mesh = {
-    positions: new Float64Array(box.getAttribute("position").array),
+    positions: Float64Array.from(
+      box.getAttribute("position").array,
+      (value, i) => value + (middle ?? c)[i % 3] - c[i % 3],
+    ),
     triangles: new Uint32Array(box.index!.array),
   };
   box.dispose();

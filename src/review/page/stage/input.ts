@@ -14,6 +14,8 @@ export interface StageProp {
   reach: number;
   /** Edges of the bounding box, for a prop that comes without a mesh. */
   size?: Vec3;
+  /** Of that box; default: the centre of mass. */
+  middle?: Vec3;
   /** Named points that have a path of their own. */
   points: Readonly<Record<string, Vec3>>;
 }

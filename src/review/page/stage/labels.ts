@@ -137,10 +137,11 @@ export class Labels {
   }
 }
 
+/** Within a scene, and with all that it is part of. */
 function isShown(sprite: Sprite): boolean {
-  for (let object: Object3D | null = sprite; object; object = object.parent)
-    if (!object.visible) return false;
-  return true;
+  let object: Object3D = sprite;
+  for (; object.parent; object = object.parent) if (!object.visible) return false;
+  return "isScene" in object;
 }
 
 const overlap = (a: Box, b: Box): boolean =>

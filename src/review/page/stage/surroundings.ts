@@ -92,7 +92,8 @@ export class Surroundings {
     const dash: [number, number] | undefined = what === "floor" ? undefined : [size / 40, size / 60];
     this.group.add(strokes(lines, { color, width: 2, dash }));
     const text = `${what} ${Number(height.toFixed(3))} m`;
-    this.#say(text, new Vector3(high.x, height, high.z), [0.5, what === "not above" ? -0.2 : 1.2], color);
+    const at = new Vector3(low.x + 0.75 * (high.x - low.x), height, low.z + 0.75 * (high.z - low.z));
+    this.#say(text, at, [0.5, what === "not above" ? -0.2 : 1.2], color);
   }
 
   #box({ center, half, rotation }: FlownPart["boxes"][number]): void {
