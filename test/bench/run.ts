@@ -11,6 +11,7 @@ import { aiming } from "./aiming.js";
 import { evenness } from "./evenness.js";
 import { keys } from "./keys.js";
 import { bakeForTable, manyTakes } from "./many-takes.js";
+import { outlines } from "./outlines.js";
 import { vary } from "./vary.js";
 import { weighForTable, weighing } from "./weighing.js";
 
@@ -24,6 +25,7 @@ const SECTIONS = [
   evenness,
   weighing,
   aiming,
+  outlines,
 ];
 
 const [first, ...rest] = process.argv.slice(2);
