@@ -24,7 +24,7 @@ const STEPS = [
 ];
 /** Least room between two figures beside and above each other, px. */
 const ROOM = 46;
-const ROOM_UP = 24;
+const ROOM_UP = 32;
 const TICK = 5;
 /** From the picture to a ruler, px. */
 const GAP = 10;
@@ -51,40 +51,52 @@ export function rulers({ bounds, toPage, scale, zero, view }: RuledPicture): Rul
     [left, y, right, y],
     [x, top, x, bottom],
   ];
-  const texts: { text: string; left: number; base: number }[] = [];
+  const texts: RulerText[] = [];
   for (const value of ticks(bounds.left - zero[0], bounds.right - zero[0], step)) {
     const [at] = toPage([value + zero[0], 0]);
     lines.push([at, y, at, y + TICK]);
     const text = figure(value, step);
-    texts.push({ text, left: at - textWidth(text, SIZE) / 2, base: y + TICK + SIZE });
+    texts.push({ text, x: at, base: y + TICK + SIZE, anchor: "middle" });
   }
   for (const value of ticks(bounds.low - upright, bounds.high - upright, stepUp)) {
     const [, at] = toPage([0, value + upright]);
     lines.push([x - TICK, at, x, at]);
     const text = figure(value, stepUp);
-    texts.push({ text, left: x - TICK - 3 - textWidth(text, SIZE), base: at + 0.36 * SIZE });
+    texts.push({ text, x: x - TICK - 3, base: at + DROP, anchor: "end" });
   }
   const below = y + TICK + 2.3 * SIZE;
-  texts.push({ text: "metres from the release, along the throw", left, base: below });
+  texts.push({ text: "metres from the release, along the throw", x: left, base: below, anchor: "start" });
   const side = view.name === "side" ? "height, m" : "to the left, m";
-  texts.push({ text: side, left: 2, base: top - GAP });
+  texts.push({ text: side, x: 2, base: top - GAP, anchor: "start" });
   return {
     body: [
       element("path", { class: "rule", d: pathData(lines, { decimals: 1 }) }),
-      ...texts.map(({ text, left, base }) => textAt(left, base, text, { class: "small" })),
+      ...texts.map(({ text, x, base, anchor }) =>
+        textAt(x, base, text, { class: "small", "text-anchor": anchor }),
+      ),
     ],
     lines: lines.slice(0, 2),
-    boxes: texts.map(({ text, left, base }) => ({
-      left,
-      right: left + textWidth(text, SIZE),
-      top: base - SIZE,
-      bottom: base + 0.25 * SIZE,
-    })),
+    boxes: texts.map(boxOf),
     bottom: below + 0.4 * SIZE,
   };
 }
 
 const SIZE = FONT_SIZE.small;
+/** From the middle of a figure to its baseline, px. */
+const DROP = 0.36 * SIZE;
+
+interface RulerText {
+  text: string;
+  x: number;
+  base: number;
+  anchor: "start" | "middle" | "end";
+}
+
+function boxOf({ text, x, base, anchor }: RulerText): TextBox {
+  const width = textWidth(text, SIZE);
+  const left = anchor === "start" ? x : anchor === "end" ? x - width : x - width / 2;
+  return { left, right: left + width, top: base - SIZE, bottom: base + 0.25 * SIZE };
+}
 
 function* ticks(low: number, high: number, step: number): Generator<number> {
   for (let i = Math.ceil(low / step); i * step <= high; i++) yield i * step;

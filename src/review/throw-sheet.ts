@@ -124,17 +124,15 @@ function captioned(panel: ArcPanel, { told, view }: ArcInput, take: SheetTake): 
     view.name === "side"
       ? "Seen from the side, thrown from left to right"
       : `Seen from above, ${told.length > 1 ? "the first throw" : "thrown"} from left to right`;
-  const thinned =
-    panel.every > 1
-      ? `; every ${ordinal(panel.every)} of the ${exposures.length} poses below is shown, so that the outlines stay apart`
-      : "";
-  const crowded = panel.crowded ? "; there is no room to keep them from overlapping" : "";
+  const which = `every ${ordinal(panel.every)} of the ${exposures.length} poses below is shown`;
+  const apart = panel.crowded ? "; even so some overlap" : ", so that the outlines stay apart";
+  const thinned = panel.every > 1 ? `; ${which}${apart}` : panel.crowded ? "; the outlines overlap" : "";
   const notes = panel.notes.map((note) => ` ${capital(note)}.`).join("");
   const text = textBlock(
     [
       ...(isPart && stretch.name ? [{ text: stretch.name, look: "heading" } as const] : []),
       ...(isPart ? [{ text: `${capital(courseWords(take, stretch))}.`, look: "label" } as const] : []),
-      { text: `${seen}${thinned}${crowded}.${signs(told, view)}${notes}`, look: "faint" },
+      { text: `${seen}${thinned}.${signs(told, view)}${notes}`, look: "faint" },
     ],
     panel.width,
   );
@@ -146,7 +144,7 @@ function signs(told: readonly Told[], view: View): string {
   const parts = told.flatMap(({ stretch }) => stretch.part ?? []);
   const isAsked = parts.some(({ release, arrival }) => release.asked || arrival.asked);
   if (view.name === "above" || told[0].exposures[0].number > 1) return "";
-  return ` Line: the way of its centre of mass. Square: where it is let go and where it ends${isAsked ? "; ring: the place asked for" : ""}.`;
+  return ` Line: its centre of mass. Square: where it is let go and where it ends${isAsked ? "; ring: place asked for" : ""}.`;
 }
 
 const ordinal = (n: number): string => (n === 2 ? "2nd" : n === 3 ? "3rd" : `${n}th`);

@@ -44,7 +44,8 @@ function manner({ name, isSpun, turnsOver }: Turning, about: Vec3, ahead: Vec3, 
     const clock = about[1] > 0 ? "anticlockwise" : "clockwise";
     return `${verb} ${name === "short" ? "flat" : "upright"}, ${clock} seen from above`;
   }
-  return along > NEAR ? `${verb} like a drill` : `${verb} aslant`;
+  if (turnsOver || along < NEAR) return turnsOver ? "tumbles sideways" : "spins aslant";
+  return "spins like a drill";
 }
 
 function unsteadiness({ isSpun, name, sway, turnsOver }: Turning): string {
