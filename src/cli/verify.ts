@@ -2,15 +2,23 @@ import { basename, dirname, join, resolve } from "node:path";
 import { Command } from "commander";
 import { bake } from "../bake/bake.js";
 import { RequestError } from "../math/request-error.js";
-import { checkFolder, compareFiles, contentsOf, readBakedFolder } from "../node/baked-folder.js";
+import {
+  checkFolder,
+  compareFiles,
+  compareSheets,
+  contentsOf,
+  readBakedFolder,
+  sheetsIn,
+} from "../node/baked-folder.js";
 import { type OpenedThrowFile, openThrowFile } from "../node/throw-file.js";
 import type { TakesRecord } from "../record/clip-record.js";
-import { compareBakes, type Drift } from "../record/compare.js";
+import { compareBakes, type Drift, type FolderFile } from "../record/compare.js";
 import { fallsOtherwise } from "../record/compare-host.js";
 import { driftLines } from "../record/compare-report.js";
 import { formatRecord } from "../record/format.js";
 import { recordOf } from "../record/record-of.js";
 import { shapesOfProps } from "../review/drift-shapes.js";
+import { type NamedSheet, sheetsInput, sheetsOf } from "../review/sheets.js";
 import {
   type Compared,
   refuseCompared,
@@ -20,6 +28,9 @@ import {
 } from "./drift-pictures.js";
 import { ExitCode } from "./exit-code.js";
 import { progress } from "./progress.js";
+
+/** Of all takes. */
+const TAKES_SHEET = "takes.svg";
 
 interface Options {
   output: string;
@@ -92,6 +103,7 @@ async function compareWithBake(path: string, folder: string): Promise<Comparison
   const files = [
     ...(await compareFiles([now, before.record], async (name) => contents.get(name), contentsOf(folder))),
     ...(await checkFolder(folder, now, modelsIn(folder, path, opened))),
+    ...(await checkSheets(folder, before.record, now, () => sheetsOf(sheetsInput(opened.file, baked)))),
   ];
   return {
     drifts: compareBakes(before, { record: now }, files, opened.file.host),
@@ -103,6 +115,34 @@ async function compareWithBake(path: string, folder: string): Promise<Comparison
       host: opened.file.host,
     },
   };
+}
+
+/** Sheets that lie beside the clips; without any, none is drawn. */
+async function checkSheets(
+  folder: string,
+  before: TakesRecord,
+  now: TakesRecord,
+  draw: () => Promise<NamedSheet[]>,
+): Promise<FolderFile[]> {
+  const throwsIn = (record: TakesRecord) => [...new Set(record.clips.map((clip) => clip.throw))];
+  const throws = throwsIn(now);
+  const shows = new Map<string, readonly string[]>([
+    ...throws.map((name) => [`${name}.svg`, [name]] as const),
+    [TAKES_SHEET, throws] as const,
+  ]);
+  const gone = throwsIn(before).filter((name) => !throws.includes(name));
+  const present = await sheetsIn(folder, [...shows.keys(), ...gone.map((name) => `${name}.svg`)]);
+  const isAny = [...shows.keys()].some((name) => present.has(name));
+  const fresh = isAny ? await draw() : [];
+  return [
+    ...(await compareSheets(
+      folder,
+      fresh.map((sheet) => ({ ...sheet, shows: shows.get(sheet.name) ?? [] })),
+    )),
+    ...gone.flatMap((name): FolderFile[] =>
+      present.has(`${name}.svg`) ? [{ name: `${name}.svg`, state: "stray", shows: [name] }] : [],
+    ),
+  ];
 }
 
 /** The throw file's own models that lie in the folder. */

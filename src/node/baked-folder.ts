@@ -5,6 +5,7 @@ import { basename, join } from "node:path";
 import { RequestError } from "../math/request-error.js";
 import type { TakesRecord } from "../record/clip-record.js";
 import type { BakedFolder, FolderFile } from "../record/compare.js";
+import { binOf } from "../record/compare-files.js";
 import { readRecord } from "./kept-record.js";
 
 /** @throws RequestError where there is no takes.json, or none that can be read */
@@ -71,10 +72,30 @@ export async function checkFolder(
   ];
 }
 
-/** A .gltf has its bytes in a .bin of the same name. */
 const filesOf = (record: TakesRecord): Set<string> =>
-  new Set(
-    record.clips.flatMap(({ file }) =>
-      file.endsWith(".gltf") ? [file, file.replace(/\.gltf$/, ".bin")] : [file],
-    ),
-  );
+  new Set(record.clips.flatMap(({ file }) => [file, binOf(file) ?? []].flat()));
+
+/** A sheet as it is drawn now. */
+export interface FreshSheet {
+  name: string;
+  content: string;
+  /** Throws and chains that it shows. */
+  shows: readonly string[];
+}
+
+/** Names of sheets that lie in the folder: of throws or chains, and of all takes. */
+export async function sheetsIn(folder: string, names: Iterable<string>): Promise<Set<string>> {
+  const present = new Set(await readdir(folder));
+  return new Set([...names].filter((name) => present.has(name)));
+}
+
+/** What the sheets in a folder are against those drawn now; those that are not there are passed over. */
+export async function compareSheets(folder: string, fresh: readonly FreshSheet[]): Promise<FolderFile[]> {
+  const read = contentsOf(folder);
+  const files: FolderFile[] = [];
+  for (const { name, content, shows } of fresh) {
+    const old = await read(name);
+    if (old) files.push({ name, shows, state: Buffer.from(content).equals(old) ? "same" : "different" });
+  }
+  return files;
+}

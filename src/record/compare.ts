@@ -4,6 +4,7 @@ import { rounded } from "../math/rounded.js";
 import type { Host } from "../throwfile/types.js";
 import type { ClipRecord, TakesRecord } from "./clip-record.js";
 import { compareClips } from "./compare-clip.js";
+import { fileDrift } from "./compare-files.js";
 import { compareProps } from "./compare-prop.js";
 import { lineThatDiffers } from "./compare-text.js";
 import type { Change } from "./compare-values.js";
@@ -34,6 +35,8 @@ export interface FolderFile {
   name: string;
   /** As the other bake's to the byte, not so; or amiss in its own folder: named and not there, or there and not named. */
   state: "same" | "different" | "missing" | "stray";
+  /** Of a sheet, the throws and chains that it shows. */
+  shows?: readonly string[];
 }
 
 /**
@@ -178,37 +181,6 @@ function values(changes: readonly Change[]): string {
 
 const written = (change: Change, side: "before" | "now") =>
   side in change ? JSON.stringify(change[side]) : "nothing";
-
-/** What the records do not explain. */
-function fileDrift(
-  { name, state }: FolderFile,
-  before: TakesRecord,
-  now: TakesRecord,
-  told: readonly Drift[],
-): Drift[] {
-  const row = (what: Drift["what"], text: string): Drift[] => [{ kind: "file", name, what, text }];
-  const clipsIn = (record: TakesRecord) => record.clips.filter((clip) => clip.file === name);
-  const [olds, news] = [clipsIn(before), clipsIn(now)];
-  if (state === "stray")
-    return row(
-      "stray",
-      olds.length > 0
-        ? `${name} is left over from a throw that is gone`
-        : `${name} is a stray: no throw that is known writes it`,
-    );
-  // the file of a throw that is new cannot be there yet
-  if (state === "missing")
-    return news.length > 0 && olds.length === 0 ? [] : row("missing", `${name} is missing`);
-  if (state === "same") return [];
-  const isExplained = told.some(
-    (drift) =>
-      [...olds, ...news].some((clip) => drift.name === clip.name || drift.name === clip.throw) ||
-      (drift.kind === "prop" && news.some((clip) => clip.prop === drift.name)),
-  );
-  return isExplained
-    ? []
-    : row("edited", `${name} was changed after it was baked: the record is the same, the file is not`);
-}
 
 function textDrift(before: BakedFolder, now: BakedFolder): Drift[] {
   const line = lineThatDiffers(before, now.record) ?? lineThatDiffers(now, before.record);

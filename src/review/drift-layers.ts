@@ -34,8 +34,9 @@ export interface DriftPair {
   name?: string;
   before?: DriftLayer;
   now?: DriftLayer;
-  /** Level unit vector along the flight, as it is now if it is. */
+  /** Level unit vector along the flight, and where it is let go; as it is now, if it is. */
   ahead: Vec3;
+  release: Vec3;
 }
 
 /** From release to arrival: enough to follow a turn and a half, and more of them. */
@@ -50,11 +51,8 @@ export function driftPairs(before: DriftSide, now: DriftSide): DriftPair[] {
     const turns = Math.max(old?.turns ?? 0, fresh?.turns ?? 0);
     const steps = STEPS[turns > FEW_TURNS ? 1 : 0];
     const pair = { before: old && layerOf(before, old, steps), now: fresh && layerOf(now, fresh, steps) };
-    return {
-      ...pair,
-      name: (fresh ?? old).name,
-      ahead: courseOf((pair.now ?? pair.before).path),
-    };
+    const { path } = pair.now ?? pair.before;
+    return { ...pair, name: (fresh ?? old).name, ahead: courseOf(path), release: path[0] };
   });
 }
 

@@ -21,7 +21,10 @@ interface Met {
   apart: number;
 }
 
-/** Release and arrival where they are not as they were, and where the two are furthest apart. */
+/** Of what is seen of the whole: a picture that is no larger than this many times it shows nothing more. */
+const LARGER = 2.5;
+
+/** Release and arrival where they are not as they were, and where the two are furthest apart; what could not be drawn larger is left out. */
 export function driftMoments(pairs: readonly DriftPair[]): DriftMoment[] {
   const moments = pairs.flatMap((pair, part) => {
     const { before, now } = pair;
@@ -34,7 +37,9 @@ export function driftMoments(pairs: readonly DriftPair[]): DriftMoment[] {
   });
   if (moments.length === 0) return [];
   const most = moments.reduce((best, moment) => (moment.apart > best.apart ? moment : best));
+  const whole = Math.max(...pairs.flatMap(({ before, now }) => [before, now].map(extent)));
   return moments
+    .filter(({ pair: { now }, apart }) => whole >= LARGER * (2 * now!.prop.reach + apart))
     .filter(
       (moment) => moment === most || ((moment.isRelease || moment.isArrival) && moment.apart > UNSEEN_METRES),
     )
@@ -60,4 +65,15 @@ function apart(before: DriftLayer, now: DriftLayer, i: number): number {
   const [old, fresh] = [before.poses[i], now.poses[i]];
   const turned = 2 * now.prop.reach * sin(angleBetween(old.rotation, fresh.rotation) / 2);
   return distance(old.centerOfMass, fresh.centerOfMass) + turned;
+}
+
+/** m, of the path and the prop. */
+function extent(layer: DriftLayer | undefined): number {
+  if (!layer) return 0;
+  const { path, prop } = layer;
+  const sides = [0, 1, 2].map((axis) => {
+    const values = path.map((place) => place[axis]);
+    return Math.max(...values) - Math.min(...values);
+  });
+  return Math.max(...sides) + 2 * prop.reach;
 }

@@ -25,6 +25,8 @@ export interface DriftPanelInput {
   height: number;
   /** Poses have the numbers of their shares. */
   isNumbered: boolean;
+  /** Where distances are counted from, world frame, m. */
+  zero: Vec3;
 }
 
 /** Room round the drawing for texts, px. */
@@ -46,7 +48,7 @@ export function driftPanel(input: DriftPanelInput): Drawing {
     MARGIN.left + spare + scale * (x - bounds.left),
     MARGIN.top + scale * (bounds.high - y),
   ];
-  const zero = inView(view, [...now, ...before][0].poses[0].centerOfMass);
+  const zero = inView(view, input.zero);
   const ruled = rulers({ bounds, toPage, scale, zero, view });
   const frame = {
     left: 2,

@@ -111,7 +111,12 @@ function arcPanels(pairs: readonly DriftPair[]): Panel[] {
       pairs.length > 1 && pair.name
         ? `${pair.name}, from the side`
         : "Seen from the side, thrown from left to right";
-    return panel([pair], sideView(pair.ahead), { isNumbered: true }, `${title}. Numbers: the poses below.`);
+    return panel(
+      [pair],
+      sideView(pair.ahead),
+      { isNumbered: true },
+      `${title}. Numbers: equal shares of the time from release to arrival.`,
+    );
   });
   if (leavesPlane(paths, first.ahead))
     panels.push(
@@ -139,7 +144,10 @@ function panel(
   const before = pairs.flatMap((pair) => pair.before ?? []);
   const now = pairs.flatMap((pair) => pair.now ?? []);
   return (width, height) =>
-    captioned(driftPanel({ before, now, view, width, height: own ?? height, isNumbered }), caption);
+    captioned(
+      driftPanel({ before, now, view, width, height: own ?? height, isNumbered, zero: pairs[0].release }),
+      caption,
+    );
 }
 
 function captioned(drawing: Drawing, caption: string): Drawing {
