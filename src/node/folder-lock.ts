@@ -1,7 +1,7 @@
 /** One bake at a time in a folder; a bake that died holds nothing. */
 
 import { readFileSync } from "node:fs";
-import { readdir, readFile, rm, writeFile } from "node:fs/promises";
+import { readdir, readFile, rm, stat, writeFile } from "node:fs/promises";
 import { hostname } from "node:os";
 import { join } from "node:path";
 import { isRunning } from "./output-folder.js";
@@ -25,12 +25,24 @@ export async function takeLock(folder: string): Promise<Lock> {
     const last = await lastLock(folder);
     if (last > 0) {
       const holder = await readHolder(folder, last);
-      if (holder && isAlive(holder)) return { holder };
+      if (holder && (await isAlive(folder, last, holder))) return { holder };
     }
     const path = join(folder, lockName(last + 1));
+    const content = JSON.stringify(ourselves());
     try {
-      await writeFile(path, JSON.stringify(ourselves()), { flag: "wx" });
-      return { release: () => rm(path, { force: true }) };
+      await writeFile(path, content, { flag: "wx" });
+      // not made again once it is gone
+      const beat = setInterval(
+        () => void writeFile(path, content, { flag: "r+" }).catch(() => undefined),
+        BEAT,
+      );
+      beat.unref();
+      return {
+        release: async () => {
+          clearInterval(beat);
+          await rm(path, { force: true });
+        },
+      };
     } catch (error) {
       // another was faster
       if ((error as NodeJS.ErrnoException).code !== "EEXIST") throw error;
@@ -42,7 +54,7 @@ export async function takeLock(folder: string): Promise<Lock> {
 export async function holderOf(folder: string): Promise<Holder | undefined> {
   const last = await lastLock(folder);
   const holder = last > 0 ? await readHolder(folder, last) : undefined;
-  return holder && isAlive(holder) ? holder : undefined;
+  return holder && (await isAlive(folder, last, holder)) ? holder : undefined;
 }
 
 const lockName = (number: number) => `lock-${number}`;
@@ -52,6 +64,9 @@ async function lastLock(folder: string): Promise<number> {
   return numbers.reduce((last, number) => Math.max(last, Number(number)), 0);
 }
 
+/** ms between two touches of a lock, and after which an untouched one counts for nothing. */
+const BEAT = 5_000;
+const SILENT = 60_000;
 /** How often, and after how many ms, a lock is read that has just been made and is still empty. */
 const READINGS = 20;
 const PAUSE = 25;
@@ -71,9 +86,19 @@ async function readHolder(folder: string, number: number): Promise<Holder | unde
 
 const ourselves = (): Holder => ({ host: hostname(), process: process.pid, began: beginningOf(process.pid) });
 
-/** A process of another machine cannot be asked, and counts as alive. */
-function isAlive({ host, process: id, began }: Holder): boolean {
-  if (host !== hostname()) return true;
+/** A process of another machine cannot be asked: it is dead when it has not touched its lock for long, by the clock of the file system. */
+async function isAlive(
+  folder: string,
+  number: number,
+  { host, process: id, began }: Holder,
+): Promise<boolean> {
+  if (host !== hostname()) {
+    const probe = join(folder, `now-${process.pid}`);
+    await writeFile(probe, "");
+    const [now, touched] = [await stat(probe), await stat(join(folder, lockName(number)))];
+    await rm(probe, { force: true });
+    return now.mtimeMs - touched.mtimeMs < SILENT;
+  }
   if (!isRunning(id)) return false;
   const now = beginningOf(id);
   return began === undefined || now === undefined || began === now;

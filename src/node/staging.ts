@@ -79,9 +79,13 @@ export async function openStaging(
       leave: release,
       discard: async () => {
         await remove(path);
+        await release();
         await unmake();
       },
-      finish: () => remove(path),
+      finish: async () => {
+        await remove(path);
+        await release();
+      },
     };
   } catch (error) {
     await release();

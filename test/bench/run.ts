@@ -8,6 +8,7 @@ import { againstEngine } from "./against-engine.js";
 import { againstOdeSolver } from "./against-ode-solver.js";
 import { againstPipeline } from "./against-pipeline.js";
 import { aiming } from "./aiming.js";
+import { batch } from "./batch.js";
 import { evenness } from "./evenness.js";
 import { keys } from "./keys.js";
 import { bakeForTable, manyTakes } from "./many-takes.js";
@@ -21,6 +22,7 @@ const SECTIONS = [
   againstPipeline,
   keys,
   manyTakes,
+  batch,
   vary,
   evenness,
   weighing,
@@ -31,7 +33,7 @@ const SECTIONS = [
 const [first, ...rest] = process.argv.slice(2);
 if (first === "--bake") await bakeForTable(Number(rest[0]));
 else if (first === "--weigh") await weighForTable(rest[0]);
-else await printTables(process.argv.slice(2));
+else await printTables(process.argv.slice(2).filter((name) => name !== "--all"));
 
 async function printTables(names: readonly string[]): Promise<void> {
   for (const name of names)
