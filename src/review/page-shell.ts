@@ -14,16 +14,13 @@ export interface PageParts {
 }
 
 /**
- * What a page may load: its own script and style, and what the reader of models makes of their textures. No WebAssembly: models come unpacked
- * (`node/plain-glb.ts`).
+ * What a page may load: its own script and style, and what the reader of models makes of their textures. No WebAssembly, which decoders
+ * would need: models come unpacked (`node/plain-glb.ts`), so that the policy can stay as strict as it is.
  */
 const POLICY = "default-src 'none'; img-src data: blob:; base-uri 'none'; form-action 'none'";
 
-/** The decoder of meshopt's compression is WebAssembly, which is within the script. */
-const DECODERS = "'wasm-unsafe-eval'";
-
 /** Sent with the page of a server. */
-export const SERVER_POLICY = `${POLICY}; script-src 'self' ${DECODERS}; style-src 'self'; connect-src 'self' blob:; frame-ancestors 'none'`;
+export const SERVER_POLICY = `${POLICY}; script-src 'self'; style-src 'self'; connect-src 'self' blob:; frame-ancestors 'none'`;
 
 /** The page whose script, style, data and files come from where it comes from. */
 export const servedPage = ({ body }: Pick<PageParts, "body">, title: string): string =>
@@ -43,7 +40,7 @@ export async function onePage(
   data: PageData,
   files: readonly { name: string; content: Uint8Array }[],
 ): Promise<string> {
-  const policy = `${POLICY}; script-src '${await sourceHash(script)}' ${DECODERS}; style-src '${await sourceHash(style)}'; connect-src blob: data:`;
+  const policy = `${POLICY}; script-src '${await sourceHash(script)}'; style-src '${await sourceHash(style)}'; connect-src blob: data:`;
   const json = JSON.stringify(data).replaceAll("<", "\\u003c");
   const held = files.map(
     ({ name, content }) =>
