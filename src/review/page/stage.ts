@@ -92,6 +92,7 @@ export class Stage {
     this.#leave();
     this.#shown = shown;
     this.#mostSiblings = Number.POSITIVE_INFINITY;
+    this.#fluency.reset();
     this.#isMoved = false;
     await this.select(0);
     if (old) this.#left.push(old);
@@ -200,6 +201,11 @@ export class Stage {
   /** Where a moment's centre of mass is in the picture, px from its upper left corner. */
   screenPlace(t: number): { x: number; y: number } {
     return this.#scene ? this.#rig.project(this.#scene.place(t)) : { x: 0, y: 0 };
+  }
+
+  /** How many other takes there are in the scene, whether it shows them or not. */
+  get siblingsDrawn(): number {
+    return this.#scene?.siblings ?? 0;
   }
 
   /** What the graphics memory holds. */

@@ -107,6 +107,11 @@ export class TakeScene {
     });
   }
 
+  /** How many there are. */
+  get siblings(): number {
+    return this.#options.siblings.length;
+  }
+
   /** Of the centre of mass. */
   place(t: number): Vector3 {
     return this.course.place(t, this.#options.shown.prop.centerOfMass);
