@@ -2,6 +2,8 @@ import { createHash } from "node:crypto";
 import { existsSync, readFileSync, symlinkSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+// @ts-expect-error it is a script of the build, without types
+import { bundlePage } from "../../build/page.js";
 import type { PageData } from "../../src/review/page-data.js";
 import type { Program } from "../cli/program.js";
 import { HARM } from "./hostile.js";
@@ -36,6 +38,15 @@ describe("preview --page", () => {
     const first = readFileSync(page);
     write(workshop.path, page);
     expect(readFileSync(page).equals(first)).toBe(true);
+  });
+
+  it("is bundled to the same bytes wherever", async () => {
+    const again = join(workshop.folder, "again");
+    await bundlePage(again);
+    for (const name of ["page.js", "page.css", "body.html"])
+      expect(
+        readFileSync(join(again, name)).equals(readFileSync(join(program.folder, "dist/page", name))),
+      ).toBe(true);
   });
 
   it("holds all it needs, and a policy under which it can load nothing else", () => {
