@@ -17,6 +17,7 @@ interface Options {
   jobs?: number;
   shard?: { index: number; of: number };
   resume?: boolean;
+  strobe: boolean;
   dryRun?: boolean;
   json?: boolean;
 }
@@ -41,6 +42,7 @@ export const bakeCommand = (answer: (code: number) => void) =>
       "this machine's share of the takes, such as 2/8, with bake: { files: per-take }; tossbake merge puts them together",
       shardOf,
     )
+    .option("--no-strobe", "draw no sheets (THROW.svg, takes.svg)")
     .option("--dry-run", "solve and print, but write nothing")
     .option("--json", "print the record instead of the table")
     .addHelpText("after", "\nExample:\n  tossbake bake quay.throws.yaml -o out")
@@ -60,7 +62,7 @@ export const bakeCommand = (answer: (code: number) => void) =>
 async function bakeAndTell(
   path: string,
   opened: OpenedThrowFile,
-  { only, takes, shard, jobs, resume, dryRun = false, json = false, output }: Options,
+  { only, takes, shard, jobs, resume, strobe, dryRun = false, json = false, output }: Options,
   answer: (code: number) => void,
 ): Promise<void> {
   const shown = progress();
@@ -74,6 +76,7 @@ async function bakeAndTell(
       shard,
       jobs,
       resume,
+      sheets: strobe,
       signal: stop.signal,
       onTakes: (done, total) => {
         counts = [done, total];

@@ -9,6 +9,7 @@ import { textSha256 } from "../math/hash.js";
 import type { PropRecord } from "../record/clip-record.js";
 import { recordHead } from "../record/record-of.js";
 import { VERSION } from "../record/version.js";
+import { sheetsOf } from "../review/sheets.js";
 import { type BatchOptions, batch } from "./batch.js";
 import { type BatchReport, batchRecord, type TextSink } from "./batch-record.js";
 import { Interrupted } from "./interrupted.js";
@@ -17,7 +18,7 @@ import { MachineError } from "./machine-error.js";
 import { unwritable } from "./output-folder.js";
 import { ShardWriter, shardName } from "./shard-record.js";
 import { spareOthers } from "./spare-others.js";
-import { type BatchHeader, giveFiles, openStaging, partsIn, type Staging } from "./staging.js";
+import { type BatchHeader, giveFiles, openStaging, partsIn, type Staging, writeWhole } from "./staging.js";
 import { TextFile } from "./text-file.js";
 import type { OpenedThrowFile } from "./throw-file.js";
 
@@ -26,6 +27,8 @@ export interface FolderOptions extends PlanOptions, Pick<BatchOptions, "jobs" | 
   resume?: boolean;
   /** Told what should be known before the takes are made. */
   onNote?: (text: string) => void;
+  /** Draws THROW.svg of each throw and chain, and takes.svg: not of a share, nor of some of a throw's takes. */
+  sheets?: boolean;
   /** Gets the record of these takes. */
   shown?: TextSink;
 }
@@ -63,7 +66,9 @@ export async function bakeFolder(
     return told(await recorded(parts, { head, plan, opened, props, options }), head);
   }
   const last = shard ? shardName(shard) : "takes.json";
-  await spareOthers(output, [...filesOf(opened, plan), last], opened.inputs);
+  const drawn = options.sheets && !shard && !takes;
+  const sheetNames = drawn ? [...plan.map(({ entry }) => `${entry.name}.svg`), "takes.svg"] : [];
+  await spareOthers(output, [...filesOf(opened, plan), ...sheetNames, last], opened.inputs);
   const header = await headerOf(opened, models, options);
   const staging = await openStaging(output, header, { shard, resume: options.resume ?? false });
   if (staging.isStale)
@@ -77,6 +82,7 @@ export async function bakeFolder(
       hasFiles: staging.wasReady,
     });
     const report = await recorded(parts, { head, plan, opened, props, options, output, staging });
+    if (drawn) await writeSheets(opened, props, report, staging.path, only === undefined);
     await giveFiles(staging.path, output, last, options.signal).catch((error) => {
       throw isAbort(error) ? new Interrupted() : unwritable(output, error);
     });
@@ -85,6 +91,19 @@ export async function bakeFolder(
   } catch (error) {
     throw await givenUp(error, output, staging);
   }
+}
+
+/** The sheet of all takes is of all throws. */
+async function writeSheets(
+  { file }: OpenedThrowFile,
+  props: ReadonlyMap<string, LoadedProp>,
+  { motions }: BatchReport,
+  staging: string,
+  ofAll: boolean,
+): Promise<void> {
+  const input = { title: file.name.replace(/^.*[\\/]/, ""), props, throws: motions };
+  for (const { name, content } of await sheetsOf(input))
+    if (ofAll || name !== "takes.svg") await writeWhole(staging, `files/${name}`, content);
 }
 
 /** Writes the record, or the shard's, beside the files. */

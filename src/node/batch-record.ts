@@ -4,6 +4,7 @@ import type { Nearest } from "../bake/nearest.js";
 import { nearestFinder } from "../bake/nearest.js";
 import { addNote, emptyNotes, type ThrowNotes } from "../bake/notes.js";
 import { isChain, type Planned } from "../bake/plan.js";
+import type { TakeMotion } from "../bake/take-motion.js";
 import type { TakesRecord } from "../record/clip-record.js";
 import { clipText, recordPieces, withNearest } from "../record/format.js";
 import type { PlainTake } from "../record/plain-take.js";
@@ -16,11 +17,17 @@ export interface TextSink {
 }
 
 export type Told = Pick<PlainTake, "figures" | "note" | "text"> & {
+  motion?: TakeMotion;
   compared: { course: PlainTake["compared"]["course"]; samples?: Float64Array };
 };
 
+/** Takes of a throw that are kept to be drawn: more arcs over each other are a blot. */
+const DRAWN = 200;
+
 export interface BatchReport {
   throws: ThrowSummary[];
+  /** Of each throw's and chain's first takes. */
+  motions: { name: string; prop: string; takes: { motion: TakeMotion }[]; takeCount: number }[];
   notes: ThrowNotes[];
   left: { name: string; reason: string }[];
 }
@@ -108,6 +115,12 @@ export async function batchRecord(
   await fresh?.end();
   return {
     throws: Array.from(told.values(), ({ summary }) => summary).filter(({ takes }) => takes > 0),
+    motions: Array.from(told.values(), ({ summary: { name, prop, takes }, motions }) => ({
+      name,
+      prop,
+      takes: motions.map((motion) => ({ motion })),
+      takeCount: takes,
+    })).filter(({ takes }) => takes.length > 0),
     notes: Array.from(told.values(), ({ notes }) => notes),
     left,
   };
@@ -117,11 +130,14 @@ export async function batchRecord(
 function teller(entry: Planned["entry"], reach: number) {
   const nearestTo = nearestFinder(reach);
   const notes = emptyNotes(entry);
+  const motions: TakeMotion[] = [];
   const summary = emptySummary(entry.name, entry.prop, isChain(entry));
   return {
     notes,
     summary,
-    tell({ figures, note, compared: { course, samples } }: Told): Nearest | null {
+    motions,
+    tell({ figures, note, motion, compared: { course, samples } }: Told): Nearest | null {
+      if (motion && motions.length < DRAWN) motions.push(motion);
       const nearest = nearestTo(figures.take, course, samples);
       addNote(notes, note, nearest);
       addFigures(summary, figures);

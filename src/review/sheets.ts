@@ -15,7 +15,13 @@ export interface SheetsInput {
   title: string;
   props: ReadonlyMap<string, { prop: Prop; model: Model }>;
   /** In the throw file's order, chains after the throws; each with at least one take. */
-  throws: readonly { name: string; prop: string; takes: readonly { motion: TakeMotion; turns?: number }[] }[];
+  throws: readonly {
+    name: string;
+    prop: string;
+    takes: readonly { motion: TakeMotion; turns?: number }[];
+    /** How many there are in all, where these are but the first of them. */
+    takeCount?: number;
+  }[];
 }
 
 export interface NamedSheet {
@@ -60,11 +66,12 @@ export const sheetsInput = (
 export async function sheetInputs({ props, throws }: SheetsInput): Promise<ThrowSheetInput[]> {
   const ready = new Map<string, SheetProp>();
   for (const [name, { prop, model }] of props) ready.set(name, sheetProp(prop, await solidOf(model, prop)));
-  return throws.map(({ name, prop, takes }) => {
+  return throws.map(({ name, prop, takes, takeCount }) => {
     const own = ready.get(prop) as SheetProp;
     return {
       title: name,
       prop: own,
+      takeCount,
       takes: takes.map(
         ({ motion, turns }): SheetTake => ({
           name: motion.name,

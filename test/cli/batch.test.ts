@@ -106,7 +106,7 @@ describe("shards, merged, are the whole", () => {
     [".gltf and .bin, all shards in one folder", "files: per-take, container: gltf", ["m"]],
   ])("%s", async (_, settings, folders) => {
     const place = new Workplace(manyTakes(settings));
-    await bakeHere(place, "whole");
+    await bakeHere(place, "whole", "--no-strobe");
     const whole = everythingIn(place, "whole");
     for (const i of [2, 3, 1]) {
       const { err } = await bakeHere(place, folders[i - 1] ?? folders[0], "--shard", `${i}/3`);
