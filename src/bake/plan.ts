@@ -68,7 +68,7 @@ export function throwNamed(file: ThrowFile, name: string): ThrowEntry {
   const entry = file.throws.get(name);
   if (entry) return entry;
   throw new RequestError(
-    ["--only"],
+    ["only"],
     `there is no throw "${name}"`,
     `one of ${[...file.throws.keys()].join(", ")}`,
   );
@@ -87,7 +87,7 @@ export function selectTakes<Entry extends Pick<ThrowEntry, "takes">>(
     .filter(({ numbers }) => numbers.length > 0);
   if (chosen.length > 0) return chosen;
   throw new RequestError(
-    ["--takes"],
+    ["takes"],
     `no throw has a take from ${first} to ${last}`,
     `the last take is ${all.reduce((most, { numbers }) => numbers.reduce((m, n) => Math.max(m, n), most), 0)}`,
   );
@@ -104,7 +104,7 @@ function checkNames(file: ThrowFile, only: readonly string[] = []): void {
   for (const name of only)
     if (!names.includes(name))
       throw new RequestError(
-        ["--only"],
+        ["only"],
         `there is no throw${file.chains.size > 0 ? " or chain" : ""} "${name}"`,
         `one of ${names.join(", ")}`,
       );
@@ -115,21 +115,21 @@ function checkWhole(file: ThrowFile, { only, takes, shard }: PlanOptions): void 
   const { files } = file.bake;
   if (files === "together" && only && only.length < file.throws.size + file.chains.size)
     throw new RequestError(
-      ["--only"],
+      ["only"],
       "one file holds the clips of all throws (bake.files is together), so that some cannot be baked alone",
-      "leave --only out, or write per-throw",
+      "ask for all of them, or write per-throw",
     );
   if (!shard) return;
   if (files !== "per-take")
     throw new RequestError(
-      ["--shard"],
+      ["shard"],
       `one file holds many takes (bake.files is ${files}), so that a share of them cannot be written`,
       "write bake: { files: per-take }",
     );
   if (only || takes)
     throw new RequestError(
-      [only ? "--only" : "--takes"],
-      "does not go with --shard, which takes a share of all",
+      [only ? "only" : "takes"],
+      "does not go with a shard, which is a share of all",
       "leave one of them out",
     );
 }

@@ -61,11 +61,15 @@ export async function main(args: readonly string[]): Promise<number> {
   }
 }
 
+/** What the library calls by the same names without dashes. */
+const LIBRARY_OPTIONS = new Set(["only", "takes", "shard", "rate"]);
+
 /** Prints what went wrong in one message and says whose fault it is. */
 function explain(error: unknown): number {
   if (error instanceof CommanderError) return error.exitCode === 0 ? ExitCode.done : ExitCode.wrongRequest;
   if (error instanceof ThrowFileError || error instanceof ModelError || error instanceof RequestError) {
-    process.stderr.write(`${error.message}\n`);
+    const isOption = error instanceof RequestError && LIBRARY_OPTIONS.has(error.path.join());
+    process.stderr.write(`${isOption ? "--" : ""}${error.message}\n`);
     return ExitCode.wrongRequest;
   }
   if (error instanceof Interrupted) {

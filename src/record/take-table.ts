@@ -43,7 +43,7 @@ export function takeTable(take: TakeMotion, { rate, axes, host }: TakeTableOptio
 function rowTimes({ name, duration }: TakeMotion, rate: number): number[] {
   if (!(rate > 0 && rate * duration < MOST_ROWS))
     throw new RequestError(
-      ["--rate"],
+      ["rate"],
       `is ${rate} a second, and ${name} lasts ${rounded(duration)} s`,
       `above 0, and so that a take has less than ${MOST_ROWS} rows`,
     );

@@ -1,6 +1,6 @@
 import { readFileSync } from "node:fs";
 import { expect, it } from "vitest";
-import { ROOT } from "./sources.js";
+import { ROOT, readSources } from "./sources.js";
 
 // What is public is this project's own choice; a change of it is a change of version by semantic versioning (semver.org, 2.0.0, §§ 5 to 8).
 
@@ -77,4 +77,9 @@ it("the overview of the library is of what there is", () => {
   );
   expect(imported.length).toBeGreaterThan(3);
   for (const name of imported) expect(names).toContain(name);
+});
+
+it("no message of the library's names an option of the command line", () => {
+  for (const { path, text } of readSources().filter(({ path }) => !/^(cli|node|review\/page)\//.test(path)))
+    expect(text.match(/["'` ]--[a-z][\w-]*/g) ?? [], path).toEqual([]);
 });

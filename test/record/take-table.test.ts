@@ -209,7 +209,7 @@ describe("a take's table", () => {
     const { axes, of } = motions(THROWS, await baked(THROWS));
     for (const rate of [1e12, 0, -1, Number.NaN, Number.POSITIVE_INFINITY])
       expect(() => takeTable(of("lob_01"), { rate, axes })).toThrow(
-        /^--rate:? is .* a second, and lob_01 lasts 0.75 s/,
+        /^rate: is .* a second, and lob_01 lasts 0.75 s/,
       );
   });
 });
