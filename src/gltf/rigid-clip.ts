@@ -20,6 +20,8 @@ export interface PathNode {
 export interface RigidClip {
   /** The node that is moved with all below it. */
   node: number;
+  /** Of the outermost node that is moved; "" where it has none. */
+  name: string;
   /** From a root of the scene down to the node. */
   path: PathNode[];
   /** The model with nothing in its scene but that node, at the origin and not turned, as large as it is in the scene. */
@@ -71,8 +73,10 @@ export function rigidClip(model: Model, clip: ReadClip): RigidClip | NotRigid {
   if (path.length < nodes.length)
     return { reason: `what is above ${named(json, node)} scales it unevenly or mirrors it` };
   const factor = path.reduce((product, { scale }) => product * scale, 1);
+  const top = nodes.find((other) => moved.includes(other))!;
   return {
     node,
+    name: json.nodes![top].name ?? "",
     path,
     piece: pieceOf(
       model,

@@ -73,16 +73,15 @@ export async function clipMotions(model: Model): Promise<(ClipMotion | LeftClip)
   }
 
   async function bodyOf(
-    { node, piece }: RigidClip,
+    { node, name, piece }: RigidClip,
     center: ReturnType<typeof recordedCenter>,
   ): Promise<ClipBody | { reason: string }> {
     const known = bodies.get(node) ?? [];
     bodies.set(node, known);
     const same = known.find(({ prop }) => center === undefined || center.fits(prop.centerOfMass));
     if (same) return same;
-    const name = model.json.nodes![node].name ?? "";
     try {
-      const prop = await weigh(name, piece, center && { centerOfMass: center.place });
+      const prop = await weigh(name || "prop", piece, center && { centerOfMass: center.place });
       const body = { prop: sheetProp(prop, await solidOf(piece, prop)), warnings: prop.warnings };
       known.push(body);
       return body;

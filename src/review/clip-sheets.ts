@@ -76,7 +76,11 @@ function group(
   const shown = travels(motion) ? take : { ...take, parts: take.parts.map(turningAlone) };
   // the clip's own end is rounded to float32
   const whole = { ...motion, duration: take.duration };
-  return { title: name, prop: { ...prop, axes }, takes: [{ name, motion: whole, take: shown, turns }] };
+  return {
+    title: name,
+    prop: { ...prop, axes, name: take.prop },
+    takes: [{ name, motion: whole, take: shown, turns }],
+  };
 }
 
 /** A clip may leave it to the game where a thing flies, though the record knows. */
