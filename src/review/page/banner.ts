@@ -4,6 +4,7 @@ import type { PageError } from "../page-data.js";
 import type { App } from "./app.js";
 import { el, fill } from "./dom.js";
 import type { State } from "./state.js";
+import { counted } from "./words.js";
 
 export function banner({ store }: Pick<App, "store">): HTMLElement {
   const element = el("div", { class: "banner", role: "region", "aria-label": "What is wrong", hidden: true });
@@ -35,7 +36,7 @@ function faultsOf({ error, trouble, connected, title, shown }: Faults): HTMLElem
             "div",
             { class: "fault" },
             el("strong", {}, placeWords(title, error)),
-            el("pre", {}, error.message),
+            el("pre", {}, faultWords(title, error)),
             el("p", {}, `Mend it and save: the page follows.${old}`),
           ),
         ]
@@ -68,16 +69,30 @@ export const placeWords = (title: string, { line, column }: PageError): string =
     ? `${title} cannot be baked`
     : `${title}, line ${line}${column === undefined ? "" : `, column ${column}`}`;
 
-/** What is to be said when new data come. */
-export function newsWords(before: State["data"], after: State["data"]): string | undefined {
+/** Without the folders before the file's name, which are longer than what is wrong. */
+export const faultWords = (title: string, { message }: PageError): string =>
+  message
+    .split("\n")
+    .map((line) => line.slice(Math.max(0, line.indexOf(`${title}:`))))
+    .join("\n");
+
+/** What is to be said when new data come; what is `urgent` is said at once, else when no more comes. */
+export function newsWords(
+  before: State["data"],
+  after: State["data"],
+): { text: string; urgent: boolean } | undefined {
   const takes = after.throws.reduce((sum, shown) => sum + shown.takes.length, 0);
-  if (after.error) {
-    const isNew = after.error.message !== before.error?.message;
-    return isNew ? `${placeWords(after.title, after.error)}: ${after.error.message}` : undefined;
+  const { title, error } = after;
+  if (error) {
+    const isNew = error.message !== before.error?.message;
+    return isNew
+      ? { text: `${placeWords(title, error)}: ${faultWords(title, error)}`, urgent: true }
+      : undefined;
   }
-  if (before.error) return `In order again: ${takes} takes.`;
-  const isOther = after.throws.some(
-    ({ name, stamp }) => stamp !== before.throws.find((shown) => shown.name === name)?.stamp,
-  );
-  return isOther || after.throws.length !== before.throws.length ? `Baked anew: ${takes} takes.` : undefined;
+  if (before.error) return { text: `In order again: ${counted(takes, "take")}.`, urgent: true };
+  const stamps = new Map(before.throws.map(({ name, stamp }) => [name, stamp]));
+  const isOther =
+    after.throws.length !== before.throws.length ||
+    after.throws.some(({ name, stamp }) => stamp !== stamps.get(name));
+  return isOther ? { text: `Baked anew: ${counted(takes, "take")}.`, urgent: false } : undefined;
 }

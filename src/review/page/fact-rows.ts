@@ -44,7 +44,7 @@ function motionRows(measured: Measured): FactRow[] {
 function turningRows(measured: Measured): FactRow[] {
   const shares = measured.take.record.share.map((share) => words.decimals(share * 100, 0));
   const angle =
-    "between the axis that it turns round in space and that axis of its own which most of its turning is about";
+    "between the axis that it turns round in space and that axis of its own which it was thrown about";
   return [
     ...known("Turns", measured.turns, words.turns),
     {

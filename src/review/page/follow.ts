@@ -5,6 +5,9 @@ import { newsWords } from "./banner.js";
 import type { Source } from "./source.js";
 import { throwOf } from "./state.js";
 
+/** ms without anything new: throws are baked one after the other. */
+const QUIET = 1500;
+
 export function follow({ store, files, strips, say }: App, source: Source): void {
   if (!source.live) return;
   let asking = false;
@@ -30,7 +33,14 @@ export function follow({ store, files, strips, say }: App, source: Source): void
     if (changed.some(({ name }) => stamps.get(name) !== undefined)) strips.forget();
     const news = newsWords(before, after);
     store.send({ type: "data", data: after });
-    if (news !== undefined) say(news);
+    if (news) tell(news);
+  }
+
+  let later: number | undefined;
+  function tell({ text, urgent }: { text: string; urgent: boolean }): void {
+    clearTimeout(later);
+    if (urgent) say(text);
+    else later = window.setTimeout(() => say(text), QUIET);
   }
 
   source.onChange(ask);

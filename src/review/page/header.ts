@@ -5,12 +5,6 @@ import type { App } from "./app.js";
 import { el } from "./dom.js";
 import { counted } from "./words.js";
 
-function kinds({ throws }: PageData): string {
-  const chains = throws.filter(({ isChain }) => isChain).length;
-  const single = counted(throws.length - chains, "throw");
-  return chains > 0 ? `${single} and ${counted(chains, "chain")}` : single;
-}
-
 export function header({ store }: Pick<App, "store">, live: boolean, showKeys: () => void): HTMLElement {
   const title = el("h1");
   const status = el("p", { class: "status" });
@@ -20,18 +14,7 @@ export function header({ store }: Pick<App, "store">, live: boolean, showKeys: (
       title.textContent = data.title;
       document.title = `${data.title} – tossbake`;
       const takes = data.throws.reduce((sum, shown) => sum + shown.takes.length, 0);
-      const waiting = data.throws.filter(
-        ({ takes, unheld, stamp }) => takes.length + unheld.length === 0 && !stamp,
-      );
-      const state = !connected
-        ? "stopped"
-        : data.error
-          ? "error: motion from before"
-          : live && waiting.length > 0
-            ? `${counted(waiting.length, "throw")} still to bake`
-            : live
-              ? "follows the file"
-              : "as baked";
+      const state = stateWords(data, live, connected);
       status.textContent = `${counted(takes, "take")} of ${kinds(data)} · ${state}`;
     },
   );
@@ -48,4 +31,18 @@ export function header({ store }: Pick<App, "store">, live: boolean, showKeys: (
       el("kbd", {}, "?"),
     ),
   );
+}
+
+function stateWords({ error, throws }: PageData, live: boolean, connected: boolean): string {
+  if (!connected) return "stopped";
+  if (error) return "error: motion from before";
+  if (!live) return "as baked";
+  const due = throws.filter(({ stamp }) => stamp === undefined).length;
+  return due > 0 ? `${counted(due, "throw")} still to bake` : "follows the file";
+}
+
+function kinds({ throws }: PageData): string {
+  const chains = throws.filter(({ isChain }) => isChain).length;
+  const single = counted(throws.length - chains, "throw");
+  return chains > 0 ? `${single} and ${counted(chains, "chain")}` : single;
 }

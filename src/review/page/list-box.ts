@@ -4,6 +4,8 @@ import { type Child, el, fill } from "./dom.js";
 
 export interface Option<Key> {
   key: Key;
+  /** What it shows: while these are the same nothing of it is made anew, so that no click falls between two. */
+  of: readonly unknown[];
   /** Its text is what screen readers say. */
   content: () => Child[];
   classes?: string;
@@ -24,13 +26,14 @@ export function listBox<Key extends string | number>(
   pick: (key: Key, second: boolean) => void,
 ): ListBox<Key> {
   const element = el("div", { role: "listbox", "aria-label": label, class: classes, tabindex: 0 });
-  const items = new Map<Key, HTMLElement>();
+  const items = new Map<Key, { item: HTMLElement; of: readonly unknown[] }>();
+  const itemOf = (key: Key | undefined) => (key === undefined ? undefined : items.get(key)?.item);
   let keys: Key[] = [];
   let current: Key | undefined;
 
   element.addEventListener("click", (event) => {
     const item = (event.target as Element).closest<HTMLElement>("[role=option]");
-    const key = keys.find((other) => items.get(other) === item);
+    const key = keys.find((other) => itemOf(other) === item);
     if (key === undefined) return;
     pick(key, event.shiftKey || event.ctrlKey || event.metaKey);
     focus();
@@ -66,13 +69,13 @@ export function listBox<Key extends string | number>(
   }
 
   function columns(): number {
-    const tops = keys.map((key) => items.get(key)?.offsetTop);
+    const tops = keys.map((key) => itemOf(key)?.offsetTop);
     const count = tops.findIndex((top) => top !== tops[0]);
     return Math.max(1, count);
   }
 
   function mark(): void {
-    for (const [key, item] of items) {
+    for (const [key, { item }] of items) {
       item.setAttribute("aria-selected", String(key === current));
       item.tabIndex = key === current ? 0 : -1;
     }
@@ -81,7 +84,7 @@ export function listBox<Key extends string | number>(
   }
 
   function focus(): void {
-    const item = current === undefined ? undefined : items.get(current);
+    const item = itemOf(current);
     (item ?? element).focus({ preventScroll: true });
     item?.scrollIntoView({ block: "nearest", inline: "nearest" });
   }
@@ -90,11 +93,20 @@ export function listBox<Key extends string | number>(
     element,
     show(options, chosen) {
       const hadFocus = element.contains(document.activeElement);
+      const before = new Map(items);
       items.clear();
       keys = options.map(({ key }) => key);
-      for (const { key, content, classes: more = "" } of options)
-        items.set(key, el("div", { role: "option", class: `option ${more}` }, ...content()));
-      fill(element, ...items.values());
+      for (const option of options) {
+        const known = before.get(option.key);
+        const item = known?.item ?? el("div", { role: "option" });
+        if (!known || !isSame(known.of, option.of)) {
+          item.className = `option ${option.classes ?? ""}`;
+          fill(item, ...option.content());
+        }
+        items.set(option.key, { item, of: option.of });
+      }
+      const elements = keys.map((key) => itemOf(key) as HTMLElement);
+      if (!isSame(elements, [...element.children])) fill(element, ...elements);
       current = chosen;
       mark();
       if (hadFocus) focus();
@@ -103,8 +115,11 @@ export function listBox<Key extends string | number>(
       if (chosen === current) return;
       current = chosen;
       mark();
-      items.get(chosen as Key)?.scrollIntoView({ block: "nearest", inline: "nearest" });
+      itemOf(chosen)?.scrollIntoView({ block: "nearest", inline: "nearest" });
     },
     focus,
   };
 }
+
+const isSame = (a: readonly unknown[], b: readonly unknown[]): boolean =>
+  a.length === b.length && a.every((value, i) => Object.is(value, b[i]));

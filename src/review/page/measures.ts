@@ -17,7 +17,7 @@ export interface Measured {
   turns: number;
   /** Greatest of the shares: 1 is a clean spin. */
   share: number;
-  /** Degrees off the main axis at release and arrival. */
+  /** Degrees off the axis that it was thrown about, at release and arrival. */
   wobbleAtRelease: number | null;
   wobble: number | null;
   /** m/s; null where nothing but the turning is known. */
@@ -192,8 +192,8 @@ function measureTake(take: PageTake, prop: PageProp, nearest: Nearest | null, is
     time: isChain ? motion.duration : last.duration,
     turns: record.turns,
     share: Math.max(...record.share),
-    wobbleAtRelease: wobbleAngle(first, prop.moments, record.share, 0),
-    wobble: wobbleAngle(last, prop.moments, record.share, last.duration),
+    wobbleAtRelease: wobbleAngle(first, prop.moments, 0),
+    wobble: wobbleAngle(last, prop.moments, last.duration),
     releaseSpeed: moving(length(first.velocity(0))),
     arrivalSpeed: moving(length(last.velocity(last.duration))),
     releaseRate: length(first.angularVelocity(0)),

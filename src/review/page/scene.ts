@@ -4,7 +4,7 @@ import type { PageThrow } from "../page-data.js";
 import type { App } from "./app.js";
 import { el } from "./dom.js";
 import { VIEWS } from "./scene-tools.js";
-import { propOf, type State, takeOf, throwOf } from "./state.js";
+import { emptyWords, propOf, type State, takeOf, throwOf } from "./state.js";
 
 /** @param shown told when another throw or other takes stand on the stage, or none can */
 export function scene(app: App, canvas: HTMLCanvasElement, shown: () => void): HTMLElement {
@@ -18,6 +18,13 @@ export function scene(app: App, canvas: HTMLCanvasElement, shown: () => void): H
     (state) => [throwOf(state)],
     () => {
       put();
+    },
+  );
+  store.watch(
+    (state) => [throwOf(state), state.data],
+    (shown, data) => {
+      waiting.hidden = !shown || shown.takes.length > 0;
+      waiting.textContent = shown ? emptyWords(data, shown) : "";
     },
   );
   store.watch(
@@ -57,8 +64,6 @@ export function scene(app: App, canvas: HTMLCanvasElement, shown: () => void): H
     const data = throwOf(state);
     const prop = propOf(state, data);
     const turn = ++wanted;
-    waiting.hidden = !data || data.takes.length > 0;
-    waiting.textContent = data?.stamp === undefined ? "Being baked …" : "No take could be made.";
     if (!data || !prop || data.takes.length === 0) return shown();
     try {
       await stage.show(data, prop, (name) => files.get(name));

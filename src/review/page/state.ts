@@ -118,7 +118,7 @@ export function reduce(state: State, action: Action): State {
   }
 }
 
-/** A throw that was baked of the same as before stays the same object, so that nothing of it is drawn anew. */
+/** A throw that was baked of the same as before stays the same object, and a prop that is the same, so that nothing of them is drawn anew. */
 function keepingKnown(before: PageData, after: PageData): PageData {
   const known = new Map(before.throws.map((shown) => [shown.name, shown]));
   const throws = after.throws.map((shown) => {
@@ -130,7 +130,11 @@ function keepingKnown(before: PageData, after: PageData): PageData {
       ? old
       : shown;
   });
-  return { ...after, throws };
+  const props = Object.entries(after.props).map(([name, prop]) => {
+    const old = Object.hasOwn(before.props, name) ? before.props[name] : undefined;
+    return [name, JSON.stringify(old) === JSON.stringify(prop) ? old : prop];
+  });
+  return { ...after, throws, props: Object.fromEntries(props) };
 }
 
 /** Where only undecided takes are listed, the next one moves up to the place of the one that was decided. */
@@ -156,6 +160,12 @@ function settled(state: State): State {
 
 export const throwOf = ({ data, throwName }: State): PageThrow | undefined =>
   data.throws.find(({ name }) => name === throwName);
+
+/** Why a throw has no take to show. */
+export function emptyWords({ error }: PageData, { stamp, unheld }: PageThrow): string {
+  if (stamp !== undefined || unheld.length > 0) return "No take could be made.";
+  return error ? "Not baked: something is wrong." : "Being baked.";
+}
 
 export function propOf({ data }: Pick<State, "data">, shown: PageThrow | undefined): PageProp | undefined {
   const name = shown?.prop;

@@ -7,7 +7,7 @@ import { listBox, type Option } from "./list-box.js";
 import { type Measure, type Measured, measureOf } from "./measures.js";
 import { missedWords } from "./misses.js";
 import { placeAmong } from "./order.js";
-import { listed, measured, propOf, type State, throwOf } from "./state.js";
+import { emptyWords, listed, measured, propOf, type State, throwOf } from "./state.js";
 import { oldVerdict, verdictOf } from "./verdicts.js";
 
 export function takeList({ store, strips }: App): HTMLElement {
@@ -47,7 +47,7 @@ export function takeList({ store, strips }: App): HTMLElement {
       const hidden = measured(state).length - takes.length;
       showAll.hidden = hidden === 0;
       none.hidden = takes.length > 0;
-      none.textContent = emptyWords(state, hidden);
+      none.textContent = noneWords(state, hidden);
       fill(leftOut, ...(throwOf(state)?.unheld ?? []).map(leftOutLine));
     },
   );
@@ -72,6 +72,7 @@ export function takeList({ store, strips }: App): HTMLElement {
     const measure = measureOf(state.order.by);
     const value = measure.of(each);
     const said = saidOf(each, measure);
+    const place = said !== undefined && value !== null ? placeAmong(value, values) : null;
     const marks = [
       verdict ?? (oldVerdict(state.verdicts, take.motion) && "changed since you decided"),
       missedWords(each) && "misses",
@@ -79,6 +80,7 @@ export function takeList({ store, strips }: App): HTMLElement {
     ].filter((mark) => typeof mark === "string");
     return {
       key: number,
+      of: [take, prop, measure, said, place, isBeside, ...marks],
       classes: [verdict ?? "", isBeside ? "beside" : ""].join(" "),
       content: () => [
         el(
@@ -88,7 +90,7 @@ export function takeList({ store, strips }: App): HTMLElement {
           said !== undefined && el("span", { class: "value" }, unseen(`, ${measure.label} `), said),
         ),
         el("span", { class: "take-strip" }, prop && strips.strip(take, prop, "takes")),
-        said !== undefined && value !== null && bar(placeAmong(value, values)),
+        place !== null && bar(place),
         el(
           "span",
           { class: "marks" },
@@ -115,18 +117,14 @@ const leftOutLine = ({ name, reason }: PageThrow["unheld"][number]): HTMLElement
 const unseen = (text: string): HTMLElement => el("span", { class: "unseen" }, text);
 
 /** Where the value lies between the least and the greatest of all takes. */
-function bar(place: number | null): HTMLElement | null {
-  if (place === null) return null;
+function bar(place: number): HTMLElement {
   const filled = el("span", { class: "bar-fill" });
   filled.style.setProperty("width", `${Math.round(place * 100)}%`);
   return el("span", { class: "bar" }, filled);
 }
 
-function emptyWords(state: State, hidden: number): string {
+function noneWords(state: State, hidden: number): string {
   const shown = throwOf(state);
   if (hidden > 0) return "No take is so.";
-  if (!shown) return "There is no throw yet.";
-  return shown.stamp === undefined && shown.unheld.length === 0
-    ? "Its takes are being baked."
-    : "No take could be made.";
+  return shown ? emptyWords(state.data, shown) : "There is no throw yet.";
 }

@@ -4,7 +4,7 @@ import type { PageThrow } from "../page-data.js";
 import type { App } from "./app.js";
 import { el } from "./dom.js";
 import { listBox, type Option } from "./list-box.js";
-import { propOf, type State } from "./state.js";
+import { emptyWords, propOf, type State } from "./state.js";
 import { counted } from "./words.js";
 
 export function throwList({ store, strips }: App, onPicked: () => void): HTMLElement {
@@ -28,9 +28,10 @@ export function throwList({ store, strips }: App, onPicked: () => void): HTMLEle
   function option(shown: PageThrow, data: State["data"]): Option<string> {
     const prop = propOf({ data }, shown);
     const [first] = shown.takes;
-    const about = aboutThrow(shown);
+    const about = aboutThrow(shown, data);
     return {
       key: shown.name,
+      of: [first, prop, ...about],
       content: () => [
         el("span", { class: "throw-strip" }, first && prop && strips.strip(first, prop, "throws")),
         el(
@@ -46,8 +47,9 @@ export function throwList({ store, strips }: App, onPicked: () => void): HTMLEle
   return list.element;
 }
 
-function aboutThrow({ isChain, prop, takes, unheld, stamp }: PageThrow): string[] {
-  if (takes.length === 0 && unheld.length === 0 && stamp === undefined) return ["being baked"];
+function aboutThrow(shown: PageThrow, data: State["data"]): string[] {
+  const { isChain, prop, takes, unheld } = shown;
+  if (takes.length + unheld.length === 0) return [emptyWords(data, shown)];
   return [
     ...(isChain ? ["chain"] : []),
     ...(prop ? [prop] : []),

@@ -69,7 +69,7 @@ export function verdictBar(app: App): { element: HTMLElement; copy(): void } {
       const motions = throwOf(state)?.takes.map(({ motion }) => motion) ?? [];
       const { takes, accepted, rejected } = wanted(state.verdicts, motions);
       line.value = takesLine(takes);
-      line.size = Math.min(30, line.value.length + 1);
+      line.size = Math.min(60, line.value.length + 1);
       copy.disabled = motions.length === 0;
       rule.textContent = ruleWords(accepted, rejected, motions.length);
       forget.hidden = accepted + rejected === 0;

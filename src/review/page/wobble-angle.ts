@@ -8,20 +8,23 @@ import { length, type Vec3 } from "../../math/vec3.js";
 const ALIKE = 0.01;
 
 /**
- * Degrees, 0 to 90, between the axis that the prop turns round in space (its angular momentum) and the axis of the prop that most of its turning
- * is about; between two axes of like moments any one counts. The throw file's `wobble` is this angle at release. Null for a prop that does not turn.
+ * Degrees, 0 to 90, between the axis that the prop turns round in space (its angular momentum) and the axis of its own that lay nearest to that at
+ * release; between two axes of like moments any one counts. At release it is the throw file's `wobble` of a throw about one of these axes. Null for a
+ * prop that does not turn.
  *
  * @param moments about long, middle, short
- * @param share of the turning about each
  * @param t s, from the release on
  */
-export function wobbleAngle(flight: Flight, moments: Vec3, share: Vec3, t: number): number | null {
+export function wobbleAngle(flight: Flight, moments: Vec3, t: number): number | null {
   const size = length(flight.angularMomentum);
   if (size === 0) return null;
-  const main = share.indexOf(Math.max(...share));
-  const own = rotateBack(flight.orientation(t), flight.angularMomentum);
-  const along = moments.map((moment, i) =>
-    i === main || Math.abs(moment - moments[main]) <= ALIKE * moments[main] ? own[i] : 0,
-  ) as unknown as Vec3;
+  const own = (time: number): Vec3 => rotateBack(flight.orientation(time), flight.angularMomentum);
+  const first = own(0).map(Math.abs);
+  const main = first.indexOf(Math.max(...first));
+  const now = own(t);
+  const along: Vec3 = [0, 1, 2].map((i) => (isLike(moments, i, main) ? now[i] : 0)) as unknown as Vec3;
   return (Math.acos(Math.min(1, length(along) / size)) * 180) / Math.PI;
 }
+
+const isLike = (moments: Vec3, a: number, b: number): boolean =>
+  Math.abs(moments[a] - moments[b]) <= ALIKE * moments[b];
