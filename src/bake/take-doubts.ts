@@ -15,7 +15,7 @@ export function takeDoubts({ velocity, spin }: Pick<Launch, "velocity" | "spin">
   return [
     ...(speed > FASTEST
       ? [
-          `leaves at ${short(speed)} m/s, faster than anything is thrown: places are in metres, times in seconds (host.unit names another unit)`,
+          `leaves at ${short(speed)} m/s, faster than anything is thrown: places are in metres and times in seconds; host.unit names another unit`,
         ]
       : []),
     ...(turns > MOST_TURNS

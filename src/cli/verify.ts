@@ -52,7 +52,10 @@ export const verifyCommand = (answer: (code: number) => void) =>
     .description(
       "say what a folder's clips and takes.json differ in from what the throw file bakes now; writes nothing but, on request, pictures",
     )
-    .argument("[throwfile]", "the throw file that was baked; with --against, only one that has a host is needed")
+    .argument(
+      "[throwfile]",
+      "the throw file that was baked; with --against, only one that has a host is needed",
+    )
     .requiredOption("-o, --output <dir>", "folder that was baked into")
     .option("--against <dir>", "compare with this folder instead: what changed from there to the other")
     .option(
