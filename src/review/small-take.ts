@@ -8,6 +8,7 @@ import { FONT_SIZE } from "./look.js";
 import { outlineOf } from "./outline.js";
 import { areaOf, around, type Bounds, NOWHERE, type Point } from "./plane.js";
 import type { SheetProp, SheetTake } from "./sheet-input.js";
+import { simplified } from "./simplify.js";
 import { element, numeral, pathData, textAt } from "./svg.js";
 import { courseOf, inView, sideView, type View } from "./view.js";
 
@@ -15,7 +16,9 @@ import { courseOf, inView, sideView, type View } from "./view.js";
 export const CELL = { width: 130, arc: 62, poses: 30, height: 116 };
 const AIR = 4;
 /** px; an outline leaves the silhouette by no more. */
-const DETAIL = 1.2;
+const DETAIL = 1;
+/** px; corners nearer to a straight line than this are left out. */
+const STRAIGHT = 0.35;
 const POSES = 4;
 /** px²: rings that are smaller are left out. */
 const SPECK = 1.5;
@@ -82,7 +85,8 @@ function posesOf(prop: SheetProp, { take: { motion }, stretches, view }: SmallTa
     const x = (CELL.width * (i + 0.5)) / POSES;
     const map = [scale, 0, 0, -scale, x, CELL.arc + CELL.poses / 2] as const;
     const large = rings.filter((ring) => scale * scale * areaOf([ring]) > SPECK);
-    return element("path", { d: pathData(large, { closed: true, map, decimals: 1 }) });
+    const plain = large.map((ring) => simplified(ring, STRAIGHT / scale));
+    return element("path", { d: pathData(plain, { closed: true, map, decimals: 1 }) });
   });
 }
 
