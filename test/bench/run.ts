@@ -13,6 +13,7 @@ import { evenness } from "./evenness.js";
 import { keys } from "./keys.js";
 import { bakeForTable, manyTakes } from "./many-takes.js";
 import { outlines } from "./outlines.js";
+import { sheets } from "./sheets.js";
 import { vary } from "./vary.js";
 import { weighForTable, weighing } from "./weighing.js";
 
@@ -28,6 +29,7 @@ const SECTIONS = [
   weighing,
   aiming,
   outlines,
+  sheets,
 ];
 
 const [first, ...rest] = process.argv.slice(2);
