@@ -82,10 +82,22 @@ export interface PageTake {
   warnings?: readonly string[];
 }
 
-/** The throw file as it is baked for the page: one .glb for each throw, with its mesh, whatever files are asked for. */
+/** Takes of a throw that a page shows; more are for machines to go through. */
+const MOST_TAKES = 500;
+
+/**
+ * The throw file as it is baked for the page: one .glb for each throw, with its mesh, whatever files are asked for, and of very many takes the
+ * first ones.
+ */
 export const shownFile = (file: ThrowFile): ThrowFile => ({
   ...file,
   bake: { ...file.bake, files: "per-throw", container: "glb", mesh: true },
+  throws: new Map(
+    Array.from(file.throws, ([name, entry]) => [
+      name,
+      { ...entry, takes: takeNumbers(entry.takes).slice(0, MOST_TAKES) },
+    ]),
+  ),
 });
 
 /** Everything of a whole bake, that of `file` or of its `shownFile`. */
@@ -173,6 +185,11 @@ export function pageThrows(file: ThrowFile, bake: Bake, record: TakesRecord): Pa
       const reason = unheld.get(name);
       return reason === undefined ? [] : [{ name, reason }];
     });
+    if (takes.length + left.length > 0 && clips.length > MOST_TAKES)
+      left.push({
+        name: `${clips[MOST_TAKES]} and those after it`,
+        reason: `a page shows the first ${MOST_TAKES} takes of a throw`,
+      });
     return takes.length + left.length === 0 ? [] : [{ ...shown, prop, takes, unheld: left }];
   });
 }

@@ -1,7 +1,7 @@
 import { createHash } from "node:crypto";
 import { existsSync, readFileSync, symlinkSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { afterAll, beforeAll, describe, expect, it, vi } from "vitest";
 // @ts-expect-error it is a script of the build, without types
 import { bundlePage } from "../../build/page.js";
 import type { PageData } from "../../src/review/page-data.js";
@@ -9,6 +9,9 @@ import type { Program } from "../cli/program.js";
 import { HARM } from "./hostile.js";
 import { installPage } from "./installed.js";
 import { Workshop, yard } from "./throws.js";
+
+// the program and its page are bundled first
+vi.setConfig({ testTimeout: 120_000, hookTimeout: 120_000 });
 
 let program: Program;
 const workshop = new Workshop(yard());

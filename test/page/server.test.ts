@@ -3,12 +3,15 @@ import { createServer } from "node:http";
 import type { AddressInfo } from "node:net";
 import { networkInterfaces } from "node:os";
 import { join } from "node:path";
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { afterAll, beforeAll, describe, expect, it, vi } from "vitest";
 import type { PageData } from "../../src/review/page-data.js";
 import type { Program } from "../cli/program.js";
 import { installPage, type Preview, startPreview } from "./installed.js";
 import { rawRequest } from "./raw-http.js";
 import { Workshop, yard } from "./throws.js";
+
+// the program and its page are bundled first
+vi.setConfig({ testTimeout: 120_000, hookTimeout: 120_000 });
 
 let program: Program;
 let preview: Preview;
