@@ -2,7 +2,9 @@
 
 import { type Flight, fly } from "../flight/flight.js";
 import type { Launch } from "../flight/launch.js";
+import { PackedRows } from "../math/packed-rows.js";
 import { vantageForest } from "../math/vantage-forest.js";
+import type { Vec3 } from "../math/vec3.js";
 
 /** Moments compared, a second; each take is held at its last pose when the other goes on. */
 const SAMPLES_PER_SECOND = 60;
@@ -55,22 +57,28 @@ export function poseSamples({ duration, parts }: Course): Float64Array {
 export function nearestFinder(
   reach: number,
 ): (take: number, course: Course, samples?: Float64Array) => Nearest | null {
-  const takes: { take: number; course: Course; kept: Float64Array }[] = [];
-  const forest = vantageForest((a, b) => keptDistance(takes[a].kept, takes[b].kept, reach));
+  const numbers: number[] = [];
+  const courses = new PackedRows();
+  const poses = new PackedRows();
+  const forest = vantageForest((a, b) =>
+    keptDistance(poses.block(a), poses.start(a), poses.block(b), poses.start(b), reach),
+  );
   return (take, course, samples = poseSamples(course)) => {
     const kept = keptPoses(samples);
-    const nearest = takes.length === 0 ? null : find(samples, kept);
+    const nearest = numbers.length === 0 ? null : find(samples, kept);
     if (!nearest || nearest.distance > SAME_MOTION) {
-      takes.push({ take, course, kept });
-      forest.add(takes.length - 1);
+      numbers.push(take);
+      courses.push(packed(course));
+      poses.push(kept);
+      forest.add(numbers.length - 1);
     }
     return nearest;
   };
 
   function find(samples: Float64Array, kept: Float64Array): Nearest {
-    const near = (index: number) => keptDistance(kept, takes[index].kept, reach);
+    const near = (index: number) => keptDistance(kept, 0, poses.block(index), poses.start(index), reach);
     const whole = (index: number, limit: number) =>
-      greatestDistance(samples, poseSamples(takes[index].course), reach, limit);
+      greatestDistance(samples, poseSamples(unpacked(courses.row(index))), reach, limit);
     let best = 0;
     forest.search(near, Number.POSITIVE_INFINITY, (index, distance) => {
       best = index;
@@ -91,8 +99,47 @@ export function nearestFinder(
         distance = other;
       }
     }
-    return { take: takes[best].take, distance };
+    return { take: numbers[best], distance };
   }
+}
+
+/** Numbers of a part of a packed course. */
+const PART = 21;
+
+function packed({ duration, parts }: Course): Float64Array {
+  const row = [duration];
+  for (const { start, launch } of parts) {
+    const { centerOfMass, velocity, gravity, orientation, spin, moments } = launch;
+    row.push(
+      start,
+      launch.duration,
+      ...centerOfMass,
+      ...velocity,
+      ...gravity,
+      ...orientation,
+      ...spin,
+      ...moments,
+    );
+  }
+  return Float64Array.from(row);
+}
+
+function unpacked(row: Float64Array): Course {
+  const parts = [];
+  for (let at = 1; at < row.length; at += PART) {
+    const three = (from: number): Vec3 => [row[from], row[from + 1], row[from + 2]];
+    const launch: Launch = {
+      duration: row[at + 1],
+      centerOfMass: three(at + 2),
+      velocity: three(at + 5),
+      gravity: three(at + 8),
+      orientation: [row[at + 11], row[at + 12], row[at + 13], row[at + 14]],
+      spin: three(at + 15),
+      moments: three(at + 18),
+    };
+    parts.push({ start: row[at], launch });
+  }
+  return { duration: row[0], parts };
 }
 
 function keptPoses(samples: Float64Array): Float64Array {
@@ -119,9 +166,10 @@ function sampled(duration: number, flights: readonly { start: number; flight: Fl
   return samples;
 }
 
-function keptDistance(a: Float64Array, b: Float64Array, reach: number): number {
+function keptDistance(a: Float64Array, i: number, b: Float64Array, j: number, reach: number): number {
   let greatest = 0;
-  for (let i = 0; i < a.length; i += POSE) greatest = Math.max(greatest, distanceAt(a, i, b, i, reach));
+  for (let k = 0; k < POSE * KEPT.length; k += POSE)
+    greatest = Math.max(greatest, distanceAt(a, i + k, b, j + k, reach));
   return greatest;
 }
 

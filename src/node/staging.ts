@@ -1,6 +1,6 @@
 /** A folder within the output folder in which a batch is made whole before any of it gets its place; what a stopped run left there, another goes on from. */
 
-import { mkdir, readdir, readFile, rename, rm, rmdir, writeFile } from "node:fs/promises";
+import { readdir, readFile, rename, rm, rmdir, writeFile } from "node:fs/promises";
 import { join } from "node:path";
 import { deserialize, serialize } from "node:v8";
 import type { Shard } from "../bake/plan.js";
@@ -69,7 +69,7 @@ export async function openStaging(
     const isResumed = resume && former !== undefined;
     if (isResumed) compareHeaders(output, former, header);
     else await clear(path);
-    for (const name of ["parts", "files", "half"]) await mkdir(join(path, name), { recursive: true });
+    for (const name of ["parts", "files", "half"]) await makeFolder(join(path, name));
     if (!isResumed) await writeWhole(path, "batch.json", JSON.stringify(header, null, 2));
     return {
       path,
@@ -97,7 +97,6 @@ export async function openStaging(
 /** A file within the staging folder, whole or not there. */
 export async function writeWhole(staging: string, name: string, content: Uint8Array | string): Promise<void> {
   const half = join(staging, "half", `${name.replaceAll("/", "-")}.${process.pid}`);
-  await mkdir(join(staging, "half"), { recursive: true });
   await writeFile(half, content, { flush: true });
   await rename(half, join(staging, name));
 }
@@ -166,7 +165,7 @@ async function refuseOthers(output: string, own: string, shard?: Shard): Promise
 
 async function lock(output: string, path: string): Promise<() => Promise<void>> {
   for (;;) {
-    await mkdir(path, { recursive: true });
+    await makeFolder(path);
     try {
       const taken = await takeLock(path);
       if ("release" in taken) return taken.release;
