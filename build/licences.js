@@ -53,7 +53,9 @@ async function bundledPaths() {
   });
   const [{ inputs }] = Object.values(metafile.outputs);
   return new Set(
-    Object.keys(inputs).flatMap((path) => /^.*node_modules\/(?:@[^/]+\/)?[^/]+(?=\/)/.exec(path)?.[0] ?? []),
+    Object.keys(inputs).flatMap(
+      (path) => /(?:^|\/)(node_modules\/(?:.*\/node_modules\/)?(?:@[^/]+\/)?[^/]+)\//.exec(path)?.[1] ?? [],
+    ),
   );
 }
 
