@@ -15,7 +15,7 @@ import type { StageProp } from "./input.js";
 import { simplified, type TriangleMesh } from "./simplified.js";
 
 export interface Body {
-  /** About the centre of mass, model's axes, m; flat shaded, without normals. */
+  /** About the centre of mass, model's axes, m. */
   geometry: BufferGeometry;
   triangles: number;
   /** Of the prop's own; none: it has no mesh, and this is a box. */
@@ -26,17 +26,26 @@ export interface Body {
 
 /**
  * @param content what moves with the prop
+ * @param normals of each triangle, or shared by those that meet
  * @param matrix from the model as modelled, in m, to where it stands now
  */
-export function bodyOf(content: Object3D, matrix: Matrix4, prop: StageProp, mostTriangles: number): Body {
+export function bodyOf(
+  content: Object3D,
+  matrix: Matrix4,
+  prop: StageProp,
+  mostTriangles: number,
+  normals: "flat" | "smooth",
+): Body {
   const { centerOfMass: c } = prop;
   const toModel = new Matrix4().makeTranslation(-c[0], -c[1], -c[2]).multiply(matrix.clone().invert());
   const positions = trianglesBelow(content, toModel);
   const ownTriangles = positions.length / 9;
   const mesh = ownTriangles > 0 ? simplified(positions, mostTriangles) : boxOf(prop);
-  const geometry = new BufferGeometry();
+  let geometry = new BufferGeometry();
   geometry.setAttribute("position", new BufferAttribute(new Float32Array(mesh.positions), 3));
   geometry.setIndex(Array.from(mesh.triangles));
+  if (normals === "flat") geometry = geometry.toNonIndexed();
+  geometry.computeVertexNormals();
   geometry.computeBoundingSphere();
   return {
     geometry,

@@ -28,7 +28,7 @@ export function carrierOf(
   json: GLTF.IGLTF,
   { nodes }: ClipChannels,
   propName: string,
-  start: Matrix4,
+  start: () => Matrix4,
 ): Carrier {
   const { translation, rotation } = nodes;
   const node = json.nodes![rotation];
@@ -46,7 +46,7 @@ export function carrierOf(
   const rest = sceneMatrix(json, rotation);
   return {
     content: rotation,
-    toContent: clips.length > 1 ? rest.invert() : rest.invert().multiply(start),
+    toContent: clips.length > 1 ? rest.invert() : rest.invert().multiply(start()),
   };
 }
 

@@ -11,8 +11,9 @@ import type { StageProp, StageTake } from "./input.js";
 
 export class Course {
   readonly duration: number;
-  readonly #motion: Motion;
-  readonly #flown: { start: number; flight: Flight }[];
+  /** Flown when they are first looked at: most takes only are among the pale ones. */
+  #motion?: Motion;
+  #flown?: { start: number; flight: Flight }[];
   readonly #stays?: Vec3;
 
   /** @param staysAt where the clip keeps the centre of mass, as it turns alone: the true motion is seen as it turns there, too */
@@ -22,10 +23,7 @@ export class Course {
     readonly played: ClipPoses,
     staysAt?: Vec3,
   ) {
-    const { motion } = take;
-    this.duration = motion.duration;
-    this.#motion = motionOf(motion, prop.axes);
-    this.#flown = motion.parts.map(({ start, launch }) => ({ start, flight: fly(launch) }));
+    this.duration = take.motion.duration;
     this.#stays = staysAt;
   }
 
@@ -35,6 +33,7 @@ export class Course {
   }
 
   truth(t: number): Pose {
+    this.#motion ??= motionOf(this.take.motion, this.prop.axes);
     const time = Math.max(0, Math.min(this.duration, t));
     return {
       centerOfMass: this.#stays ?? this.#motion.centerOfMass(time),
@@ -78,7 +77,7 @@ export class Course {
       rotate(principal, [0, 1, 0]),
       rotate(principal, [0, 0, 1]),
     ];
-    const part = this.#flown.find(({ start, flight }) => t >= start && t <= start + flight.duration);
+    const part = this.#flights().find(({ start, flight }) => t >= start && t <= start + flight.duration);
     return {
       momentum: part?.flight.angularMomentum ?? [0, 0, 0],
       angularVelocity: part?.flight.angularVelocity(Math.max(0, t - part.start)) ?? [0, 0, 0],
@@ -89,6 +88,14 @@ export class Course {
 
   /** Whole turns or more, so that ways of points are drawn finely enough. */
   get turns(): number {
-    return this.#flown.reduce((sum, { flight }) => sum + (flight.greatestRate * flight.duration) / 6.28, 0);
+    return this.#flights().reduce(
+      (sum, { flight }) => sum + (flight.greatestRate * flight.duration) / 6.28,
+      0,
+    );
+  }
+
+  #flights() {
+    this.#flown ??= this.take.motion.parts.map(({ start, launch }) => ({ start, flight: fly(launch) }));
+    return this.#flown;
   }
 }

@@ -12,7 +12,7 @@ import { type LoadedFile, loadFile } from "./loaded-file.js";
 import { PlayedTake } from "./played-take.js";
 
 /** Triangles of all the copies that are drawn at once, and of one of them. */
-const MOST_TRIANGLES = 60_000;
+const MOST_TRIANGLES = 24_000;
 const MOST_OF_ONE = 3000;
 /** Of the outline of the true flight. */
 const MOST_OF_OUTLINE = 12_000;
@@ -44,9 +44,14 @@ export class ShownThrow {
     await shown.load(0);
     const played = shown.play(0);
     const each = Math.floor(MOST_TRIANGLES / data.takes.length);
-    shown.body = bodyOf(played.content, played.matrix(), prop, Math.max(80, Math.min(MOST_OF_ONE, each)));
-    shown.outline = bodyOf(played.content, played.matrix(), prop, MOST_OF_OUTLINE);
-    shown.outline.geometry.computeVertexNormals();
+    shown.body = bodyOf(
+      played.content,
+      played.matrix(),
+      prop,
+      Math.max(80, Math.min(MOST_OF_ONE, each)),
+      "flat",
+    );
+    shown.outline = bodyOf(played.content, played.matrix(), prop, MOST_OF_OUTLINE, "smooth");
     played.dispose();
     return shown;
   }
@@ -110,9 +115,12 @@ export class ShownThrow {
   #course({ json, buffers }: Container, take: StageTake, i: number): void {
     const { prop } = this;
     const channels: ClipChannels = clipChannels(take.file, { json, buffers }, take.clip);
-    const motion = motionOf(take.motion, prop.axes);
-    const start = { centerOfMass: motion.centerOfMass(0), rotation: motion.rotation(0) };
-    const carrier = carrierOf(json, channels, prop.name, matrixOf(start, prop.centerOfMass));
+    const start = () => {
+      const motion = motionOf(take.motion, prop.axes);
+      const pose = { centerOfMass: motion.centerOfMass(0), rotation: motion.rotation(0) };
+      return matrixOf(pose, prop.centerOfMass);
+    };
+    const carrier = carrierOf(json, channels, prop.name, start);
     const poses = clipPoses(json, channels, carrier);
     const stays =
       channels.nodes.translation === undefined
