@@ -7,6 +7,7 @@ import {
   compareFiles,
   compareSheets,
   contentsOf,
+  isBeingBaked,
   readBakedFolder,
   sheetsIn,
 } from "../node/baked-folder.js";
@@ -80,6 +81,11 @@ export const verifyCommand = (answer: (code: number) => void) =>
             : `${title}: no drift in ${checked.clips.length} ${checked.clips.length === 1 ? "take" : "takes"}\n`,
       );
       if (!isDrift) return;
+      for (const folder of new Set([output, against]))
+        if (await isBeingBaked(folder))
+          process.stderr.write(
+            `a bake into ${folder} is at work, or was stopped and may have left files of two bakes: wait for it, or bake again (with --resume to go on)\n`,
+          );
       answer(ExitCode.checkFailed);
       if (sheets === undefined) return;
       const told = await writeDriftSheets(sheets, drifts, compared);

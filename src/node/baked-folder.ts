@@ -7,6 +7,7 @@ import type { TakesRecord } from "../record/clip-record.js";
 import type { BakedFolder, FolderFile } from "../record/compare.js";
 import { binOf } from "../record/compare-files.js";
 import { readRecord } from "./kept-record.js";
+import { isStagingName } from "./staging.js";
 
 /** @throws RequestError where there is no takes.json, or none that can be read */
 export async function readBakedFolder(folder: string): Promise<BakedFolder> {
@@ -99,3 +100,7 @@ export async function compareSheets(folder: string, fresh: readonly FreshSheet[]
   }
   return files;
 }
+
+/** Whether a bake into the folder is under way or was stopped, so that record and files may be of two bakes. */
+export const isBeingBaked = async (folder: string): Promise<boolean> =>
+  (await readdir(folder)).some(isStagingName);

@@ -1,4 +1,4 @@
-import { existsSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
+import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { Resvg } from "@resvg/resvg-js";
 import { describe, expect, it } from "vitest";
 import { run, THROWS, Workplace } from "./folder.js";
@@ -200,5 +200,25 @@ describe("verify of clips that lie in a file each, with their bytes beside them"
       "lob_02.bin was changed after it was baked: the record is the same, the file is not",
       "toss_01.bin is missing",
     ]);
+  });
+});
+
+describe("verify after a bake that was stopped while its files got their places", () => {
+  it("says so beside what it finds, and says nothing where nothing drifted", async () => {
+    const place = new Workplace();
+    await run("bake", place.throwFile, "-o", place.out);
+    mkdirSync(place.path("out/.tossbake-part"));
+    const same = await run("verify", place.throwFile, "-o", place.out);
+    expect(same).toMatchObject({ code: 0, err: "" });
+    const record = readFileSync(place.path("out/takes.json"));
+    place.edit("lob.throws.yaml", "[0, 1, 3]", "[0, 1, 3.2]");
+    rmSync(place.path("out/.tossbake-part"), { recursive: true });
+    await run("bake", place.throwFile, "-o", place.out);
+    // the record is the last to get its place
+    writeFileSync(place.path("out/takes.json"), record);
+    mkdirSync(place.path("out/.tossbake-part"));
+    const { code, err } = await run("verify", place.throwFile, "-o", place.out);
+    expect(code).toBe(1);
+    expect(err).toMatch(`a bake into ${place.out} is at work, or was stopped`);
   });
 });
