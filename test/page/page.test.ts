@@ -32,15 +32,12 @@ let preview: Preview;
 const workshop = new Workshop(yard());
 /** Pictures to be looked at. */
 const pictures = mkdtempSync(join(tmpdir(), "tossbake-page-"));
-let demoPage = "";
+let demoPage: string | undefined;
 
 beforeAll(async () => {
   if (skipsWithoutBrowser) return;
   [program, browser] = await Promise.all([installPage(), launchBrowser()]);
   preview = await startPreview(program, [workshop.path]);
-  demoPage = join(program.folder, "quay.html");
-  const { code, err } = program.run(["preview", DEMO, "--page", demoPage]);
-  expect([code, err]).toEqual([0, ""]);
 });
 afterAll(async () => {
   await browser?.close();
@@ -48,6 +45,16 @@ afterAll(async () => {
   program?.remove();
   workshop.remove();
 });
+
+/** Address of the demo's page as one file, which is made once. */
+function demoUrl(): string {
+  if (demoPage === undefined) {
+    demoPage = join(program.folder, "quay.html");
+    const { code, err } = program.run(["preview", DEMO, "--page", demoPage]);
+    expect([code, err]).toEqual([0, ""]);
+  }
+  return pathToFileURL(demoPage).href;
+}
 
 /** Opens a page for a test, and has it close without a complaint. */
 async function withPage(
@@ -259,7 +266,7 @@ describe.skipIf(skipsWithoutBrowser)("the preview page", () => {
     ["dark", 1920],
   ] as const)("fits a %s screen of %i px, and is accessible there", (colorScheme, width) =>
     withPage(
-      pathToFileURL(demoPage).href,
+      demoUrl(),
       async (page) => {
         await expectTrue(page);
         await page.screenshot({ path: join(pictures, `${colorScheme}-${width}.png`) });
@@ -290,7 +297,7 @@ describe.skipIf(skipsWithoutBrowser)("the preview page", () => {
 describe.skipIf(skipsWithoutBrowser)("the page as one file", () => {
   it("shows every throw of the demo as it truly flies, opened from disk without any network", () =>
     withPage(
-      pathToFileURL(demoPage).href,
+      demoUrl(),
       async (page, { requests }) => {
         const { data } = await stateOf(page);
         expect(data.throws).toHaveLength(28);
@@ -305,7 +312,7 @@ describe.skipIf(skipsWithoutBrowser)("the page as one file", () => {
           await expectTrue(page);
         }
         // what a page holds itself is asked for as blob: and data:
-        expect(requests.filter((url) => !/^(blob|data):/.test(url))).toEqual([pathToFileURL(demoPage).href]);
+        expect(requests.filter((url) => !/^(blob|data):/.test(url))).toEqual([demoUrl()]);
       },
       { offline: true, reducedMotion: "reduce", viewport: { width: 1300, height: 600 } },
     ));
