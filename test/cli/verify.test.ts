@@ -119,6 +119,7 @@ describe("verify says what drifted", () => {
       "pin is no longer thrown",
       "throw toss (2 takes) is gone",
       "toss.glb is left over from a throw that is gone",
+      "toss.svg is left over from a throw that is gone",
     ]);
     expect(await verifiedAfter((p) => p.edit("lob.throws.yaml", /$/, "  third: { like: lob }\n"))).toEqual([
       "throw third (3 takes) is new",
