@@ -196,10 +196,10 @@ describe("a machine that will not", () => {
   it("has a full disk says so, and goes on when there is room", async (context) => {
     const place = new Workplace(text("files: per-take"));
     mkdirSync(place.out);
-    const mounted = spawnSync("mount", ["-t", "tmpfs", "-o", "size=400k", "tmpfs", place.out]);
+    const mounted = spawnSync("mount", ["-t", "tmpfs", "-o", "size=3m", "tmpfs", place.out]);
     context.skip(mounted.status !== 0, "no file system can be mounted here");
     try {
-      const full = program.run(["bake", place.throwFile, "-o", place.out, "--jobs", "2"]);
+      const full = program.run(["bake", place.throwFile, "-o", place.out, "--jobs", "1"]);
       expect(full.code).toBe(3);
       expect(full.err).toMatch(/cannot be written \(the disk is full\); .*--resume/);
       expect(all(place)).toEqual({});
