@@ -278,6 +278,12 @@ const CASES: Record<string, Case[]> = {
   names: [
     ["with a space", "props:\n  »a b: { model: a.glb }\n", 'props."a b"', "not a name", "letters"],
     ["too long", `props:\n  »${"a".repeat(65)}: { model: a.glb }\n`, `props."${"a".repeat(57)}…"`, "64"],
+    [
+      "the sheet's of all takes",
+      flying("»Takes: { prop: spanner, arrive: { at: [1, 0, 0], after: 1 } }"),
+      "throws.Takes",
+      "takes.svg",
+    ],
     ["a device", "props:\n  »Com1: { model: a.glb }\n", "props.Com1", "device"],
     [
       "the same but for case",
