@@ -35,8 +35,13 @@ export function factTable(
   );
 }
 
+/** A key of the throw file may break after its dots. */
 const rowHead = (label: string, about?: string): HTMLElement =>
-  el("th", { scope: "row", title: about }, label);
+  el(
+    "th",
+    { scope: "row", title: about },
+    ...label.split(/(?<=\.)/).flatMap((part, i) => (i > 0 ? [el("wbr"), part] : [part])),
+  );
 
 const SIGNS: Record<Likeness, [sign: string, words: string]> = {
   same: ["=", "same"],
