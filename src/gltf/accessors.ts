@@ -21,10 +21,8 @@ export async function decodeAccessors(
       `its meshes state ${total} vertices and indices`,
       `of a file of this size at most ${greatest} are read`,
     );
-  const unpacked = await unpackViews(
-    model,
-    wanted.flatMap((index) => viewsOf(accessors[index])),
-  );
+  const read = new Set(wanted.flatMap((index) => viewsOf(accessors[index])));
+  const unpacked = await unpackViews(model, [...read]);
   const contents = [...model.buffers, ...unpacked.values()];
   const ownBuffer = new Map([...unpacked.keys()].map((view, i) => [view, model.buffers.length + i]));
   const sparse = wanted.filter((index) => accessors[index].sparse);
@@ -35,9 +33,11 @@ export async function decodeAccessors(
       ...wanted.map((index) => withOwnOffsets(accessors[index])),
       ...sparse.map((index) => sparseNumbers(accessors[index])),
     ],
-    bufferViews: bufferViews.map((view, i) =>
-      ownBuffer.has(i) ? { ...view, buffer: ownBuffer.get(i)!, byteOffset: 0 } : view,
-    ),
+    bufferViews: bufferViews.map((view, i) => {
+      if (ownBuffer.has(i)) return { ...view, buffer: ownBuffer.get(i)!, byteOffset: 0 };
+      // what is compressed and not asked for may lie in a buffer that has no content
+      return read.has(i) ? view : { ...view, byteOffset: 0, byteLength: 0 };
+    }),
     buffers: contents.map(({ byteLength }, i) => ({ byteLength, uri: uri(i) })),
   };
   // glTF-Transform types its bytes more narrowly than the platform's readers do.
