@@ -1,5 +1,5 @@
 import { ACCESSOR_TYPES, COMPONENT_BYTES, elementBytes, UNSIGNED } from "./accessor-layout.js";
-import type { Checker, JsonObject } from "./checker.js";
+import { type Checker, type JsonObject, shown } from "./checker.js";
 
 /** Bytes that an accessor without a view may stand for: those are zeros made from nothing. */
 const GREATEST_FROM_NOTHING = 1 << 24;
@@ -30,10 +30,7 @@ export function checkAccessors(json: JsonObject, check: Checker): void {
 function checkAccessor(accessor: JsonObject, where: string, views: JsonObject[], check: Checker): void {
   const { type, componentType } = accessor;
   if (!ACCESSOR_TYPES.includes(type as string))
-    check.refuse(
-      `${where}.type is ${JSON.stringify(type)}`,
-      `it must be one of ${ACCESSOR_TYPES.join(", ")}`,
-    );
+    check.refuse(`${where}.type is ${shown(type)}`, `it must be one of ${ACCESSOR_TYPES.join(", ")}`);
   checkComponentType(componentType, where, [...COMPONENT_BYTES.keys()], check);
   const count = check.integer(accessor.count, `${where}.count`, 1);
   const size = elementBytes(type as string, componentType as number);
@@ -54,10 +51,7 @@ function checkAccessor(accessor: JsonObject, where: string, views: JsonObject[],
 
 function checkComponentType(value: unknown, where: string, allowed: number[], check: Checker): void {
   if (!allowed.includes(value as number))
-    check.refuse(
-      `${where}.componentType is ${JSON.stringify(value)}`,
-      `it must be one of ${allowed.join(", ")}`,
-    );
+    check.refuse(`${where}.componentType is ${shown(value)}`, `it must be one of ${allowed.join(", ")}`);
 }
 
 /** Whether `count` elements of `size` bytes fit the view that `part` names, at its offset. */

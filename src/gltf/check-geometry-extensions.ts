@@ -1,4 +1,4 @@
-import type { Checker, JsonObject } from "./checker.js";
+import { type Checker, type JsonObject, shown } from "./checker.js";
 import { DRACO } from "./draco.js";
 import { INSTANCING } from "./instancing.js";
 import { MESHOPT } from "./meshopt.js";
@@ -56,7 +56,7 @@ export function checkMeshopt(json: JsonObject, check: Checker): void {
     if (end > available)
       check.refuse(`${where} ends at byte ${end}`, `buffers[${buffer}] has ${available} bytes`);
     if (!MODES.includes(mode as string))
-      check.refuse(`${where}.mode is ${JSON.stringify(mode)}`, `it must be one of ${MODES.join(", ")}`);
+      check.refuse(`${where}.mode is ${shown(mode)}`, `it must be one of ${MODES.join(", ")}`);
     const elements = check.integer(count, `${where}.count`, 1);
     const size = check.integer(byteStride, `${where}.byteStride`, 2, 256);
     if (mode === "ATTRIBUTES" ? size % 4 !== 0 : size !== 2 && size !== 4)
@@ -66,12 +66,12 @@ export function checkMeshopt(json: JsonObject, check: Checker): void {
       );
     if (mode === "TRIANGLES" && elements % 3 !== 0)
       check.refuse(`${where}.count is ${elements}`, "triangles have three corners each");
-    if (!Object.hasOwn(FILTERS, filter as string))
+    if (typeof filter !== "string" || !Object.hasOwn(FILTERS, filter))
       check.refuse(
-        `${where}.filter is ${JSON.stringify(filter)}`,
+        `${where}.filter is ${shown(filter)}`,
         `it must be one of ${Object.keys(FILTERS).join(", ")}`,
       );
-    if (filter !== "NONE" && (mode !== "ATTRIBUTES" || !FILTERS[filter as string](size)))
+    if (filter !== "NONE" && (mode !== "ATTRIBUTES" || !FILTERS[filter](size)))
       check.refuse(`${where}.filter is ${filter}`, `it does not go with ${mode} of ${size} bytes`);
     if (elements * size !== view.byteLength || (view.byteStride ?? size) !== size)
       check.refuse(
@@ -110,7 +110,7 @@ export function checkNodeExtensions(
   const visible = extension(node, VISIBILITY, where, check)?.visible;
   if (visible !== undefined && typeof visible !== "boolean")
     check.refuse(
-      `${where}.extensions.${VISIBILITY}.visible is ${JSON.stringify(visible)}`,
+      `${where}.extensions.${VISIBILITY}.visible is ${shown(visible)}`,
       "it must be true or false",
     );
   const instancing = extension(node, INSTANCING, where, check);

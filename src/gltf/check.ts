@@ -2,7 +2,7 @@ import { FLOAT, UNSIGNED } from "./accessor-layout.js";
 import { checkAccessors } from "./check-accessors.js";
 import { checkDraco, checkMeshopt } from "./check-geometry-extensions.js";
 import { checkNodes } from "./check-nodes.js";
-import { Checker, type JsonObject } from "./checker.js";
+import { Checker, type JsonObject, shown } from "./checker.js";
 import { DRACO } from "./draco.js";
 import { INSTANCING } from "./instancing.js";
 import { MESHOPT } from "./meshopt.js";
@@ -58,8 +58,11 @@ function checkAsset(json: JsonObject, check: Checker): void {
   const asset = check.object(json.asset, "asset");
   for (const key of ["version", "minVersion"] as const) {
     const version = asset[key];
-    if (key === "minVersion" ? version !== undefined && version !== "2.0" : !/^2\./.test(String(version)))
-      check.refuse(`asset.${key} is ${JSON.stringify(version)}`, "glTF 2.0 is read");
+    const isRead =
+      key === "minVersion"
+        ? version === undefined || version === "2.0"
+        : typeof version === "string" && /^2\./.test(version);
+    if (!isRead) check.refuse(`asset.${key} is ${shown(version)}`, "glTF 2.0 is read");
   }
 }
 

@@ -79,7 +79,8 @@ export class Checker {
   }
 }
 
-function shown(value: unknown): string {
+/** A value as a message shows it: short, and never run as code by being turned into text. */
+export function shown(value: unknown): string {
   if (value === undefined) return "missing";
   if (typeof value === "number") return String(value);
   if (Array.isArray(value)) return "a list";

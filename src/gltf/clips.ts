@@ -3,6 +3,7 @@
 import type { Accessor, GLTF } from "@gltf-transform/core";
 import { FLOAT } from "./accessor-layout.js";
 import { decodeAccessors } from "./accessors.js";
+import { shown } from "./checker.js";
 import { type Model, ModelError } from "./model.js";
 
 export interface ClipKeys {
@@ -43,11 +44,11 @@ const PARTS = { LINEAR: 1, STEP: 1, CUBICSPLINE: 3 };
  */
 export async function readClips(model: Model): Promise<ReadClip[]> {
   const { animations = [] } = model.json;
-  const wanted = animations.flatMap(({ samplers }) =>
+  const wanted = animations.flatMap(({ samplers = [] }) =>
     samplers.flatMap(({ input, output }) => [input, output]),
   );
   const decoded = await decodeAccessors(model, wanted);
-  return animations.map(({ name = "", channels, samplers, extras }, a) => {
+  return animations.map(({ name = "", channels = [], samplers = [], extras }, a) => {
     const read: ReadChannel[] = [];
     const pointers: string[] = [];
     channels.forEach((channel, c) => {
@@ -66,15 +67,16 @@ export async function readClips(model: Model): Promise<ReadClip[]> {
 }
 
 const pointerOf = (target: GLTF.IAnimationChannelTarget): string | undefined => {
-  const extension = target.extensions?.[POINTER] as { pointer?: unknown } | undefined;
-  return extension && String(extension.pointer);
+  const extension = target.extensions?.[POINTER] as { pointer?: unknown } | null | undefined;
+  if (typeof extension !== "object" || extension === null) return undefined;
+  return typeof extension.pointer === "string" ? extension.pointer : "";
 };
 
 function pathOf({ name }: Model, path: unknown, where: string): ReadChannel["path"] {
   if (typeof path === "string" && Object.hasOwn(SIZES, path)) return path as ReadChannel["path"];
   throw new ModelError(
     name,
-    `${where}.target.path is ${JSON.stringify(path)}`,
+    `${where}.target.path is ${shown(path)}`,
     `it must be one of ${Object.keys(SIZES).join(", ")}`,
   );
 }
@@ -89,11 +91,8 @@ function keysOf(
   const refuse = (fault: string, remedy: string): never => {
     throw new ModelError(model.name, `${where}${fault}`, remedy);
   };
-  if (!Object.hasOwn(PARTS, interpolation))
-    refuse(
-      `.interpolation is ${JSON.stringify(interpolation)}`,
-      `it must be one of ${Object.keys(PARTS).join(", ")}`,
-    );
+  if (typeof interpolation !== "string" || !Object.hasOwn(PARTS, interpolation))
+    refuse(`.interpolation is ${shown(interpolation)}`, `it must be one of ${Object.keys(PARTS).join(", ")}`);
   const [clock, keyed] = [model.json.accessors![input], model.json.accessors![output]];
   if (clock.type !== "SCALAR" || clock.componentType !== FLOAT)
     refuse(`.input has the type ${clock.type} of ${clock.componentType}`, "it must be SCALAR of floats");

@@ -1,8 +1,10 @@
+import { readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
 import { type ReadClip, readClips } from "../../src/gltf/clips.js";
 import { ModelError } from "../../src/gltf/model.js";
 import { readModel } from "../../src/gltf/read.js";
-import { bytesOf, FACES, glbOf, TETRAHEDRON } from "./models.js";
+import { lossyMeshoptGlb, open } from "./compressed.js";
+import { bytesOf, FACES, glbOf, TETRAHEDRON, tetrahedron } from "./models.js";
 import { OWN_BYTES, OWN_TEXT } from "./own.js";
 
 /** A tetrahedron that a clip slides from 0 to (1, 2, 3) in a second; `change` breaks it. */
@@ -192,4 +194,42 @@ describe("keys that nothing could play are refused, with place and value", () =>
     it(title, async () => {
       expect(await refusal(glb)).toMatch(message);
     });
+});
+
+describe("a model that says less than it should, or stranger things", () => {
+  it("has no clips where an animation has neither channels nor samplers", async () => {
+    const model = await readModel(
+      "m.glb",
+      sliding((json) => {
+        json.animations = [{ name: "nothing" }];
+      }),
+    );
+    expect(await readClips(model)).toEqual([
+      { name: "nothing", channels: [], pointers: [], extras: undefined },
+    ]);
+  });
+
+  it("is read for its clips where its mesh is compressed", async () => {
+    const club = readFileSync(new URL("../data/props/club.glb", import.meta.url));
+    const model = await readModel("m.glb", await lossyMeshoptGlb(await open(club)));
+    expect(await readClips(model)).toEqual([]);
+  });
+
+  it("is refused by a word that cannot be made text", async () => {
+    const model = await readModel(
+      "m.glb",
+      sliding((json) => {
+        json.animations[0].samplers[0].interpolation = { toString: 1 };
+      }),
+    );
+    await expect(readClips(model)).rejects.toThrow(
+      "m.glb: animations[0].samplers[0].interpolation is an object; it must be one of LINEAR, STEP, CUBICSPLINE",
+    );
+    const odd = tetrahedron((json) => {
+      json.asset.version = { toString: 1 };
+    });
+    await expect(readModel("m.glb", odd)).rejects.toThrow(
+      "m.glb: asset.version is an object; glTF 2.0 is read",
+    );
+  });
 });

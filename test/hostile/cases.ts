@@ -1,0 +1,87 @@
+/** Cases run one after the other, each measured by the time that the processor spent on it, which other programs do not lengthen. */
+
+import { Worker } from "node:worker_threads";
+
+/** s of the processor's time. */
+export const MOST_SECONDS = 5;
+
+/** Whether the long version is asked for. */
+export const SOAK = process.env.SOAK === "1";
+
+export interface Tally {
+  /** Cases by what came of them. */
+  counts: Record<string, number>;
+  /** What must not be, by the case's number. */
+  faults: string[];
+  /** Of the processor, s, and the case. */
+  slowest: [number, number];
+}
+
+/**
+ * @param run answers what came of a case, in a word, or throws what must not be
+ * @param first number of the first case
+ */
+export async function runCases(
+  count: number,
+  run: (number: number) => Promise<string>,
+  first = 0,
+): Promise<Tally> {
+  const tally: Tally = { counts: {}, faults: [], slowest: [0, -1] };
+  const watch = new Watch();
+  try {
+    for (let number = first; number < first + count; number++) {
+      watch.begin(number);
+      const before = process.cpuUsage();
+      try {
+        const word = await run(number);
+        tally.counts[word] = (tally.counts[word] ?? 0) + 1;
+      } catch (error) {
+        tally.faults.push(`case ${number}: ${error instanceof Error ? error.stack : String(error)}`);
+      }
+      const seconds = secondsSince(before);
+      if (seconds > tally.slowest[0]) tally.slowest = [seconds, number];
+      if (seconds > MOST_SECONDS) tally.faults.push(`case ${number} took ${seconds.toFixed(1)} s`);
+    }
+  } finally {
+    await watch.end();
+  }
+  return tally;
+}
+
+function secondsSince(before: NodeJS.CpuUsage): number {
+  const { user, system } = process.cpuUsage(before);
+  return (user + system) / 1e6;
+}
+
+/** Ends a process whose case never does, and says which it was. */
+class Watch {
+  readonly #at = new Int32Array(new SharedArrayBuffer(4));
+  readonly #worker = new Worker(
+    `const { workerData: at } = require("node:worker_threads");
+     const used = () => { const { user, system } = process.cpuUsage(); return (user + system) / 1e6; };
+     let [seen, since] = [-1, 0];
+     setInterval(() => {
+       const now = Atomics.load(at, 0);
+       if (now !== seen) [seen, since] = [now, used()];
+       else if (used() - since > ${MOST_SECONDS * 12}) {
+         require("node:fs").writeSync(2, "case " + now + " does not end\\n");
+         process.kill(process.pid, "SIGKILL");
+       }
+     }, 500).unref();
+     require("node:worker_threads").parentPort.on("message", () => process.exit());`,
+    { eval: true, workerData: this.#at },
+  );
+
+  begin(number: number): void {
+    Atomics.store(this.#at, 0, number);
+  }
+
+  async end(): Promise<void> {
+    await this.#worker.terminate();
+  }
+}
+
+export const told = ({ counts, slowest: [seconds, number] }: Tally): string =>
+  `${Object.entries(counts)
+    .map(([word, count]) => `${count} ${word}`)
+    .join(", ")}; slowest case ${number}: ${seconds.toFixed(2)} s of the processor`;
