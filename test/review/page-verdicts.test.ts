@@ -57,7 +57,9 @@ describe("the list of wanted takes", () => {
   });
 
   it("is the accepted ones alone once there is one", () => {
-    const verdicts = decide(decide(rejecting, motions[5], "accepted"), motions[2], "accepted");
+    const one = decide(rejecting, motions[5], "accepted");
+    expect(wanted(one, motions).takes).toEqual([6]);
+    const verdicts = decide(one, motions[2], "accepted");
     expect(wanted(verdicts, motions).takes).toEqual([3, 6]);
   });
 
