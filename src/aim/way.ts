@@ -1,3 +1,5 @@
+import { MOST_TURNING } from "../flight/flight.js";
+import { RequestError } from "../math/request-error.js";
 import { normalize, type Vec3 } from "../math/vec3.js";
 import { type OrderedWish, predictedRounding } from "./ranking.js";
 import type { ReducedBody } from "./reduced-body.js";
@@ -43,8 +45,19 @@ export const MOST_MISS = 1e-9;
 /** A way this near the wish, in turns, leaves nothing better to be looked for. */
 const AS_WISHED = 0.1;
 
-/** In the ordered frame, the axis of unit length and turned round for negative turns. */
+/**
+ * In the ordered frame, the axis of unit length and turned round for negative turns.
+ *
+ * @throws RequestError for more turns than a flight may have: they would only be found out after the search
+ */
 export function orderedWish(body: ReducedBody, wish: WayWish): OrderedWish {
+  const most = MOST_TURNING / (2 * Math.PI);
+  if (wish.turns !== undefined && !(Math.abs(wish.turns) <= most))
+    throw new RequestError(
+      ["spin"],
+      `${Math.abs(wish.turns)} turns are too many for a clip`,
+      `at most ${Math.floor(most)} in all`,
+    );
   const sign = wish.turns !== undefined && wish.turns < 0 ? -1 : 1;
   const axis = wish.axis && normalize(body.toOrdered(wish.axis));
   return {

@@ -41,10 +41,13 @@ export interface Take {
   turnsAlone?: boolean;
 }
 
+/** After so many candidates without a flight, all for one and the same reason, nobody waits for the rest: some take long to fail. */
+const ENOUGH_ALIKE = 128;
+
 /**
  * Solves a take; nothing of any other take is needed.
  *
- * @throws RequestError, path from the throw inwards, where no candidate has a flight: the first one's reason; UnheldLimits where some have,
+ * @throws RequestError, path from the throw inwards, where no candidate has a flight (or the first 128 all fail for one reason): the first one's reason; UnheldLimits where some have,
  *   but none that holds the throw's limits
  */
 export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number: number): Take {
@@ -72,6 +75,7 @@ export function solveTake(file: ThrowFile, entry: ThrowEntry, prop: Prop, number
       first ??= error;
       alike &&= error.fault === first.fault;
       flightless++;
+      if (alike && flightless === tried && tried === ENOUGH_ALIKE) break;
     }
   }
   if (broken.size > 0) throw new UnheldLimits(number, tried, flightless, broken);

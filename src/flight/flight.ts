@@ -36,7 +36,7 @@ export interface Flight {
 }
 
 /** Radians a flight may turn, about 32,000 turns: beyond that a float32 animation says nothing and memory runs out. */
-const MOST_TURNING = 2e5;
+export const MOST_TURNING = 2e5;
 
 /** Times this far outside a flight, s, count as its ends. */
 const SLACK = 1e-9;

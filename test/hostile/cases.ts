@@ -2,8 +2,10 @@
 
 import { Worker } from "node:worker_threads";
 
-/** s of the processor's time. */
-export const MOST_SECONDS = 5;
+/** s of the processor's time. A take that no draw can hold within its limits is drawn a thousand times, as the README says, before it is left out. */
+const MOST_SECONDS = 5;
+const MOST_WHERE_LEFT_OUT = 30;
+export const LEFT_OUT = "with takes left out";
 
 /** Whether the long version is asked for. */
 export const SOAK = process.env.SOAK === "1";
@@ -32,15 +34,17 @@ export async function runCases(
     for (let number = first; number < first + count; number++) {
       watch.begin(number);
       const before = process.cpuUsage();
+      let word = "a fault";
       try {
-        const word = await run(number);
+        word = await run(number);
         tally.counts[word] = (tally.counts[word] ?? 0) + 1;
       } catch (error) {
         tally.faults.push(`case ${number}: ${error instanceof Error ? error.stack : String(error)}`);
       }
       const seconds = secondsSince(before);
       if (seconds > tally.slowest[0]) tally.slowest = [seconds, number];
-      if (seconds > MOST_SECONDS) tally.faults.push(`case ${number} took ${seconds.toFixed(1)} s`);
+      if (seconds > (word === LEFT_OUT ? MOST_WHERE_LEFT_OUT : MOST_SECONDS))
+        tally.faults.push(`case ${number} took ${seconds.toFixed(1)} s`);
     }
   } finally {
     await watch.end();

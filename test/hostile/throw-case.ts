@@ -12,6 +12,7 @@ import { ThrowFileError } from "../../src/throwfile/errors.js";
 import { parseThrowFile } from "../../src/throwfile/parse.js";
 import { type ThrowEntry, type ThrowFile, takeNumbers } from "../../src/throwfile/types.js";
 import { assets } from "../cli/folder.js";
+import { LEFT_OUT } from "./cases.js";
 import { Chance } from "./chance.js";
 import { mutateText } from "./texts.js";
 import { anyThrowFile, THROW_FILES } from "./throw-files.js";
@@ -45,7 +46,7 @@ export async function throwCase(text: string): Promise<string> {
     JSON.parse(record);
     if (UNTOLD.test(record)) throw new Error(`the record holds ${UNTOLD.exec(record)![0]}`);
     for (const { name, content } of baked.files) if (name.endsWith(".glb")) await readModel(name, content);
-    return baked.unheld.length > 0 ? "with takes left out" : "baked";
+    return baked.unheld.length > 0 ? LEFT_OUT : "baked";
   } catch (error) {
     checkTold(error);
     return "refused when baked";
