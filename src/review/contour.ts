@@ -19,15 +19,18 @@ export interface Contour {
  * from the viewer, and the rims of open surfaces. Nothing here asks that a mesh be closed or its triangles agree.
  */
 export function contourOf(solid: Solid, rotation: Quat): Contour {
-  const { positions, edges, starts, sides } = solid;
-  const facing = facingOf(solid, rotation);
+  const { positions, edges, starts, sides, normals, groups } = solid;
   const [right, up] = toMatrix(rotation);
+  const [x, y, z] = rotateBack(rotation, [0, 0, 1]);
   const contour = growing(1024);
-  for (let e = 0; e + 1 < starts.length; e++) {
+  /** 1 for a triangle that is counter-clockwise in the picture, −1 for one that is not; edge on it may be either. */
+  const facing = (t: number) =>
+    normals[3 * t] * x + normals[3 * t + 1] * y + normals[3 * t + 2] * z >= 0 ? 1 : -1;
+  const look = (e: number): void => {
     let weight = 0;
     for (let s = starts[e]; s < starts[e + 1]; s++)
-      weight += sides[s] >= 0 ? facing[sides[s]] : -facing[~sides[s]];
-    if (weight === 0) continue;
+      weight += sides[s] >= 0 ? facing(sides[s]) : -facing(~sides[s]);
+    if (weight === 0) return;
     const a = 3 * edges[2 * e];
     const b = 3 * edges[2 * e + 1];
     contour.add(
@@ -37,17 +40,21 @@ export function contourOf(solid: Solid, rotation: Quat): Contour {
       up[0] * positions[b] + up[1] * positions[b + 1] + up[2] * positions[b + 2],
       weight,
     );
+  };
+  if (!groups) {
+    for (let e = 0; e + 1 < starts.length; e++) look(e);
+    return contour.all();
+  }
+  const { loose, order, size, cones } = groups;
+  for (let i = 0; i < loose.length; i++) look(loose[i]);
+  for (let g = 0; 4 * g < cones.length; g++) {
+    const along = cones[4 * g] * x + cones[4 * g + 1] * y + cones[4 * g + 2] * z;
+    // all face the viewer, or none does: the edges fall out
+    if (Math.abs(along) > cones[4 * g + 3]) continue;
+    const end = Math.min(order.length, (g + 1) * size);
+    for (let i = g * size; i < end; i++) look(order[i]);
   }
   return contour.all();
-}
-
-/** 1 for each triangle that is counter-clockwise in the picture, −1 for the others; edge on it may be either. */
-export function facingOf({ normals }: Pick<Solid, "normals">, rotation: Quat): Int8Array {
-  const [x, y, z] = rotateBack(rotation, [0, 0, 1]);
-  const facing = new Int8Array(normals.length / 3);
-  for (let t = 0, n = 0; t < facing.length; t++, n += 3)
-    facing[t] = normals[n] * x + normals[n + 1] * y + normals[n + 2] * z >= 0 ? 1 : -1;
-  return facing;
 }
 
 function growing(room: number) {

@@ -3,6 +3,7 @@ import { readSurfaces } from "../gltf/surfaces.js";
 import { after, eachEdge } from "../prop/edges.js";
 import type { Prop } from "../prop/prop.js";
 import { weld } from "../prop/weld.js";
+import { type EdgeGroups, edgeGroups } from "./edge-groups.js";
 
 /** A prop's surface made ready to be drawn from any side. */
 export interface Solid {
@@ -18,7 +19,12 @@ export interface Solid {
   readonly starts: Uint32Array;
   /** The triangles that meet at the edges: t where it runs along the edge as `edges` does, ~t where it runs against it. */
   readonly sides: Int32Array;
+  /** Of a mesh of very many edges. */
+  readonly groups?: EdgeGroups;
 }
+
+/** With so many edges it pays to put them into groups. */
+const MANY_EDGES = 30_000;
 
 /** The surface of the model, or of the node of it that is the prop, in its rest pose: m, about the centre of mass, the model's axes. */
 export async function solidOf(
@@ -34,12 +40,13 @@ export async function solidOf(
     })),
   );
   const positions = welded.positions.map((value, i) => value * prop.scale - prop.centerOfMass[i % 3]);
-  return {
+  const solid = {
     positions,
     triangles: welded.triangles,
     normals: normalsOf(positions, welded.triangles),
     ...edgesOf(welded.triangles, positions.length / 3),
   };
+  return solid.edges.length > 2 * MANY_EDGES ? { ...solid, groups: edgeGroups(solid) } : solid;
 }
 
 function normalsOf(positions: Float64Array, triangles: Uint32Array): Float64Array {
