@@ -1,7 +1,7 @@
 import { readFileSync } from "node:fs";
 import { expect, it } from "vitest";
 // @ts-expect-error a script without types
-import { licenceList, packages } from "../../build/licences.js";
+import { licenceList, packages } from "../../assets/list-licences.js";
 import { ROOT } from "../house/sources.js";
 
 interface Package {

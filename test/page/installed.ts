@@ -6,7 +6,7 @@ import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { build } from "esbuild";
 // @ts-expect-error it is a script of the build, without types
-import { bundlePage } from "../../build/page.js";
+import { bundlePage } from "../../assets/build-page.js";
 import { Program } from "../cli/program.js";
 
 const ROOT = fileURLToPath(new URL("../../", import.meta.url));

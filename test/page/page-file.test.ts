@@ -3,7 +3,7 @@ import { existsSync, readFileSync, symlinkSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { afterAll, beforeAll, describe, expect, it, vi } from "vitest";
 // @ts-expect-error it is a script of the build, without types
-import { bundlePage } from "../../build/page.js";
+import { bundlePage } from "../../assets/build-page.js";
 import type { PageData } from "../../src/review/page-data.js";
 import type { Program } from "../cli/program.js";
 import { HARM } from "./hostile.js";
