@@ -184,6 +184,8 @@ async function* parts(
       yield part;
     }
   }
+  for (const { path } of shards.filter((shard) => next.get(shard)))
+    throw new RequestError([path], "has takes of no throw, or in another order", "bake this shard again");
 }
 
 const lineOf = async ({ lines }: Shard): Promise<ShardLine | undefined> => {

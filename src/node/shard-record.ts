@@ -8,6 +8,7 @@ import { RequestError } from "../math/request-error.js";
 import type { TakesRecord } from "../record/clip-record.js";
 import type { MadePart } from "./batch.js";
 import type { TextSink, Told } from "./batch-record.js";
+import { isShardHead, isShardLine } from "./shard-form.js";
 
 /** A throw or chain of the batch. */
 export interface ShardEntry {
@@ -107,14 +108,16 @@ export async function readShard(
       throw wrong(code ? `cannot be read (${code})` : "is not as a shard's record is written");
     }
   };
-  const head = (await next()) as ShardHead | undefined;
-  if (!head?.shard || !Array.isArray(head.entries)) throw wrong("is not as a shard's record is written");
-  return { head, lines: following() };
+  const head = await next();
+  if (!isShardHead(head)) throw wrong("is not as a shard's record is written");
+  return { head: head as ShardHead, lines: following() };
 
   async function* following(): AsyncGenerator<ShardLine> {
     for (let count = 0; ; count++) {
-      const line = (await next()) as ShardLine | undefined;
-      if (!line) throw wrong("is cut off");
+      const read = await next();
+      if (read === undefined) throw wrong("is cut off");
+      if (!isShardLine(read)) throw wrong(`is not as a shard's record is written (line ${count + 2})`);
+      const line = read as ShardLine;
       if ("end" in line) {
         if (line.end !== count) throw wrong(`has ${count} of its ${line.end} lines`);
         return;

@@ -1,7 +1,7 @@
 /** A bake writes over what tossbake wrote, and over nothing else. */
 
 import { createReadStream } from "node:fs";
-import { open, readdir } from "node:fs/promises";
+import { open, readdir, stat } from "node:fs/promises";
 import { join } from "node:path";
 import { createInterface } from "node:readline";
 import { RequestError } from "../math/request-error.js";
@@ -43,8 +43,19 @@ export async function spareOthers(
   }
 }
 
-/** As its generator, as the program that made a record, or somewhere in a drawing. */
+/** As its generator, as the program that made a record, or somewhere in a drawing. A link to nothing or to a folder, a pipe, what cannot be read: none of these is. */
 async function isMarked(path: string): Promise<boolean> {
+  return (await isFile(path)) && (await hasMark(path).catch(() => false));
+}
+
+/** A pipe would be waited for. */
+const isFile = (path: string): Promise<boolean> =>
+  stat(path).then(
+    (status) => status.isFile(),
+    () => false,
+  );
+
+async function hasMark(path: string): Promise<boolean> {
   const mark = /\.gl(b|tf)$/i.test(path)
     ? /"generator"\s*:\s*"tossbake"/
     : /\.json$/i.test(path)
@@ -65,13 +76,14 @@ async function isMarkedBin(folder: string, name: string): Promise<boolean> {
   const gltf = name.replace(/\.bin$/, ".gltf");
   const stagings = (await readdir(folder)).filter(isStagingName);
   const places = [folder, ...stagings.map((staging) => join(folder, staging, "files"))];
-  for (const place of places) if (await isMarked(join(place, gltf)).catch(() => false)) return true;
+  for (const place of places) if (await isMarked(join(place, gltf))) return true;
   return false;
 }
 
 /** Read line by line: a record may be large. */
 async function recordedFiles(path: string): Promise<Set<string>> {
   const names = new Set<string>();
+  if (!(await isFile(path))) return names;
   try {
     for await (const line of createInterface({ input: createReadStream(path) }))
       for (const [, name] of line.matchAll(/"file": ?"([^"]+)"/g)) names.add(name);
