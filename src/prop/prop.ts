@@ -94,10 +94,12 @@ export async function weigh(name: string, source: Model | Shape, options: PropOp
   const body = settleMass(measured.body && scaleLengths(measured.body, scale), options);
   const reach = measured.reachFrom(scaleVector(body.centerOfMass, 1 / scale)) * scale;
   const extremes = scale === 1 ? measured.extremes : measured.extremes.map((value) => value * scale);
+  const principal = principalAxes(body.inertia);
+  checkReckonable("json" in source ? "model" : "shape", body.mass, reach, principal.moments);
   return {
     name,
     ...body,
-    principal: principalAxes(body.inertia),
+    principal,
     names: axisNames(body.inertia),
     reach,
     size: scaleVector(measured.size, scale),
@@ -107,6 +109,18 @@ export async function weigh(name: string, source: Model | Shape, options: PropOp
     ...(node && { node }),
     warnings: [...measured.warnings, ...doubts(options, body, boxOf(extremes)), ...reachWarnings(reach)],
   };
+}
+
+/** Beyond these, products of the numbers leave what doubles hold. */
+const [LEAST, GREATEST] = [1e-60, 1e60];
+
+function checkReckonable(key: string, mass: number, reach: number, moments: Vec3): void {
+  if ([mass, reach, ...moments].every((value) => value >= LEAST && value <= GREATEST)) return;
+  throw new RequestError(
+    [key],
+    `makes a body of ${mass} kg that reaches ${reach} m, with moments of ${moments.join(", ")} kg m², with which nothing can be reckoned`,
+    `check its size and unit, scale, density, mass and inertia: each of these numbers from ${LEAST} to ${GREATEST}`,
+  );
 }
 
 function nodeOf(source: Model | Shape, name: string): MovedNode {

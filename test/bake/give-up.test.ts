@@ -26,4 +26,15 @@ describe("what cannot be is said in a moment", () => {
       /^rod\.yaml:7:5 throws\.toss\.spin: 1000000 turns are too many for a clip; at most 31830 in all$/,
     );
   });
+
+  it("a body whose moments are no numbers to reckon with", async () => {
+    const file = parseThrowFile(
+      "needle.yaml",
+      `props: { needle: { shape: { cylinder: { radius: 1e-160, length: 200 } }, scale: 0.01, density: 650 } }
+throws: { toss: { prop: needle, arrive: { at: [0, 1, 2], after: 0.8 }, spin: { axis: right, turns: 1 } } }`,
+    );
+    await expect(bake(file, () => expect.unreachable())).rejects.toThrow(
+      /^needle\.yaml:1:\d+ props\.needle\.shape: makes a body of [\d.e-]+ kg that reaches 1 m, with moments of .*; check its size/,
+    );
+  });
 });
