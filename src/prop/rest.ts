@@ -130,7 +130,7 @@ function roundFaces(shape: Exclude<Shape, { box: Vec3 }>, prop: Prop): RestingFa
   if ("disc" in shape) return ends(shape.disc.radius, shape.disc.thickness);
   if ("tube" in shape) return ends(shape.tube.outer, shape.tube.length);
   if ("cone" in shape) return end(DOWN, -shape.cone.length / 2, shape.cone.radius);
-  if (!("ring" in shape)) return [];
+  if ("sphere" in shape || "ellipsoid" in shape || "capsule" in shape) return [];
   // a ring tips as the disc in its middle would: by the side of that which is down
   const radius = shape.ring.radius * prop.scale;
   if (length([x, 0, z]) >= radius) return [];

@@ -22,6 +22,9 @@ export type Shape =
   /** Radii. */
   | { readonly tube: { readonly outer: number; readonly inner: number; readonly length: number } };
 
+/** What a shape is called. */
+export type ShapeKind = Shape extends infer S ? (S extends Shape ? keyof S : never) : never;
+
 /** @throws RequestError at ["shape", …] for lengths that make no body */
 export function checkShape(shape: Shape): void {
   for (const [kind, sizes] of Object.entries(shape) as [string, number | object][])

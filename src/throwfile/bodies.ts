@@ -1,7 +1,7 @@
 /** Forms of what a prop is made of: shapes, densities, points, stated inertia. */
 
 import { RequestError } from "../math/request-error.js";
-import type { Shape } from "../prop/shape.js";
+import type { Shape, ShapeKind } from "../prop/shape-kind.js";
 import { statedInertia } from "../prop/stated-inertia.js";
 import { shown } from "./errors.js";
 import { fields } from "./fields.js";
@@ -9,7 +9,7 @@ import { at, type Form, isObject, list, text } from "./form.js";
 import { nearest } from "./nearest.js";
 import { number, vector } from "./numbers.js";
 
-const SHAPES: Record<string, string> = {
+const SHAPES: Record<ShapeKind, string> = {
   box: "whole edges [x, y, z], m",
   sphere: "radius, m",
   ellipsoid: "half axes [a, b, c], m",
@@ -28,7 +28,7 @@ const sizes = vector({ above: 0, unit: "m" });
 export const shape: Form<Shape> = (() => {
   const rounded = { radius: size, length: size };
   const flat = { radius: size, thickness: size };
-  const kinds: Record<string, Form<unknown>> = {
+  const kinds: Record<ShapeKind, Form<unknown>> = {
     box: sizes,
     sphere: size,
     ellipsoid: sizes,
@@ -60,7 +60,7 @@ export const shape: Form<Shape> = (() => {
         );
     }),
   };
-  const names = Object.keys(kinds);
+  const names = Object.keys(kinds) as ShapeKind[];
   const expects = `one of ${names.join(", ")}, such as {sphere: 0.1}`;
   return {
     read(value, tell) {
@@ -74,9 +74,9 @@ export const shape: Form<Shape> = (() => {
         );
         return undefined;
       }
-      const [key] = keys;
-      if (!Object.hasOwn(kinds, key)) {
-        tell("unknown shape", `the nearest known shape is ${nearest(key, names)}`, key);
+      const key = names.find((name) => name === keys[0]);
+      if (!key) {
+        tell("unknown shape", `the nearest known shape is ${nearest(keys[0], names)}`, keys[0]);
         return undefined;
       }
       const read = kinds[key].read(value[key], at(tell, key));
