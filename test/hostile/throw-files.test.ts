@@ -7,7 +7,7 @@ import { THROW_FILES } from "./throw-files.js";
 
 // What is expected is what a program must not do to anybody: no outside source.
 
-const CASES = SOAK ? 10_000 : 250;
+const CASES = SOAK ? 10_000 : 150;
 
 describe("a throw file changed anyhow", () => {
   it("is refused with file, line and key, or baked to files that can be read", async () => {
