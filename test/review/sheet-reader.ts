@@ -79,7 +79,9 @@ export interface Pixels {
 /** What a renderer draws of the sheet without its paper; with `only`, of the elements of that class alone. */
 export function rendered(svg: string, { only, margin = 0 }: { only?: string; margin?: number } = {}): Pixels {
   const [, width, height] = /viewBox="0 0 (\S+) ([^"]+)"/.exec(svg)!.map(Number);
-  const hidden = only ? `.tossbake *{visibility:hidden}.tossbake .${only}{visibility:visible;stroke:none}` : "";
+  const hidden = only
+    ? `.tossbake *{visibility:hidden}.tossbake .${only}{visibility:visible;stroke:none}`
+    : "";
   const framed = svg
     .replace(/width="\S+" height="\S+" viewBox="[^"]*"/, () => {
       const [w, h] = [width + 2 * margin, height + 2 * margin];
