@@ -1,7 +1,7 @@
 /** A bake writes over what tossbake wrote, and over nothing else. */
 
 import { createReadStream } from "node:fs";
-import { open, readdir, stat } from "node:fs/promises";
+import { lstat, open, readdir, stat } from "node:fs/promises";
 import { join } from "node:path";
 import { createInterface } from "node:readline";
 import { RequestError } from "../math/request-error.js";
@@ -23,15 +23,16 @@ export async function spareOthers(
   names: readonly string[],
   inputs: Iterable<string>,
 ): Promise<void> {
-  const entries = await readdir(folder, { withFileTypes: true }).catch(() => []);
-  // some file systems are blind to case
-  const there = new Map(entries.map((entry) => [entry.name.toLowerCase(), entry]));
+  const entries = await readdir(folder).catch(() => []);
+  // some file systems are blind to case: whether this one is, it says itself
+  const there = new Set(entries.map((entry) => entry.toLowerCase()));
   const taken = names.filter((name) => there.has(name.toLowerCase()));
   await spareInputs(folder, taken, inputs);
   let recorded: Set<string> | undefined;
   for (const name of taken) {
-    if (there.get(name.toLowerCase())?.isDirectory())
-      throw unwritable(folder, Object.assign(new Error(name), { code: "EISDIR" }));
+    const status = await lstat(join(folder, name)).catch(() => undefined);
+    if (!status) continue;
+    if (status.isDirectory()) throw unwritable(folder, Object.assign(new Error(name), { code: "EISDIR" }));
     if ((await isMarkedBin(folder, name)) || (await isMarked(join(folder, name)))) continue;
     recorded ??= await recordedFiles(join(folder, "takes.json"));
     if (recorded.has(name) || recorded.has(name.replace(/\.bin$/, ".gltf"))) continue;

@@ -1,5 +1,13 @@
 import { spawnSync } from "node:child_process";
-import { lstatSync, mkdirSync, readFileSync, readlinkSync, symlinkSync, writeFileSync } from "node:fs";
+import {
+  existsSync,
+  lstatSync,
+  mkdirSync,
+  readFileSync,
+  readlinkSync,
+  symlinkSync,
+  writeFileSync,
+} from "node:fs";
 import { describe, expect, it } from "vitest";
 import { run, Workplace } from "./folder.js";
 
@@ -90,6 +98,17 @@ describe("what is written goes through no link", () => {
     expect(err).toMatch(/out\/lob\.glb: stands there already and is not tossbake's[^\n]*\n$/);
     expect(place.contents(place.path("elsewhere"))).toEqual({ "mine.txt": "bWluZQ==" });
     expect(place.contents()).toEqual({});
+  });
+
+  it("a file whose name is another by its case alone is left alone where the file system tells them apart", async () => {
+    const place = prepared();
+    writeFileSync(place.path("out", "LOB.glb"), "mine");
+    const isBlind = existsSync(place.path("out", "lob.glb"));
+    const { code, err } = await bake(place);
+    expect({ code, err }).toEqual(
+      isBlind ? { code: 2, err: expect.stringContaining("stands there already") } : { code: 0, err: "" },
+    );
+    expect(readFileSync(place.path("out", "LOB.glb"), "utf8")).toBe("mine");
   });
 
   it("a pipe in the record's place is not waited for", async () => {

@@ -284,6 +284,27 @@ const CASES: Record<string, Case[]> = {
       "throws.Takes",
       "takes.svg",
     ],
+    [
+      "two throws that are one file where case does not count",
+      flying("Lob: { prop: spanner, arrive: { at: [1, 0, 0], after: 1 } }\n  »lob: { like: Lob }"),
+      "throws.lob",
+      "case",
+      "throws.Lob",
+    ],
+    [
+      "a throw whose files some systems cannot make",
+      flying("»nul: { prop: spanner, arrive: { at: [1, 0, 0], after: 1 } }"),
+      "throws.nul",
+      "device",
+    ],
+    [
+      "a name that ends in a dot, which some systems drop",
+      flying('»"lob.": { prop: spanner, arrive: { at: [1, 0, 0], after: 1 } }'),
+      'throws."lob."',
+      "not a name",
+      "letters",
+    ],
+    ["a chain that is a device", chain("{ throws: [a, d] }").replace("run", "»AUX"), "chains.AUX", "device"],
     ["a device", "props:\n  »Com1: { model: a.glb }\n", "props.Com1", "device"],
     [
       "the same but for case",
