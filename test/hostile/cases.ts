@@ -23,29 +23,27 @@ export interface Tally {
 /**
  * @param run answers what came of a case, in a word, or throws what must not be
  * @param first number of the first case
+ * @param mostSeconds of the processor, of a case of which no take is left out
  */
 export async function runCases(
   count: number,
   run: (number: number) => Promise<string>,
   first = 0,
+  mostSeconds = MOST_SECONDS,
 ): Promise<Tally> {
   const tally: Tally = { counts: {}, faults: [], slowest: [0, -1] };
   const watch = new Watch();
   try {
     for (let number = first; number < first + count; number++) {
       watch.begin(number);
-      const before = process.cpuUsage();
-      let word = "a fault";
-      try {
-        word = await run(number);
-        tally.counts[word] = (tally.counts[word] ?? 0) + 1;
-      } catch (error) {
-        tally.faults.push(`case ${number}: ${error instanceof Error ? error.stack : String(error)}`);
-      }
-      const seconds = secondsSince(before);
+      const most = (word: string) => (word === LEFT_OUT ? MOST_WHERE_LEFT_OUT : mostSeconds);
+      let [word, seconds, fault] = await timed(() => run(number));
+      // a machine that is shared may count for ours what others had of it
+      if (seconds > most(word)) [word, seconds, fault] = await timed(() => run(number));
       if (seconds > tally.slowest[0]) tally.slowest = [seconds, number];
-      if (seconds > (word === LEFT_OUT ? MOST_WHERE_LEFT_OUT : MOST_SECONDS))
-        tally.faults.push(`case ${number} took ${seconds.toFixed(1)} s`);
+      if (seconds > most(word)) fault ??= `took ${seconds.toFixed(1)} s`;
+      if (fault !== undefined) tally.faults.push(`case ${number}: ${fault}`);
+      tally.counts[word] = (tally.counts[word] ?? 0) + 1;
     }
   } finally {
     await watch.end();
@@ -53,9 +51,17 @@ export async function runCases(
   return tally;
 }
 
-function secondsSince(before: NodeJS.CpuUsage): number {
+/** What came of it, the processor's time that it took, s, and what must not have been. */
+async function timed(run: () => Promise<string>): Promise<[string, number, string | undefined]> {
+  const before = process.cpuUsage();
+  let [word, fault]: [string, string | undefined] = ["a fault", undefined];
+  try {
+    word = await run();
+  } catch (error) {
+    fault = error instanceof Error ? (error.stack ?? error.message) : String(error);
+  }
   const { user, system } = process.cpuUsage(before);
-  return (user + system) / 1e6;
+  return [word, (user + system) / 1e6, fault];
 }
 
 /** Ends a process whose case never does, and says which it was. */
