@@ -2,13 +2,14 @@
 
 import { type ArcLayout, type ArcPanelInput, arcLayout, type LaidFlight, MARGIN } from "./arc-layout.js";
 import type { Drawing } from "./drawing.js";
+import { labelMarkup } from "./label-markup.js";
 import { FONT_SIZE } from "./look.js";
-import { type Label, type PlacedLabel, placeLabels } from "./place-labels.js";
+import { type Label, placeLabels, pointsAlong } from "./place-labels.js";
 import type { Point } from "./plane.js";
 import { type Pose, poseOf } from "./poses.js";
 import { rulers } from "./rulers.js";
 import type { PlaceMark } from "./surroundings.js";
-import { element, pathData, textAt } from "./svg.js";
+import { element, pathData } from "./svg.js";
 import { inView, type View } from "./view.js";
 
 export type { ArcPanelInput, ShownFlight } from "./arc-layout.js";
@@ -63,7 +64,7 @@ export function arcPanel(input: ArcPanelInput): ArcPanel {
         marks.map((mark) => sign(mark, toPage(inView(view, mark.place)), view)),
       ),
       ...ruled.body,
-      ...placed.map(written),
+      ...placed.map(labelMarkup),
     ].join("\n"),
     drawn: flights.flatMap(({ drawn }) => drawn.map(({ number }) => number)),
     every: Math.max(...flights.map(({ every }) => every)),
@@ -185,31 +186,11 @@ function obstacles(
     ),
     ...ruled,
   ];
-  return lines.flatMap(dense);
+  return lines.flatMap(pointsAlong);
 }
 
 export function onPage(ring: Float64Array, toPage: ArcLayout["toPage"]): number[] {
   const points: number[] = [];
   for (let i = 0; i < ring.length; i += 2) points.push(...toPage([ring[i], ring[i + 1]]));
   return points;
-}
-
-/** px between points along a line. */
-const APART = 4;
-
-export function dense(line: readonly number[]): number[] {
-  const points: number[] = [];
-  for (let i = 0; i + 3 < line.length; i += 2) {
-    const [dx, dy] = [line[i + 2] - line[i], line[i + 3] - line[i + 1]];
-    const steps = 1 + Math.floor(Math.max(Math.abs(dx), Math.abs(dy)) / APART);
-    for (let k = 0; k < steps; k++) points.push(line[i] + (dx * k) / steps, line[i + 1] + (dy * k) / steps);
-  }
-  return points;
-}
-
-function written({ x, y, lead, at, baseline, text, kind, anchor }: PlacedLabel): string {
-  const leader = lead
-    ? element("path", { class: "lead", d: pathData([[x, y, ...lead]], { decimals: 1 }) })
-    : "";
-  return leader + textAt(at, baseline, text, { class: kind, "text-anchor": anchor });
 }

@@ -58,6 +58,12 @@ export const beside = (drawings: readonly Drawing[], column: number): Drawing =>
   body: drawings.map((drawing, i) => at(column * i, 0, drawing)).join("\n"),
 });
 
+/** Drawings of the same width, two by two. */
+export const inPairs = (drawings: readonly Drawing[], gap: number): Drawing[] =>
+  Array.from({ length: Math.ceil(drawings.length / 2) }, (_, row) =>
+    beside(drawings.slice(2 * row, 2 * row + 2), drawings[0].width + gap),
+  );
+
 export function at(x: number, y: number, { body }: Drawing): string {
   const [right, down] = [Math.round(x), Math.round(y)];
   return right === 0 && down === 0

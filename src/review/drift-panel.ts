@@ -2,17 +2,18 @@
 
 import { multiply } from "../math/quat.js";
 import type { Vec3 } from "../math/vec3.js";
-import { dense, onPage } from "./arc-panel.js";
+import { onPage } from "./arc-panel.js";
 import type { Drawing } from "./drawing.js";
 import type { DriftLayer, DriftPose } from "./drift-layers.js";
 import { thinning } from "./exposures.js";
+import { labelMarkup } from "./label-markup.js";
 import { FONT_SIZE } from "./look.js";
 import { outlineOf } from "./outline.js";
-import { type Label, placeLabels } from "./place-labels.js";
+import { type Label, placeLabels, pointsAlong } from "./place-labels.js";
 import { areaOf, around, type Bounds, NOWHERE, type Point } from "./plane.js";
 import { rulers } from "./rulers.js";
 import type { SheetProp } from "./sheet-input.js";
-import { element, pathData, textAt } from "./svg.js";
+import { element, pathData } from "./svg.js";
 import { inView, type View } from "./view.js";
 
 export interface DriftPanelInput {
@@ -67,15 +68,13 @@ export function driftPanel(input: DriftPanelInput): Drawing {
       ...now.flatMap((layer) => drawLayer(layer, view, toPage, scale, "now")),
       ...before.flatMap((layer) => drawLayer(layer, view, toPage, scale, "before")),
       ...ruled.body,
-      ...placeLabels(labels, frame, drawn, ruled.boxes).map(({ at, baseline, text, kind, anchor }) =>
-        textAt(at, baseline, text, { class: kind, "text-anchor": anchor }),
-      ),
+      ...placeLabels(labels, frame, drawn, ruled.boxes).map(labelMarkup),
     ].join("\n"),
   };
 }
 
 /** Classes of the look. */
-export const DRIFT_LOOK = {
+const DRIFT_LOOK = {
   now: { body: "body", path: "path", spot: "spot" },
   before: { body: "body-before", path: "path-before", spot: "spot-before" },
 } as const;
@@ -168,7 +167,7 @@ const linesOf = (
     const { rings } = outlineOf(prop.solid, multiply(view.rotation, rotation), DETAIL / scale);
     return rings.flatMap((ring) => {
       const points = onPage(ring, ([right, up]) => toPage([x + right, y + up]));
-      return dense([...points, points[0], points[1]]);
+      return pointsAlong([...points, points[0], points[1]]);
     });
   }),
 ];

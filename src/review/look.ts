@@ -54,8 +54,6 @@ const STYLES = {
   ghost: outline(PALE, HAIR, 0.6),
   /** The prop as it once flew, over how it does now: empty and dashed. */
   "body-before": line(SEA, 1.2, { "stroke-dasharray": "4 2.6" }),
-  /** Edges within an outline. */
-  crease: line(FAINT, 0.5),
   /** The centre of mass's way, and a second one beside it. */
   path: line(INK, 1.1),
   "path-before": line(SEA, 1.1, { "stroke-dasharray": "5 3" }),

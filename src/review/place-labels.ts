@@ -36,6 +36,20 @@ export interface TextBox {
   bottom: number;
 }
 
+/** px from point to point along a line. */
+const APART = 4;
+
+/** Points of a line of straight pieces, x y x y… px, so near to each other that no text stands between them unseen: for `drawn` below. */
+export function pointsAlong(line: readonly number[]): number[] {
+  const points: number[] = [];
+  for (let i = 0; i + 3 < line.length; i += 2) {
+    const [dx, dy] = [line[i + 2] - line[i], line[i + 3] - line[i + 1]];
+    const steps = 1 + Math.floor(Math.max(Math.abs(dx), Math.abs(dy)) / APART);
+    for (let k = 0; k < steps; k++) points.push(line[i] + (dx * k) / steps, line[i + 1] + (dy * k) / steps);
+  }
+  return points;
+}
+
 /** Room between two texts, px. */
 const AIR = 2;
 const DIRECTIONS = [0, 1, 2, 3, 4, 5, 6, 7];

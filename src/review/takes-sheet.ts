@@ -4,11 +4,11 @@ import { arcsOver, scaleBar } from "./arcs-over.js";
 import { pathOf } from "./course.js";
 import { at, type Drawing, stacked, textBlock } from "./drawing.js";
 import { counted, seconds, turnsText } from "./figures.js";
+import { framed, heading, INNER } from "./sheet-frame.js";
 import type { ThrowSheetInput } from "./sheet-input.js";
 import { arcScale, CELL, type SmallTake, smallPicture, smallTake } from "./small-take.js";
-import { element, sheetSvg } from "./svg.js";
-import { EDGE, heading, INNER, WIDTH } from "./throw-sheet.js";
-import { courseOf, outOfPlane, sideView, viewFromAbove } from "./view.js";
+import { element } from "./svg.js";
+import { courseOf, leavesPlane, sideView, viewFromAbove } from "./view.js";
 
 export interface TakesSheetInput {
   /** Whose takes they are: the throw file, or the folder. */
@@ -44,14 +44,7 @@ export function takesSheet({ title, throws }: TakesSheetInput): string {
       ? ` The first ${counted(taken)} of ${counted(all)} takes are shown${shown.length < groups.length ? `, of the first ${counted(shown.length)} throws` : ""}.`
       : "";
   const sentence = `${counted(all)} ${all === 1 ? "take" : "takes"} of ${counted(groups.length)} ${groups.length === 1 ? "throw" : "throws"}. On the left the ways of the centre of mass of all takes over each other, with a cross where each ends; on the right each take from the side, thrown from left to right, and below its arc four poses from release to arrival, larger and in place.${left}`;
-  const drawing = stacked([heading(title, "all takes", sentence), ...drawings], GAP);
-  return sheetSvg({
-    width: WIDTH,
-    height: Math.ceil(drawing.height + 2 * EDGE),
-    title: `${title}: all takes`,
-    description: sentence,
-    body: [at(EDGE, EDGE, drawing)],
-  });
+  return framed([heading(title, "all takes", sentence), ...drawings], GAP, `${title}: all takes`, sentence);
 }
 
 const takeTotal = (groups: readonly Group[]) => groups.reduce((sum, { total }) => sum + total, 0);
@@ -165,11 +158,7 @@ function overOf(takes: readonly SmallTake[]): Drawing {
   const ahead = courseOf(paths[0]);
   const side = arcsOver(travelling, sideView(ahead), OVER.width, OVER.height);
   const all = paths.flat();
-  const spans = [0, 1, 2].map((i) => {
-    const values = all.map((place) => place[i]);
-    return values.reduce((a, b) => Math.max(a, b)) - values.reduce((a, b) => Math.min(a, b));
-  });
-  if (outOfPlane(all, ahead) <= LEAVES_PLANE * Math.max(...spans)) return side;
+  if (!leavesPlane(all, ahead, LEAVES_PLANE)) return side;
   return stacked([side, arcsOver(travelling, viewFromAbove(ahead), OVER.width, OVER.height)], 6);
 }
 

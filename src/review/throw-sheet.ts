@@ -3,19 +3,16 @@
 import type { Vec3 } from "../math/vec3.js";
 import { type ArcPanel, arcPanel } from "./arc-panel.js";
 import { pathOf, type Stretch, stretchesOf } from "./course.js";
-import { at, beside, type Drawing, stacked, textBlock } from "./drawing.js";
+import { inPairs, stacked, textBlock } from "./drawing.js";
 import { type Exposure, exposuresOf } from "./exposures.js";
 import { capital, counted } from "./figures.js";
 import { type Turning, turningOf } from "./picked-axis.js";
+import { framed, heading, INNER } from "./sheet-frame.js";
 import type { SheetProp, SheetTake, ThrowSheetInput } from "./sheet-input.js";
-import { sheetSvg, textAt } from "./svg.js";
 import { courseWords, throwSentence } from "./throw-sentence.js";
 import { turningRows } from "./turning-rows.js";
-import { courseOf, outOfPlane, sideView, type View, viewFromAbove } from "./view.js";
+import { courseOf, leavesPlane, sideView, type View, viewFromAbove } from "./view.js";
 
-export const WIDTH = 960;
-export const EDGE = 28;
-export const INNER = WIDTH - 2 * EDGE;
 /** Greatest height of what is drawn of one flight alone, and of one beside others, px. */
 const TALL = 440;
 const SMALL = 250;
@@ -44,21 +41,12 @@ export function throwSheet({ title, prop, takes, takeCount = takes.length }: Thr
   const panels = arcs(prop, take, told);
   const onArc = new Set(panels.flatMap(({ drawn }) => drawn));
   const which = `${take.name}${takeCount > 1 ? `, one of ${counted(takeCount)} takes` : ""}`;
-  const drawing = stacked(
-    [
-      heading(title, which, sentence),
-      ...(panels.length === 1 ? panels : pairs(panels)),
-      ...turningRows(prop, told, onArc, INNER),
-    ],
-    GAP,
-  );
-  return sheetSvg({
-    width: WIDTH,
-    height: Math.ceil(drawing.height + 2 * EDGE),
-    title: `${title}: ${take.name}`,
-    description: sentence,
-    body: [at(EDGE, EDGE, drawing)],
-  });
+  const parts = [
+    heading(title, which, sentence),
+    ...(panels.length === 1 ? panels : inPairs(panels, GAP)),
+    ...turningRows(prop, told, onArc, INNER),
+  ];
+  return framed(parts, GAP, `${title}: ${take.name}`, sentence);
 }
 
 function tellEach(prop: SheetProp, take: SheetTake): Told[] {
@@ -69,15 +57,6 @@ function tellEach(prop: SheetProp, take: SheetTake): Told[] {
     const ahead = courseOf(pathOf(take.motion, stretch, 16));
     return { stretch, exposures, ahead, view: sideView(ahead), turning: turningOf(prop, take, stretch) };
   });
-}
-
-export function heading(title: string, which: string, sentence: string): Drawing {
-  const line: Drawing = {
-    width: INNER,
-    height: 22,
-    body: `${textAt(0, 14, title, { class: "title" })}\n${textAt(INNER, 14, which, { class: "faint", "text-anchor": "end" })}`,
-  };
-  return stacked([line, textBlock([{ text: sentence, look: "sentence" }], INNER)], 4);
 }
 
 interface ArcInput {
@@ -92,7 +71,7 @@ function arcs(prop: SheetProp, take: SheetTake, told: readonly Told[]): ArcPanel
   const [{ ahead }] = flown;
   const inputs: ArcInput[] = flown.map((one) => ({ told: [one], view: one.view }));
   const path = flown.flatMap(({ stretch }) => pathOf(take.motion, stretch, 24));
-  if (leavesPlane(path, ahead)) inputs.push({ told: flown, view: viewFromAbove(ahead) });
+  if (leavesPlane(path, ahead, LEAVES_PLANE)) inputs.push({ told: flown, view: viewFromAbove(ahead) });
   if (inputs.length === 1) return [captioned(draw(prop, take, inputs[0], INNER, TALL), inputs[0], take)];
   const width = INNER / 2 - GAP / 2;
   const most = Math.min(...inputs.map((input) => draw(prop, take, input, width, SMALL).scale));
@@ -148,15 +127,3 @@ function signs(told: readonly Told[], view: View): string {
 }
 
 const ordinal = (n: number): string => (n === 2 ? "2nd" : n === 3 ? "3rd" : `${n}th`);
-
-const pairs = (panels: readonly Drawing[]): Drawing[] =>
-  Array.from({ length: Math.ceil(panels.length / 2) }, (_, row) =>
-    beside(panels.slice(2 * row, 2 * row + 2), INNER / 2 + GAP / 2),
-  );
-
-function leavesPlane(path: readonly Vec3[], ahead: Vec3): boolean {
-  const spans = [0, 1, 2].map(
-    (i) => Math.max(...path.map((place) => place[i])) - Math.min(...path.map((place) => place[i])),
-  );
-  return outOfPlane(path, ahead) > LEAVES_PLANE * Math.max(...spans);
-}

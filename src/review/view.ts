@@ -45,8 +45,14 @@ export function courseOf(places: readonly Vec3[]): Vec3 {
 /** Of its size: a motion that goes less far to one side goes up and down. */
 const NO_COURSE = 0.02;
 
-/** Greatest distance of the places from the upright plane along the course through the first of them, m. */
-export function outOfPlane(places: readonly Vec3[], ahead: Vec3): number {
+/** Whether places leave the upright plane along the course, through the first of them, by more than a share of their greatest extent along x, y or z. */
+export function leavesPlane(places: readonly Vec3[], ahead: Vec3, share: number): boolean {
   const normal = cross(ahead, UP);
-  return places.reduce((most, place) => Math.max(most, Math.abs(dot(subtract(place, places[0]), normal))), 0);
+  const off = (place: Vec3) => Math.abs(dot(subtract(place, places[0]), normal));
+  const extent = (axis: number) => {
+    const values = places.map((place) => place[axis]);
+    return values.reduce((a, b) => Math.max(a, b)) - values.reduce((a, b) => Math.min(a, b));
+  };
+  const most = places.reduce((greatest, place) => Math.max(greatest, off(place)), 0);
+  return most > share * Math.max(extent(0), extent(1), extent(2));
 }

@@ -1,10 +1,11 @@
 import { kindOf } from "../prop/kind.js";
 import type { Prop } from "../prop/prop.js";
 import { throwAboutInShort } from "./axis-words.js";
-import { type Drawing, stacked, textBlock } from "./drawing.js";
+import { at, type Drawing, stacked, textBlock } from "./drawing.js";
 import { FONT_SIZE } from "./look.js";
 import type { Solid } from "./outline.js";
-import { principalViews, spotsBeyond } from "./principal-views.js";
+import { principalViews } from "./principal-views.js";
+import { spotsBeyond } from "./spots.js";
 import { element, pathData, sheetSvg, textAt } from "./svg.js";
 import { wrapped } from "./text-size.js";
 
@@ -30,7 +31,7 @@ export function weighSheet(title: string, props: readonly WeighSheetProp[]): str
     height: Math.ceil(all.height) + 2 * MARGIN,
     title,
     description: props.map(({ prop }) => described(prop)).join(" "),
-    body: [element("g", { transform: `translate(${MARGIN} ${MARGIN})` }, `\n${all.body}\n`)],
+    body: [at(MARGIN, MARGIN, all)],
   });
 }
 
