@@ -78,7 +78,11 @@ export async function servePreview(
     }
     switch (path) {
       case "/":
+        source.opening?.();
         return { type: "text/html; charset=utf-8", content: servedPage(parts, source.title) };
+      case "/drawn":
+        source.drawn?.();
+        return { type: "text/plain; charset=utf-8", content: "" };
       case "/page.js":
         return { type: "text/javascript; charset=utf-8", content: parts.script };
       case "/page.css":

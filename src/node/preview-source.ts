@@ -11,5 +11,9 @@ export interface PreviewSource {
   file(name: string): Promise<Uint8Array | undefined>;
   /** Told when `data()` says something new. */
   onChange(listener: () => void): void;
+  /** A page is being opened: what it does not show at first can wait. */
+  opening?(): void;
+  /** It has drawn its first picture. */
+  drawn?(): void;
   close(): Promise<void>;
 }

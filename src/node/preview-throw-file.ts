@@ -2,6 +2,7 @@
 
 import { basename, resolve } from "node:path";
 import { emptyPage, type PageData, type PageError, type PageThrow } from "../review/page-data.js";
+import { Pause } from "./pause.js";
 import type { BakedPreview, OpenedPreview } from "./preview-baker.js";
 import type { PreviewSource } from "./preview-source.js";
 import { PreviewThread } from "./preview-thread.js";
@@ -33,6 +34,7 @@ export class ThrowFilePreview implements PreviewSource {
   private changed?: string[];
   private looking?: string;
   private isRunning = false;
+  private readonly pause = new Pause();
 
   /**
    * Starts to bake and to watch.
@@ -56,6 +58,7 @@ export class ThrowFilePreview implements PreviewSource {
 
   async data(looking?: string): Promise<PageData> {
     if (looking !== undefined) this.looking = looking;
+    this.pause.wake();
     await this.isOpened;
     const head = this.opened?.head ?? emptyPage(this.title);
     const [error] = this.errors.values();
@@ -77,14 +80,24 @@ export class ThrowFilePreview implements PreviewSource {
     this.listeners.push(listener);
   }
 
+  opening(): void {
+    this.pause.begin();
+  }
+
+  drawn(): void {
+    this.pause.end();
+  }
+
   async close(): Promise<void> {
     this.watch.close();
+    this.pause.end();
     await this.thread.close();
   }
 
   private reopen(paths: readonly string[]): void {
     this.changed = [...(this.changed ?? []), ...paths];
     this.thread.abandon();
+    this.pause.wake();
     if (!this.isRunning) this.run().catch(this.onFailure);
   }
 
@@ -94,8 +107,11 @@ export class ThrowFilePreview implements PreviewSource {
     for (;;) {
       const next = this.nextThrow();
       if (this.changed) await this.open(this.changed);
-      else if (next !== undefined) await this.bake(next);
-      else break;
+      else if (next === undefined) break;
+      else if (this.canWait(next)) {
+        await this.pause.wait();
+        continue;
+      } else await this.bake(next);
       for (const listener of this.listeners) listener();
     }
     this.isRunning = false;
@@ -123,6 +139,11 @@ export class ThrowFilePreview implements PreviewSource {
     this.errors.delete(name);
     this.props = { ...this.props, ...props };
     this.baked.set(name, { shown: { ...shown, stamp: this.stampOf(name) }, files });
+  }
+
+  /** A page that is being opened shows another one first. */
+  private canWait(name: string): boolean {
+    return this.pause.isOn && this.baked.size > 0 && name !== this.looking;
   }
 
   /** What is looked at first, then in the file's order. */

@@ -278,6 +278,28 @@ describe("a preview", () => {
     }
   });
 
+  it("leaves the machine to a page that is being opened once it has a throw to show, until it has drawn", async () => {
+    const other = new Workshop(yard());
+    const preview = await startPreview(program, [other.path]);
+    try {
+      await fetch(preview.url);
+      const count = ({ throws }: PageData) => throws.filter(({ stamp }) => stamp !== undefined).length;
+      expect(count(await until((now) => count(now) > 0, preview))).toBe(1);
+      // the other one takes some tens of milliseconds
+      await new Promise((done) => setTimeout(done, 1000));
+      expect(count(await data(undefined, preview))).toBe(1);
+      await fetch(`${preview.url}drawn`);
+      await until(isBaked, preview);
+      // whoever never draws is not waited for
+      await fetch(preview.url);
+      other.save(yard(4));
+      await until((now) => isBaked(now) && arrivalOf(now) > 3.5, preview);
+    } finally {
+      await preview.stop();
+      other.remove();
+    }
+  });
+
   it("of a file that is wrong from the start waits for it to be right", async () => {
     const other = new Workshop("props: {");
     const preview = await startPreview(program, [other.path]);

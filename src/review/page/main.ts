@@ -53,17 +53,20 @@ async function open(source: Source): Promise<void> {
   );
   dark.addEventListener("change", () => stage.setDark(dark.matches));
   new ResizeObserver(() => stage.resize()).observe(canvas);
-  build(app, canvas, voice.element, source.live);
+  build(app, canvas, voice.element, source);
   follow(app, source);
   expose(app);
 }
 
-function build(app: App, canvas: HTMLCanvasElement, voice: HTMLElement, live: boolean): void {
+function build(app: App, canvas: HTMLCanvasElement, voice: HTMLElement, source: Source): void {
   const keys = keysPanel(app);
   const verdicts = verdictBar(app);
   const numbers = facts(app);
   const time = timeLine(app);
+  let isFirst = true;
   const drawn = () => {
+    if (isFirst) source.drawn();
+    isFirst = false;
     numbers.drawn();
     app.strips.start();
   };
@@ -87,7 +90,7 @@ function build(app: App, canvas: HTMLCanvasElement, voice: HTMLElement, live: bo
     numbers.element,
   );
   document.body.prepend(
-    header(app, live, () => keys.showModal()),
+    header(app, source.live, () => keys.showModal()),
     banner(app),
   );
   document.body.append(keys, voice);

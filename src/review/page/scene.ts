@@ -6,7 +6,7 @@ import { el } from "./dom.js";
 import { VIEWS } from "./scene-tools.js";
 import { emptyWords, propOf, type State, takeOf, throwOf } from "./state.js";
 
-/** @param shown told when another throw or other takes stand on the stage, or none can */
+/** @param shown told when another throw or other takes are in the picture, or none can be */
 export function scene(app: App, canvas: HTMLCanvasElement, shown: () => void): HTMLElement {
   const { store, stage, player, files } = app;
   const caption = el("p", { class: "caption" });
@@ -64,7 +64,11 @@ export function scene(app: App, canvas: HTMLCanvasElement, shown: () => void): H
     const data = throwOf(state);
     const prop = propOf(state, data);
     const turn = ++wanted;
-    if (!data || !prop || data.takes.length === 0) return shown();
+    if (!data || !prop || data.takes.length === 0) {
+      const isComing = data && data.stamp === undefined && data.unheld.length === 0 && !state.data.error;
+      if (!isComing) shown();
+      return;
+    }
     try {
       await stage.show(data, prop, (name) => files.get(name));
       if (turn !== wanted) return;
@@ -90,8 +94,14 @@ export function scene(app: App, canvas: HTMLCanvasElement, shown: () => void): H
     if (first < 0) return;
     await stage.select(first, second < 0 || second === first ? undefined : second);
     stage.time = player.time;
-    shown();
+    afterPicture(shown);
   }
 
   return el("div", { class: "scene" }, canvas, caption, waiting);
+}
+
+/** A page that is not seen draws none. */
+function afterPicture(then: () => void): void {
+  if (document.hidden) then();
+  else requestAnimationFrame(() => setTimeout(then, 0));
 }

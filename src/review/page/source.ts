@@ -10,6 +10,8 @@ export interface Source {
   data(looking?: string): Promise<PageData>;
   /** A whole .glb by the name that `PageTake.file` gives. */
   file(name: string): Promise<ArrayBuffer>;
+  /** Tells the server that the first picture is drawn: until then it leaves the machine to the page. */
+  drawn(): void;
   /** Told when `data()` would say something new. */
   onChange(listener: () => void): void;
   /** Told when the server goes, and when it is there again. */
@@ -30,6 +32,7 @@ export function serverSource(): Source {
       return (await fetched(`data.json${query}`)).json();
     },
     file: async (name) => (await fetched(`files/${encodeURIComponent(name)}`)).arrayBuffer(),
+    drawn: () => void fetched("drawn").catch(() => undefined),
     onChange: (listener) => events.addEventListener("change", () => listener()),
     onConnection(listener) {
       events.addEventListener("open", () => listener(true));
@@ -57,6 +60,7 @@ export function embeddedSource(): Source {
       const text = atob(element.textContent ?? "");
       return Uint8Array.from(text, (character) => character.charCodeAt(0)).buffer;
     },
+    drawn: () => undefined,
     onChange: () => undefined,
     onConnection: () => undefined,
   };

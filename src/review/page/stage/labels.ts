@@ -111,7 +111,8 @@ export class Labels {
     if (known) return known;
     const ratio = Math.max(2, Math.min(3, devicePixelRatio));
     const canvas = document.createElement("canvas");
-    const context = canvas.getContext("2d")!;
+    // kept in plain memory, as it is copied into a texture once
+    const context = canvas.getContext("2d", { willReadFrequently: true })!;
     const font = `${SIZE}px system-ui, sans-serif`;
     context.font = font;
     const width = Math.ceil(context.measureText(text).width) + 2 * MARGIN;
