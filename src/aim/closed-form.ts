@@ -70,7 +70,7 @@ export function polhodeThrough(body: ReducedBody, m: Vec3): Polhode {
 }
 
 /** Sine and cosine of the amplitude θ (sn = sin θ, cn = cos θ) at the point m of the polhode; θ grows with time. */
-export function amplitudeAt(body: ReducedBody, polhode: Polhode, m: Vec3): { sin: number; cos: number } {
+function amplitudeAt(body: ReducedBody, polhode: Polhode, m: Vec3): { sin: number; cos: number } {
   // A_b and A_c but for a common factor: a pure spin, where both are 0, counts as θ = 0
   const b = m[1] * Math.sqrt(polhode.own === 2 ? body.d23 : body.d12);
   const c = polhode.sign * m[polhode.other] * Math.sqrt(body.d13);

@@ -10,7 +10,7 @@ const NEAR = 1e-4;
 /** Moments this near to each other, as a share, are one. */
 const ALIKE = 1e-9;
 
-export const isSphere = (body: ReducedBody): boolean => body.d13 <= ALIKE;
+const isSphere = (body: ReducedBody): boolean => body.d13 <= ALIKE;
 
 /**
  * The name of the family of exact solutions that the end pose belongs to, or lies within 1e-4 rad of: poses that leave the ellipsoid of inertia

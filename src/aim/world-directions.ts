@@ -3,8 +3,7 @@
 import { RequestError } from "../math/request-error.js";
 import { cross, length, negate, normalize, type Vec3 } from "../math/vec3.js";
 
-export const WORLD_WORDS = ["up", "down", "ahead", "back", "left", "right", "flight"] as const;
-export type WorldWord = (typeof WORLD_WORDS)[number];
+export const WORLD_DIRECTIONS = ["up", "down", "ahead", "back", "left", "right", "flight"] as const;
 
 export const UP: Vec3 = [0, 1, 0];
 
@@ -42,7 +41,7 @@ export function worldDirection(direction: string | Vec3, course: ThrowCourse): V
       throw new RequestError(
         [],
         `no direction of the world is called "${direction}"`,
-        `one of ${WORLD_WORDS.join(", ")}`,
+        `one of ${WORLD_DIRECTIONS.join(", ")}`,
       );
   }
 }

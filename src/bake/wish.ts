@@ -4,7 +4,7 @@ import type { ArrivalFacing, ArrivalWish } from "../aim/arrival.js";
 import { type DirectionPair, facingRotation } from "../aim/facing.js";
 import type { LaunchWish } from "../aim/launch.js";
 import { defaultWobble, spinAtRelease } from "../aim/spin.js";
-import { type ThrowCourse, UP, WORLD_WORDS, worldDirection } from "../aim/world-directions.js";
+import { type ThrowCourse, UP, WORLD_DIRECTIONS, worldDirection } from "../aim/world-directions.js";
 import type {
   DrawnArrivalFacing,
   DrawnFacing,
@@ -253,7 +253,7 @@ function spinAxis(axis: string | Vec3, prop: Prop, pose: Quat, course: ThrowCour
 }
 
 const isWorldWord = (axis: string | Vec3): axis is string =>
-  typeof axis === "string" && (WORLD_WORDS as readonly string[]).includes(axis);
+  typeof axis === "string" && (WORLD_DIRECTIONS as readonly string[]).includes(axis);
 
 /** Puts the key that was being answered in front of an error's path. */
 function within<T>(path: readonly (string | number)[], answer: () => T): T {

@@ -4,6 +4,7 @@ import type { TakeWarning, ThrowNotes } from "../bake/notes.js";
 import type { PropRecord } from "../record/clip-record.js";
 import type { ClipFigures } from "../record/plain-take.js";
 import { MISS_METRES, MISS_RADIANS, type Span, type ThrowSummary } from "../record/throw-summary.js";
+import { counted } from "./counted.js";
 import { span, table } from "./table.js";
 import { takeList } from "./take-list.js";
 
@@ -70,5 +71,3 @@ function whatIsIn(made: readonly ThrowSummary[]): string {
     ...(chains > 0 ? [counted(chains, "chain")] : []),
   ].join(" and ");
 }
-
-const counted = (count: number, what: string) => `${count} ${what}${count === 1 ? "" : "s"}`;

@@ -7,6 +7,7 @@ import { type OutputFile, writeFiles } from "../node/output-folder.js";
 import { spareInputs } from "../node/spare-inputs.js";
 import { openThrowFile } from "../node/throw-file.js";
 import { takeTable } from "../record/take-table.js";
+import { counted } from "./counted.js";
 import { ExitCode } from "./exit-code.js";
 import { positiveNumber } from "./positive-number.js";
 import { progress } from "./progress.js";
@@ -61,7 +62,8 @@ Example:
       await writeFiles(output, files);
       for (const { name, reason } of baked.unheld)
         process.stderr.write(`${name} is left out: ${reason.message}\n`);
-      const count = `${files.length} ${files.length === 1 ? "table" : "tables"}`;
-      process.stdout.write(`${count} written to ${output}, ${rate ?? file.frameRate} rows a second\n`);
+      process.stdout.write(
+        `${counted(files.length, "table")} written to ${output}, ${rate ?? file.frameRate} rows a second\n`,
+      );
       if (baked.unheld.length > 0) answer(ExitCode.checkFailed);
     });

@@ -26,7 +26,7 @@ export function progress(): { update: (done: number, total: number) => void; end
 }
 
 /** ", 120 a second, 2 min left", once there is something to go by. */
-export function paceText(done: number, left: number, seconds: number): string {
+function paceText(done: number, left: number, seconds: number): string {
   if (done <= 0 || seconds < SETTLED) return "";
   const rate = done / seconds;
   return `, ${rate >= 10 ? Math.round(rate) : rate.toPrecision(2)} a second, ${timeText(left / rate)} left`;

@@ -11,6 +11,7 @@ import type { ClipRecord, TakesRecord } from "../record/clip-record.js";
 import { fallsOtherwise } from "../record/compare-host.js";
 import { type ClipFile, clipSheets } from "../review/clip-sheets.js";
 import { motionOfRecord } from "../review/page-of-record.js";
+import { counted } from "./counted.js";
 import { ExitCode } from "./exit-code.js";
 
 /** Whether a path names a glTF file or a folder, and no throw file. */
@@ -47,7 +48,7 @@ export async function strobeBaked(path: string, output: string): Promise<number>
     inputs,
   );
   await writeFiles(output, sheets);
-  process.stdout.write(`${sheets.length} ${sheets.length === 1 ? "sheet" : "sheets"} written to ${output}\n`);
+  process.stdout.write(`${counted(sheets.length, "sheet")} written to ${output}\n`);
   return ExitCode.done;
 }
 

@@ -6,6 +6,7 @@ import { writeFiles } from "../node/output-folder.js";
 import { spareInputs } from "../node/spare-inputs.js";
 import { openThrowFile } from "../node/throw-file.js";
 import { sheetsInput, sheetsOf } from "../review/sheets.js";
+import { counted } from "./counted.js";
 import { ExitCode } from "./exit-code.js";
 import { progress } from "./progress.js";
 import { isBaked, strobeBaked } from "./strobe-baked.js";
@@ -63,6 +64,6 @@ async function strobeThrows(path: string, { output, only, takes }: Options): Pro
     inputs,
   );
   await writeFiles(output, sheets);
-  process.stdout.write(`${sheets.length} sheets written to ${output}\n`);
+  process.stdout.write(`${counted(sheets.length, "sheet")} written to ${output}\n`);
   return baked.unheld.length > 0 ? ExitCode.checkFailed : ExitCode.done;
 }

@@ -20,6 +20,7 @@ import { formatRecord } from "../record/format.js";
 import { recordOf } from "../record/record-of.js";
 import { shapesOfProps } from "../review/drift-shapes.js";
 import { type NamedSheet, sheetsInput, sheetsOf } from "../review/sheets.js";
+import { counted } from "./counted.js";
 import {
   type Compared,
   refuseCompared,
@@ -77,8 +78,8 @@ export const verifyCommand = (answer: (code: number) => void) =>
         options.json
           ? formatRecord({ drift: isDrift, rows: drifts })
           : isDrift
-            ? `${driftLines(drifts).join("\n")}\n\n${title}: ${drifts.length} ${drifts.length === 1 ? "difference" : "differences"}\n`
-            : `${title}: no drift in ${checked.clips.length} ${checked.clips.length === 1 ? "take" : "takes"}\n`,
+            ? `${driftLines(drifts).join("\n")}\n\n${title}: ${counted(drifts.length, "difference")}\n`
+            : `${title}: no drift in ${counted(checked.clips.length, "take")}\n`,
       );
       if (!isDrift) return;
       for (const folder of new Set([output, against]))

@@ -18,7 +18,7 @@ export async function decodeAccessors(
   if (total > greatest)
     throw new ModelError(
       model.name,
-      `its meshes state ${total} vertices and indices`,
+      `states ${total} vertices, indices and keys`,
       `of a file of this size at most ${greatest} are read`,
     );
   const read = new Set(wanted.flatMap((index) => viewsOf(accessors[index])));

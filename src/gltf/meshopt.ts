@@ -20,7 +20,7 @@ export interface MeshoptView {
 const GREATEST_UNPACKED = 1 << 27;
 
 /** How the view is compressed; undefined where it is not. */
-export function meshoptView({ bufferViews = [] }: GltfJson, view: number): MeshoptView | undefined {
+function meshoptView({ bufferViews = [] }: GltfJson, view: number): MeshoptView | undefined {
   const { extensions = {} } = bufferViews[view];
   return MESHOPT.map((name) => extensions[name] as MeshoptView | undefined).find(Boolean);
 }

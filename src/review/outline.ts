@@ -63,7 +63,7 @@ function withoutSpecks(rings: number[][]): number[][] {
 }
 
 /** Counted positive counter-clockwise. */
-export function ringArea(ring: ArrayLike<number>): number {
+function ringArea(ring: ArrayLike<number>): number {
   let twice = 0;
   for (let i = 0; i < ring.length; i += 2) {
     const j = (i + 2) % ring.length;

@@ -1,5 +1,6 @@
 /** Orientations and directions as they are written; which points a prop has is checked later, by `points.ts`. */
 
+import { WORLD_DIRECTIONS } from "../aim/world-directions.js";
 import { cross, length, type Vec3 } from "../math/vec3.js";
 import { shown } from "./errors.js";
 import { fields } from "./fields.js";
@@ -15,7 +16,6 @@ import {
   type PropDirection,
   type SpreadQuat,
   type SpreadVector,
-  WORLD_DIRECTIONS,
   type WorldDirection,
   type WorldDirectionName,
 } from "./types.js";

@@ -1,9 +1,10 @@
 /** What a throw names: points of its prop, and directions of the world that must be known. */
 
+import { WORLD_DIRECTIONS } from "../aim/world-directions.js";
 import { shown } from "./errors.js";
 import type { Tell } from "./form.js";
 import { nearest, nearestHint } from "./nearest.js";
-import { isSpread, PROP_DIRECTIONS, type ThrowEntry, WORLD_DIRECTIONS } from "./types.js";
+import { isSpread, PROP_DIRECTIONS, type ThrowEntry } from "./types.js";
 
 type KeyPart = string | number;
 

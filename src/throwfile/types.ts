@@ -4,8 +4,9 @@
  * converted. `like` is merged, keys with a plain default are filled in; an absent key is `undefined`.
  */
 
+import type { WORLD_DIRECTIONS } from "../aim/world-directions.js";
 import type { Vec3 } from "../math/vec3.js";
-import type { Shape } from "../prop/shape.js";
+import type { Shape } from "../prop/shape-kind.js";
 
 /** One of these, evenly; or take n gets the n-th, round and round. Never empty. */
 export type Choice<T> = { readonly pick: readonly T[] } | { readonly each: readonly T[] };
@@ -50,8 +51,6 @@ export type PropDirection = string | SpreadVector;
 export type WorldDirection = WorldDirectionName | SpreadVector;
 
 export const PROP_DIRECTIONS = ["long", "middle", "short", "x", "y", "z"] as const;
-export const WORLD_DIRECTIONS = ["up", "down", "ahead", "back", "left", "right", "flight"] as const;
-export type PropDirectionName = (typeof PROP_DIRECTIONS)[number];
 export type WorldDirectionName = (typeof WORLD_DIRECTIONS)[number];
 
 /** [direction of the prop, direction of the world] */

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { WORLD_WORDS, worldDirection } from "../../src/aim/world-directions.js";
+import { WORLD_DIRECTIONS, worldDirection } from "../../src/aim/world-directions.js";
 import { RequestError } from "../../src/math/request-error.js";
 import { cross, dot, length, type Vec3 } from "../../src/math/vec3.js";
 
@@ -34,7 +34,7 @@ describe("the words for directions of the world", () => {
   });
 
   it("are unit vectors all, and so is a vector of any length", () => {
-    for (const word of WORLD_WORDS) expect(length(at(word))).toBeCloseTo(1, 15);
+    for (const word of WORLD_DIRECTIONS) expect(length(at(word))).toBeCloseTo(1, 15);
     expect(worldDirection([0, 0, -20], {})).toEqual([0, 0, -1]);
   });
 });
