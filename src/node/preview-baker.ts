@@ -1,6 +1,6 @@
 /** Bakes a throw file for the page throw by throw, each only when what it is made of has changed. */
 
-import { dirname, join, resolve } from "node:path";
+import { dirname, resolve } from "node:path";
 import { bake } from "../bake/bake.js";
 import type { ModelSource } from "../bake/props.js";
 import { ModelError } from "../gltf/model.js";
@@ -106,7 +106,7 @@ export class PreviewBaker {
 
   private inputs(file: ThrowFile): string[] {
     const named = [...file.props.values()].flatMap(({ model }) =>
-      model === undefined ? [] : [resolve(join(dirname(this.path), model))],
+      model === undefined ? [] : [resolve(dirname(this.path), model)],
     );
     const read = [...this.models.values()].flatMap(({ paths }) => paths);
     return [...new Set([resolve(this.path), ...named, ...read])];

@@ -1,7 +1,7 @@
 /** A throw file on disk and the models it names. */
 
 import { readFile, stat } from "node:fs/promises";
-import { dirname, join, resolve } from "node:path";
+import { dirname, resolve } from "node:path";
 import type { ModelSource } from "../bake/props.js";
 import { RequestError } from "../math/request-error.js";
 import { parseThrowFile } from "../throwfile/parse.js";
@@ -30,7 +30,7 @@ export function openedText(path: string, text: string): OpenedThrowFile {
     text,
     file: parseThrowFile(path, text),
     models: async (model) => {
-      const read = await readModelFile(join(dirname(path), model), model);
+      const read = await readModelFile(resolve(dirname(path), model), model);
       for (const file of read.paths) inputs.add(file);
       return read;
     },
