@@ -22,11 +22,11 @@ import { type BatchHeader, giveFiles, openStaging, partsIn, type Staging, writeW
 import { TextFile } from "./text-file.js";
 import type { OpenedThrowFile } from "./throw-file.js";
 
-export interface FolderOptions extends PlanOptions, Pick<BatchOptions, "jobs" | "signal" | "onTakes"> {
+export interface FolderOptions
+  extends PlanOptions,
+    Pick<BatchOptions, "jobs" | "signal" | "onTakes" | "onNote"> {
   /** Goes on from a run that was stopped. */
   resume?: boolean;
-  /** Told what should be known before the takes are made. */
-  onNote?: (text: string) => void;
   /** Draws THROW.svg of each throw and chain, and takes.svg: not of a share, nor of some of a throw's takes. */
   sheets?: boolean;
   /** Gets the record of these takes. */

@@ -17,6 +17,8 @@ export interface BatchOptions {
   signal: AbortSignal;
   /** Told as takes are done. */
   onTakes?: (done: number, total: number) => void;
+  /** Told what should be known before the takes are made. */
+  onNote?: (text: string) => void;
   /** Files of several takes are there already. */
   hasFiles?: boolean;
 }
@@ -41,7 +43,7 @@ export async function* batch(
   opened: OpenedThrowFile,
   props: ReadonlyMap<string, LoadedProp>,
   plan: readonly Planned[],
-  { jobs, signal, onTakes, hasFiles = false }: BatchOptions,
+  { jobs, signal, onTakes, onNote, hasFiles = false }: BatchOptions,
 ): AsyncGenerator<MadePart> {
   const { file } = opened;
   const pieces = piecesOf(file, plan);
@@ -54,6 +56,7 @@ export async function* batch(
     { jobs, takes, pieces: open.length },
     () => workerOf(context, opened, props),
     () => signal.aborted,
+    onNote,
   );
   let done = total - takes;
   onTakes?.(done, total);

@@ -22,16 +22,21 @@ export interface Workers {
  * @param own makes a worker of this very thread
  * @param jobs threads asked for; without, as many as there are cores and as the takes are worth
  * @param isStopped asked between takes, where this very thread does the work
+ * @param onNote told where fewer threads do it than were asked for
  */
 export function workersOf(
   context: BatchContext,
   { jobs, takes, pieces }: { jobs?: number; takes: number; pieces: number },
   own: () => Worker,
   isStopped: () => boolean,
+  onNote: (text: string) => void = () => undefined,
 ): Workers {
   const wanted = jobs ?? Math.min(availableParallelism(), Math.floor(takes / WORTH_A_THREAD));
   const threads = Math.min(wanted, pieces);
-  return threads > 1 && existsSync(SCRIPT) ? pool(context, threads) : thisThread(own(), isStopped);
+  if (threads > 1 && existsSync(SCRIPT)) return pool(context, threads);
+  if (threads > 1 && jobs !== undefined)
+    onNote(`one thread does the work: ${SCRIPT} is not there to be run by more`);
+  return thisThread(own(), isStopped);
 }
 
 /** By way of the rooms' common folder: right where all is bundled into a file of `cli` too. Run from its sources the program has no such file, and one thread. */

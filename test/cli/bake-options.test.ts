@@ -1,7 +1,7 @@
 import { existsSync, readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
 import type { TakesRecord } from "../../src/record/clip-record.js";
-import { run, Workplace } from "./folder.js";
+import { run, THROWS, Workplace } from "./folder.js";
 
 // What comes out of an option is what was asked for; exit codes: the project's own choice.
 
@@ -157,5 +157,18 @@ describe("bake --only", () => {
     expect(code).toBe(2);
     expect(err).toMatch('there is no throw "lobb"; one of lob, toss');
     expect(existsSync(place.out)).toBe(false);
+  });
+});
+
+describe("--jobs", () => {
+  it("says so where no more than one thread can work, as from the sources, and makes all takes", async () => {
+    const text = THROWS.replace("takes: 3", "takes: 70\n    vary: chance");
+    const place = new Workplace(text);
+    const bake = (...args: string[]) => run("bake", place.throwFile, "--dry-run", "--only", "lob", ...args);
+    const { code, err, out } = await bake("--jobs", "2");
+    expect(code).toBe(0);
+    expect(err).toMatch(/^one thread does the work: .*bake-worker\.js is not there/);
+    // nobody asked for more
+    expect(await bake()).toEqual({ code, err: "", out });
   });
 });
