@@ -54,22 +54,27 @@ const namesThatDiffer = (a: Record<string, string>, b: Record<string, string>) =
   [...new Set([...Object.keys(a), ...Object.keys(b)])].filter((name) => a[name] !== b[name]);
 
 const LEFT_OUT = /^barred_\d\d is left out: .*limits\.speed/m;
-const HOST = "host: { axes: [z, x, y], unit: 0.01 }";
+
+/** The same in an engine's axes, up last, and numbers. */
+const hosted = (settings: string) =>
+  manyTakes(settings, "host: { axes: [z, x, y], unit: 0.01 }")
+    .replace("speed: 0.1", "speed: 10")
+    .replaceAll("[0, 1, 3]", "[300, 0, 100]");
 
 describe("any number of threads writes the same bytes", () => {
   it.each([
-    ["a file a throw", "files: per-throw", ""],
-    ["a file a take", "files: per-take", ""],
-    [".gltf and .bin, a file a take, in an engine's numbers", "files: per-take, container: gltf", HOST],
-  ])("%s", (_, settings, host) => {
-    const text = manyTakes(settings, host).replace(host ? "speed: 0.1" : "", host ? "speed: 10" : "");
-    const place = new Workplace(host ? text.replaceAll("[0, 1, 3]", "[300, 0, 100]") : text);
+    ["a file a throw", manyTakes("files: per-throw")],
+    ["a file a take", manyTakes("files: per-take")],
+    ["one file, of two props", manyTakes("files: together")],
+    [".gltf and .bin, a file a take, in an engine's numbers", hosted("files: per-take, container: gltf")],
+  ])("%s", (_, text) => {
+    const place = new Workplace(text);
     const one = bake(place, "one", "--jobs", "1");
     expect(one.code).toBe(1);
     expect(one.err).toMatch(LEFT_OUT);
     const whole = everythingIn(place, "one");
     expect(Object.keys(whole).length).toBeGreaterThan(4);
-    for (const jobs of ["2", "3"]) {
+    for (const jobs of text.includes("per-take") ? ["2", "3"] : ["2"]) {
       expect(bake(place, jobs, "--jobs", jobs)).toEqual(one);
       expect(namesThatDiffer(everythingIn(place, jobs), whole)).toEqual([]);
     }
@@ -102,10 +107,11 @@ describe("any number of threads writes the same bytes", () => {
 
 describe("shards, merged, are the whole", () => {
   it.each([
-    ["a file a take, each shard in a folder of its own", "files: per-take", ["s1", "s2", "s3"]],
-    [".gltf and .bin, all shards in one folder", "files: per-take, container: gltf", ["m"]],
-  ])("%s", async (_, settings, folders) => {
-    const place = new Workplace(manyTakes(settings));
+    ["a file a take, each shard in a folder of its own", manyTakes("files: per-take"), ["s1", "s2", "s3"]],
+    [".gltf and .bin, all shards in one folder", manyTakes("files: per-take, container: gltf"), ["m"]],
+    ["a file a take, in an engine's numbers", hosted("files: per-take"), ["s1", "m", "m"]],
+  ])("%s", async (_, text, folders) => {
+    const place = new Workplace(text);
     await bakeHere(place, "whole", "--no-strobe");
     const whole = everythingIn(place, "whole");
     for (const i of [2, 3, 1]) {

@@ -18,22 +18,23 @@ import { Program } from "./program.js";
 
 vi.setConfig({ testTimeout: 600_000 });
 
-/** Runs that are stopped; many more with SOAK=1. */
-const STOPS = process.env.SOAK === "1" ? 40 : 4;
+/** Runs that are stopped, and how many takes each is to make: a few of a small batch, many of a larger one with SOAK=1. */
+const STOPS = process.env.SOAK === "1" ? 40 : 3;
+const TAKES: [number, number] = process.env.SOAK === "1" ? [200, 60] : [100, 20];
 const STAGING = ".tossbake-part";
 
-const text = (settings: string) => `seed: 1
+const text = (settings: string, [lob, toss] = [200, 60]) => `seed: 1
 bake: { ${settings} }
 props: { pin: { shape: { box: [0.02, 0.05, 0.3] }, density: 700 } }
 throws:
   lob:
     prop: pin
-    takes: 200
+    takes: ${lob}
     vary: chance
     release: { at: [0, 1, 0], scatter: 0..5 }
     arrive: { at: [0, 1, 3], after: 0.9..1.1 }
     spin: { axis: short, turns: 1..2 }
-  toss: { like: lob, takes: 60 }
+  toss: { like: lob, takes: ${toss} }
 `;
 
 let program: Program;
@@ -73,13 +74,13 @@ describe("a bake that is stopped", () => {
   it.each(["files: per-take", "files: per-throw, container: gltf"])(
     "at any moment leaves whole files alone, and --resume makes of it what was wanted (%s)",
     async (settings) => {
-      const whole = new Workplace(text(settings));
+      const whole = new Workplace(text(settings, TAKES));
       const start = performance.now();
       expect(program.run(["bake", whole.throwFile, "-o", whole.out, "--jobs", "2"]).code).toBe(0);
       const time = performance.now() - start;
       const wanted = all(whole);
       for (let i = 0; i < STOPS; i++) {
-        const place = new Workplace(text(settings));
+        const place = new Workplace(text(settings, TAKES));
         const signal = i % 2 === 0 ? "SIGKILL" : "SIGINT";
         const jobs = String(1 + (i % 3));
         const { code, err } = await stopped(place, time * (0.2 + 0.8 * chance()), signal, "--jobs", jobs);
@@ -87,7 +88,7 @@ describe("a bake that is stopped", () => {
         expect(Object.keys(found).filter((name) => found[name] !== wanted[name])).toEqual([]);
         if (signal === "SIGINT" && err !== "") {
           expect(code).toBe(130);
-          expect(err).toMatch(/^stopped after \d+ of 260 takes; .*--resume/);
+          expect(err).toMatch(new RegExp(`^stopped after \\d+ of ${TAKES[0] + TAKES[1]} takes; .*--resume`));
         }
         const resumed = program.run(["bake", place.throwFile, "-o", place.out, "--resume"]);
         expect(resumed).toMatchObject({ code: 0, err: "" });
