@@ -88,12 +88,13 @@ export class Grid {
     colors: Palette,
   ): void {
     const value = n * step;
-    const last = axis.zero + value + step > axis.high;
+    // what is written along the bottom would cross what is written up the side, and the caption is at the top
+    const margin = 0.06 * (axis.high - axis.low);
+    const high = isFlat && i === 1 ? axis.high - margin : axis.high;
+    const last = axis.zero + value + step > high;
     const text = `${niceNumber(value, step)}${last || !isFlat ? " m" : ""}`;
     const anchor: [number, number] = isFlat ? (i === 0 ? [0.5, 0] : [0, 0.5]) : [0.5, 0.5];
-    // what is written along the bottom would cross what is written up the side
-    const margin = 0.06 * (axis.high - axis.low);
-    if (isFlat && axis.zero + value < axis.low + margin) return;
+    if (isFlat && (axis.zero + value < axis.low + margin || axis.zero + value > high)) return;
     if (!isFlat && i === 1) return;
     this.#sprites.push(
       this.#labels.add(this.group, text, colors.scale, at(other.low), { anchor, isFixed: true }),

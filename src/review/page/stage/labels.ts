@@ -68,24 +68,28 @@ export class Labels {
     }
   }
 
-  /** Before each picture: sizes them, and moves those up or down that would lie on others. */
+  /** Before each picture: sizes them, keeps those in the picture that name something in it, and moves those up or down that would lie on others. */
   fit(rig: CameraRig): void {
     const place = new Vector3();
     const taken: Box[] = [];
-    for (const sprite of this.#sprites) {
-      const { width, height, anchor, isFixed } = sprite.userData as LabelData;
+    const isFixed = (sprite: Sprite) => (sprite.userData as LabelData).isFixed;
+    const all = [...this.#sprites];
+    for (const sprite of [...all.filter(isFixed), ...all.filter((each) => !isFixed(each))]) {
+      const { width, height, anchor } = sprite.userData as LabelData;
       const metres = rig.metresPerPixel(sprite.getWorldPosition(place));
       sprite.scale.set(width * metres, height * metres, 1);
-      if (isFixed || !isShown(sprite)) continue;
+      if (!isShown(sprite)) continue;
       const { x, y } = rig.project(place);
+      const left = x < 0 || x > rig.width ? x - anchor[0] * width : within(x - anchor[0] * width, width, rig);
       const boxAt = (lines: number): Box => ({
-        left: x - anchor[0] * width,
+        left,
         top: y - (1 - anchor[1] - lines) * height,
         width,
         height,
       });
-      const lines = STEPS.find((step) => !taken.some((box) => overlap(box, boxAt(step)))) ?? 0;
-      sprite.center.set(anchor[0], anchor[1] + lines);
+      const isFree = (step: number) => !taken.some((box) => overlap(box, boxAt(step)));
+      const lines = isFixed(sprite) ? 0 : (STEPS.find(isFree) ?? 0);
+      sprite.center.set((x - left) / width, anchor[1] + lines);
       taken.push(boxAt(lines));
     }
   }
@@ -137,6 +141,9 @@ export class Labels {
     return made;
   }
 }
+
+const within = (left: number, width: number, rig: CameraRig): number =>
+  Math.max(0, Math.min(rig.width - width, left));
 
 /** Within a scene, and with all that it is part of. */
 function isShown(sprite: Sprite): boolean {
