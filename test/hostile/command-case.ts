@@ -12,8 +12,8 @@ import { mutateModel } from "./models.js";
 import { Place } from "./place.js";
 import { mutateText } from "./texts.js";
 
-/** s of the processor's time, starting Node among it, and s after which a process is ended whatever it does. */
-const MOST_SECONDS = 5;
+/** s of the processor's time: starting Node and whole bakes by two threads are among it, which a busy machine makes twice as dear. And s after which a process is ended whatever it does. */
+const MOST_SECONDS = 15;
 const MOST_WHERE_LEFT_OUT = 150;
 const PATIENCE = 600;
 /** Takes of a throw file that are worth a process's time. */
