@@ -1,6 +1,6 @@
 /** A folder within the output folder in which a batch is made whole before any of it gets its place; what a stopped run left there, another goes on from. */
 
-import { readdir, readFile, rename, rm, rmdir, writeFile } from "node:fs/promises";
+import { lstat, readdir, readFile, rename, rm, rmdir, writeFile } from "node:fs/promises";
 import { join } from "node:path";
 import { deserialize, serialize } from "node:v8";
 import type { Shard } from "../bake/plan.js";
@@ -63,6 +63,7 @@ export async function openStaging(
   };
   let release = async () => {};
   try {
+    for (const name of ["", "parts", "files", "half"]) await refuseLink(join(path, name));
     await refuseOthers(output, path, shard);
     release = await lock(output, path);
     const former = await readHeader(path);
@@ -92,6 +93,17 @@ export async function openStaging(
     await unmake();
     throw error instanceof RequestError ? error : unwritable(output, error);
   }
+}
+
+/** What is behind a link is somebody else's: it would be cleared. */
+async function refuseLink(path: string): Promise<void> {
+  const status = await lstat(path).catch(() => undefined);
+  if (!status || status.isDirectory()) return;
+  throw new RequestError(
+    [path],
+    "is a link or a file, where a bake keeps a folder of its own",
+    "take it away",
+  );
 }
 
 /** A file within the staging folder, whole or not there. */

@@ -111,6 +111,26 @@ describe("what is written goes through no link", () => {
     expect(readFileSync(place.path("out", "LOB.glb"), "utf8")).toBe("mine");
   });
 
+  it.each(["", "files"])(
+    "a link where a bake keeps its unfinished work is refused, and nothing behind it is touched: %s",
+    async (inner) => {
+      const place = prepared();
+      const letter = place.path("elsewhere", "letter.txt");
+      writeFileSync(letter, "dear");
+      if (inner) mkdirSync(`${place.out}/.tossbake-part`);
+      symlinkSync(
+        place.path("elsewhere"),
+        [place.out, ".tossbake-part", ...(inner ? [inner] : [])].join("/"),
+      );
+      for (const more of [[], ["--resume"]]) {
+        const { code, err } = await bake(place, ...more);
+        expect({ code, lines: err.trimEnd().split("\n").length }).toEqual({ code: 2, lines: 1 });
+        expect(err).toContain(".tossbake-part");
+      }
+      expect(readFileSync(letter, "utf8")).toBe("dear");
+    },
+  );
+
   it("a pipe in the record's place is not waited for", async () => {
     const place = prepared();
     writeFileSync(place.path("out", "lob.glb"), "mine");
