@@ -1,4 +1,5 @@
 #!/usr/bin/env node
+import "./small-heap.js";
 import { main, ownFault } from "../dist/cli/main.js";
 
 process.stdout.on("error", (error) => {
