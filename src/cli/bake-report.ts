@@ -56,9 +56,7 @@ function warningText({ throwName, takes, text, differs }: TakeWarning): string {
 function missLine({ name, miss: { position, angle } }: ClipFigures): string {
   const ways = [
     (position ?? 0) > MISS_METRES ? [`its mark by ${((position ?? 0) * 1000).toPrecision(3)} mm`] : [],
-    (angle ?? 0) > MISS_RADIANS
-      ? [`its orientation by ${(((angle ?? 0) * 180) / Math.PI).toPrecision(3)}°`]
-      : [],
+    (angle ?? 0) > MISS_RADIANS ? [`its pose by ${(((angle ?? 0) * 180) / Math.PI).toPrecision(3)}°`] : [],
   ];
   return `${name} misses ${ways.flat().join(" and ")}`;
 }

@@ -35,8 +35,9 @@ export const csvCommand = (answer: (code: number) => void) =>
     .addHelpText(
       "after",
       `
-Columns: time, centre of mass, rotation (x, y, z, w), velocity, angular velocity, in the units that the header names and the
-coordinates of takes.json. The last row is the clip's end exactly.
+Columns: time, centre of mass, rotation (x, y, z, w), velocity, angular
+velocity, in the units that the header names and the coordinates of takes.json.
+The last row is the clip's end exactly.
 
 Example:
   tossbake csv quay.throws.yaml -o tables --rate 120`,

@@ -59,7 +59,7 @@ export const verifyCommand = (answer: (code: number) => void) =>
       "the throw file that was baked; with --against, only one that has a host is needed",
     )
     .requiredOption("-o, --output <dir>", "folder that was baked into")
-    .option("--against <dir>", "compare with this folder instead: what changed from there to the other")
+    .option("--against <dir>", "compare with this folder instead: what changed from it to the folder of -o")
     .option(
       "--sheets <dir>",
       "draw the takes that drifted, before and after over each other, into this folder",

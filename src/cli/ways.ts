@@ -26,13 +26,15 @@ export const waysCommand = (answer: (code: number) => void) =>
     .addHelpText(
       "after",
       `
-Each line is a way: turns about the angular momentum, shares of the turning about the axes long, middle and short, speed of the
-centre of mass and turns a second at release, and by how much the pose is missed. The starred way is what the throw file gets
-now. No spin gets a way with a dash: others are nearer to whatever could be written. Of one direction at arrival there are
-endlessly many ways; some near the wish are listed.
+Each line is a way: turns about the angular momentum, shares of the turning
+about the axes long, middle and short, speed of the centre of mass and turns a
+second at release, and by how much the pose is missed. The starred way is what
+the throw file gets now. A way with a dash is one that no spin gets: others are
+nearer to whatever could be written. Where arrive.facing fixes one direction
+alone there are endlessly many ways; some near the wish are listed.
 
 Example:
-  tossbake ways quay.throws.yaml --only spanner-by-its-grip --takes 1-1`,
+  tossbake ways quay.throws.yaml --only spanner-caught --takes 1-1`,
     )
     .action(async (path: string, { only, takes, json }: Options) => {
       const { file, models } = await openThrowFile(path);

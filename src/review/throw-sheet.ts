@@ -123,7 +123,7 @@ function signs(told: readonly Told[], view: View): string {
   const parts = told.flatMap(({ stretch }) => stretch.part ?? []);
   const isAsked = parts.some(({ release, arrival }) => release.asked || arrival.asked);
   if (view.name === "above" || told[0].exposures[0].number > 1) return "";
-  return ` Line: its centre of mass. Square: where it is let go and where it ends${isAsked ? "; ring: place asked for" : ""}.`;
+  return ` Line: its centre of mass. Square: release and arrival${isAsked ? "; ring: place asked for" : ""}.`;
 }
 
 const ordinal = (n: number): string => (n === 2 ? "2nd" : n === 3 ? "3rd" : `${n}th`);

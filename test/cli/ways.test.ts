@@ -141,7 +141,7 @@ describe("tossbake bake tells of the aim", () => {
     expect(json.err.split("\n")).toEqual(expect.arrayContaining(lines));
   });
 
-  it("and names a take that misses its orientation by more than 0.01 degrees, writes it and answers 1", async () => {
+  it("and names a take that misses its pose by more than 0.01 degrees, writes it and answers 1", async () => {
     spoilt.by = (0.0123 * Math.PI) / 180;
     onTestFinished(() => {
       spoilt.by = undefined;
@@ -149,7 +149,7 @@ describe("tossbake bake tells of the aim", () => {
     const place = new Workplace(WAYS);
     const { code, out } = await run("bake", place.throwFile, "-o", place.out, "--only", "caught");
     expect(code).toBe(1);
-    expect(out).toMatch(/^caught_01 misses its orientation by 0\.0123°$/m);
+    expect(out).toMatch(/^caught_01 misses its pose by 0\.0123°$/m);
     expect(Object.keys(place.contents())).toContain("caught.glb");
   });
 
