@@ -3,7 +3,9 @@
 import { basename, join, resolve } from "node:path";
 import { textSha256 } from "../math/hash.js";
 import { RequestError } from "../math/request-error.js";
-import { fallsOtherwise } from "../record/compare-host.js";
+import { length as size } from "../math/vec3.js";
+import type { ClipRecord } from "../record/clip-record.js";
+import { fallsOtherwise, gravity } from "../record/compare-host.js";
 import type { PageData, PageError } from "../review/page-data.js";
 import { pageOfRecord } from "../review/page-of-record.js";
 import { readBakedFolder } from "./baked-folder.js";
@@ -26,10 +28,26 @@ export async function readPageData(folder: string): Promise<PageData> {
       `${clip.name} does not fall along -Y: the numbers are those of a host`,
       "name the throw file instead of the folder",
     );
+  const scaled = record.clips.find(inHostUnit);
+  if (scaled)
+    throw new RequestError(
+      [join(folder, "takes.json")],
+      `${scaled.name} falls at ${Number(size(gravity(scaled)).toPrecision(6))} a second squared: the numbers are in a host's unit`,
+      "name the throw file instead of the folder",
+    );
   const data = pageOfRecord(basename(resolve(folder)), record);
   const stamp = await textSha256(JSON.stringify(record));
   return { ...data, throws: data.throws.map((shown) => ({ ...shown, stamp })) };
 }
+
+/** m: centimetre, millimetre, decimetre, inch, foot, kilometre. */
+const UNITS = [0.01, 0.001, 0.1, 0.0254, 0.3048, 1000];
+/** m/s² (CGPM 1901) */
+const STANDARD_GRAVITY = 9.80665;
+
+/** The world's own gravity, in another unit than the metre: a record does not name its host, and any other gravity may be meant. */
+const inHostUnit = (clip: ClipRecord): boolean =>
+  UNITS.some((unit) => Math.abs((size(gravity(clip)) * unit) / STANDARD_GRAVITY - 1) < 1e-6);
 
 /** Names of the files that the data speak of, each once; a record that was tampered with may name one elsewhere. */
 export const filesOf = ({ throws }: PageData): string[] => [

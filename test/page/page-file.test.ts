@@ -137,6 +137,20 @@ describe("preview --page", () => {
     expect([code, err]).toEqual([3, expect.stringContaining("with --page")]);
   });
 
+  it.each(["axes: [z, x, y]", "unit: 0.01"])(
+    "refuses a folder that was baked for a host with %s, in words",
+    (host) => {
+      const other = new Workshop(`host: { ${host} }\n${yard()}`);
+      const out = join(other.folder, "out");
+      expect(program.run(["bake", other.path, "-o", out, "--no-strobe"]).code).toBe(0);
+      const output = join(other.folder, "page.html");
+      const { code, err } = write(out, output);
+      expect([code, err]).toEqual([2, expect.stringMatching(/a host.*name the throw file instead/)]);
+      expect(existsSync(output)).toBe(false);
+      other.remove();
+    },
+  );
+
   it("names takes that are left out, and ends with 1", () => {
     const wide = new Workshop(yard().replace("    hold:", "    limits: { maxHeight: 1.3 }\n    hold:"));
     const output = join(wide.folder, "page.html");
