@@ -5,14 +5,12 @@ import { basename, extname, join } from "node:path";
 import { RequestError } from "../math/request-error.js";
 import { readBakedFolder } from "../node/baked-folder.js";
 import { readModelFile } from "../node/model-files.js";
-import { writeFiles } from "../node/output-folder.js";
-import { spareInputs } from "../node/spare-inputs.js";
 import type { ClipRecord, TakesRecord } from "../record/clip-record.js";
 import { fallsOtherwise } from "../record/compare-host.js";
 import { type ClipFile, clipSheets } from "../review/clip-sheets.js";
 import { motionOfRecord } from "../review/page-of-record.js";
-import { counted } from "./counted.js";
 import { ExitCode } from "./exit-code.js";
+import { writeSheets } from "./write-sheets.js";
 
 /** Whether a path names a glTF file or a folder, and no throw file. */
 export async function isBaked(path: string): Promise<boolean> {
@@ -42,13 +40,7 @@ export async function strobeBaked(path: string, output: string): Promise<number>
       throw new RequestError([path], "has no animation", "name a file whose clips move one rigid piece");
     return ExitCode.checkFailed;
   }
-  await spareInputs(
-    output,
-    sheets.map(({ name }) => name),
-    inputs,
-  );
-  await writeFiles(output, sheets);
-  process.stdout.write(`${counted(sheets.length, "sheet")} written to ${output}\n`);
+  await writeSheets(output, sheets, inputs);
   return ExitCode.done;
 }
 

@@ -2,15 +2,13 @@ import { Command } from "commander";
 import { apart } from "../bake/apart.js";
 import { bake } from "../bake/bake.js";
 import { RequestError } from "../math/request-error.js";
-import { writeFiles } from "../node/output-folder.js";
-import { spareInputs } from "../node/spare-inputs.js";
 import { openThrowFile } from "../node/throw-file.js";
 import { sheetsInput, sheetsOf } from "../review/sheets.js";
-import { counted } from "./counted.js";
 import { ExitCode } from "./exit-code.js";
 import { progress } from "./progress.js";
 import { isBaked, strobeBaked } from "./strobe-baked.js";
 import { takeRange } from "./take-range.js";
+import { writeSheets } from "./write-sheets.js";
 
 interface Options {
   output: string;
@@ -58,12 +56,6 @@ async function strobeThrows(path: string, { output, only, takes }: Options): Pro
   for (const { name, reason } of baked.unheld)
     process.stderr.write(`${name} is left out: ${reason.message}\n`);
   if (sheets.length === 0) return ExitCode.checkFailed;
-  await spareInputs(
-    output,
-    sheets.map(({ name }) => name),
-    inputs,
-  );
-  await writeFiles(output, sheets);
-  process.stdout.write(`${counted(sheets.length, "sheet")} written to ${output}\n`);
+  await writeSheets(output, sheets, inputs);
   return baked.unheld.length > 0 ? ExitCode.checkFailed : ExitCode.done;
 }
