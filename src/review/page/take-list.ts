@@ -9,6 +9,10 @@ import { missedWords } from "./misses.js";
 import { placeAmong } from "./order.js";
 import { emptyWords, listed, measured, propOf, type State, throwOf } from "./state.js";
 import { oldVerdict, verdictOf } from "./verdicts.js";
+import { counted } from "./words.js";
+
+/** Takes left out that are told without being asked for. */
+const FEW = 3;
 
 export function takeList({ store, strips }: App): HTMLElement {
   const list = listBox<number>("Takes", "takes", (take, second) =>
@@ -25,13 +29,15 @@ export function takeList({ store, strips }: App): HTMLElement {
     "Show all takes",
   );
 
-  const leftOut = el("ul", { class: "left-out" });
+  const leftOutTitle = el("summary");
+  const leftOutLines = el("ul", { class: "left-out" });
+  const leftOut = el("details", { hidden: true }, leftOutTitle, leftOutLines);
   const box = el(
     "div",
     { class: "take-list" },
+    leftOut,
     list.element,
     el("div", { class: "none-row" }, none, showAll),
-    leftOut,
   );
 
   store.watch(
@@ -48,7 +54,17 @@ export function takeList({ store, strips }: App): HTMLElement {
       showAll.hidden = hidden === 0;
       none.hidden = takes.length > 0;
       none.textContent = noneWords(state, hidden);
-      fill(leftOut, ...(throwOf(state)?.unheld ?? []).map(leftOutLine));
+    },
+  );
+  // above the takes: whoever looks for one that is not there starts from them
+  store.watch(
+    (state) => [throwOf(state)],
+    (shown) => {
+      const unheld = shown?.unheld ?? [];
+      leftOut.hidden = unheld.length === 0;
+      leftOut.open = unheld.length <= FEW;
+      leftOutTitle.textContent = `${counted(unheld.length, "take")} left out`;
+      fill(leftOutLines, ...unheld.map(leftOutLine));
     },
   );
   // What the new order puts first is what it was asked for.

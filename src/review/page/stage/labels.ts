@@ -34,6 +34,10 @@ interface Box {
 /** Lines by which a text may give way, upwards where negative. */
 const STEPS = [0, 0.9, -0.9, 1.8, -1.8, 2.7, -2.7, 3.6];
 
+/** What is written below or above its place gives way to that side alone, off the place. */
+const stepsOf = (up: number): number[] =>
+  STEPS.filter((step) => (up > 1 ? step >= 0 : up < 0 ? step <= 0 : true));
+
 export class Labels {
   readonly #made = new Map<string, { texture: CanvasTexture; width: number; height: number }>();
   readonly #sprites = new Set<Sprite>();
@@ -88,7 +92,7 @@ export class Labels {
         height,
       });
       const isFree = (step: number) => !taken.some((box) => overlap(box, boxAt(step)));
-      const lines = isFixed(sprite) ? 0 : (STEPS.find(isFree) ?? 0);
+      const lines = isFixed(sprite) ? 0 : (stepsOf(anchor[1]).find(isFree) ?? 0);
       sprite.center.set((x - left) / width, anchor[1] + lines);
       taken.push(boxAt(lines));
     }
