@@ -35,7 +35,7 @@ export const bakeCommand = (answer: (code: number) => void) =>
       "these takes alone, such as 3-7; with --dry-run or with bake: { files: per-take }",
       takeRange,
     )
-    .option("--jobs <n>", "threads that share the work; default the cores, for the same bytes", jobCount)
+    .option("--jobs <n>", "threads that share the work; default as many as there are cores", jobCount)
     .option("--resume", "go on where a bake into this folder was stopped")
     .option(
       "--shard <i/n>",

@@ -12,8 +12,9 @@ export const mergeCommand = (answer: (code: number) => void) =>
     .addHelpText(
       "after",
       `
-What it writes is, byte for byte, what one bake of all takes writes. Shards in another folder are left as they are; in the
-output folder itself their records go when takes.json is there.
+What it writes is, byte for byte, what one bake of all takes writes. Shards in
+another folder are left as they are; in the output folder itself their records
+go when takes.json is there.
 
 Example:
   tossbake merge shard-1 shard-2 shard-3 -o clips`,
