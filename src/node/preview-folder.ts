@@ -5,6 +5,7 @@ import { textSha256 } from "../math/hash.js";
 import { RequestError } from "../math/request-error.js";
 import { length as size } from "../math/vec3.js";
 import type { ClipRecord } from "../record/clip-record.js";
+import { binOf } from "../record/compare-files.js";
 import { fallsOtherwise, gravity } from "../record/compare-host.js";
 import type { PageData, PageError } from "../review/page-data.js";
 import { pageOfRecord } from "../review/page-of-record.js";
@@ -94,7 +95,9 @@ export class FolderPreview implements PreviewSource {
   }
 
   private watchAll(): void {
-    this.watch.setPaths(["takes.json", ...filesOf(this.shown)].map((name) => resolve(this.folder, name)));
+    const files = filesOf(this.shown);
+    const all = ["takes.json", ...files, ...files.flatMap((name) => binOf(name) ?? [])];
+    this.watch.setPaths(all.map((name) => resolve(this.folder, name)));
   }
 
   private async reread(): Promise<void> {
