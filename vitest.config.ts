@@ -5,5 +5,7 @@ export default defineConfig({
     include: ["test/**/*.test.ts"],
     testTimeout: 60_000,
     hookTimeout: 60_000,
+    // as many test files at once as there are cores; without it one core stays idle
+    maxWorkers: "100%",
   },
 });
