@@ -59,7 +59,9 @@ describe("files", () => {
 
   it("together: a bake of some throws alone is refused", async () => {
     const file = parseThrowFile("quay.throws.yaml", text("{ files: together }"));
-    await expect(bake(file, () => Promise.reject(), { only: ["lob"] })).rejects.toThrow(/only: one file holds the clips/);
+    await expect(bake(file, () => Promise.reject(), { only: ["lob"] })).rejects.toThrow(
+      /only: one file holds the clips/,
+    );
   });
 
   it.each(["glb", "gltf"])(
