@@ -45,9 +45,9 @@ export function follow({ store, files, strips, say }: App, source: Source): void
 
   source.onChange(ask);
   source.onConnection((connected) => {
-    const wasGone = !store.state.connected;
     store.send({ type: "connected", on: connected });
-    if (connected && wasGone) ask();
+    // what changed between the first asking and now was told to nobody
+    if (connected) ask();
   });
   // The server bakes what is looked at first.
   store.watch(
@@ -56,4 +56,6 @@ export function follow({ store, files, strips, say }: App, source: Source): void
       if (shown && shown.stamp === undefined) ask();
     },
   );
+  // and so was what changed before anybody listened
+  ask();
 }
