@@ -22,7 +22,16 @@ describe("a throw file with a chain", () => {
     expect(out).toContain("6 takes of 2 throws and 1 chain written");
     expect(names(place)).toEqual(ALL);
     const before = place.contents();
-    expect(Object.keys(before).sort()).toEqual(["back.glb", "both.glb", "takes.json", "there.glb"]);
+    expect(Object.keys(before).sort()).toEqual([
+      "back.glb",
+      "back.svg",
+      "both.glb",
+      "both.svg",
+      "takes.json",
+      "takes.svg",
+      "there.glb",
+      "there.svg",
+    ]);
     expect((await run("bake", place.throwFile, "-o", place.out, "--only", "both")).code).toBe(0);
     expect(place.contents()).toEqual(before);
     expect((await run("bake", place.throwFile, "-o", place.out, "--only", "back")).code).toBe(0);

@@ -90,7 +90,7 @@ describe("the same throw file is baked to the same bytes", () => {
 
   it("by an engine that compiles nothing", () => {
     expectSame(bake({ node: ["--jitless"] }));
-  });
+  }, 400_000);
 
   it("by an engine whose approximations are all another last digit", () => {
     const script = `import { NAMES } from ${JSON.stringify(beside("perturb-names.mjs"))};
