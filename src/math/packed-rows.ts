@@ -4,12 +4,12 @@ const BLOCK = 1 << 16;
 /** Rows of numbers, of any length each, kept in few large blocks: an array of its own costs more than a short row. */
 export class PackedRows {
   #blocks: Float64Array[] = [];
-  #used = BLOCK;
+  #used = 0;
   /** Block, start and length of each row. */
   readonly #places: number[] = [];
 
   push(row: Float64Array): void {
-    if (this.#used + row.length > BLOCK) {
+    if (this.#blocks.length === 0 || this.#used + row.length > BLOCK) {
       this.#blocks.push(new Float64Array(Math.max(BLOCK, row.length)));
       this.#used = 0;
     }
