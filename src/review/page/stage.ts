@@ -3,23 +3,24 @@
 import { CameraRig } from "./stage/camera-rig.js";
 import type { Pose } from "./stage/clip-poses.js";
 import { Finder } from "./stage/finder.js";
-import { Fluency } from "./stage/fluency.js";
-import { type GestureTarget, listen } from "./stage/gestures.js";
+import { listen } from "./stage/gestures.js";
 import { Grid } from "./stage/grid.js";
+import { hand } from "./stage/hand.js";
 import type { FileSource, StageProp, StageThrow } from "./stage/input.js";
 import { Labels } from "./stage/labels.js";
+import { FIRST_LAYERS, type Layer, type View } from "./stage/layers.js";
+import { OnDemand } from "./stage/on-demand.js";
 import { type Palette, palette } from "./stage/palette.js";
 import { StageRenderer } from "./stage/renderer.js";
 import { Scrubbing } from "./stage/scrubbing.js";
 import { type Setting, settingOf } from "./stage/setting.js";
 import { ShownThrow } from "./stage/shown-throw.js";
+import { Siblings } from "./stage/siblings.js";
 import { TakeScene } from "./stage/take-scene.js";
-import { thinnedSiblings, thinnedWords } from "./stage/thinned.js";
 
 export type { StageProp, StageTake, StageThrow } from "./stage/input.js";
 
-export type View = "side" | "top" | "along" | "free" | "follow";
-export type Layer = "siblings" | "strobe" | "paths" | "arrows" | "surroundings" | "truth";
+export type { Layer, View } from "./stage/layers.js";
 
 export interface StageOptions {
   reducedMotion: boolean;
@@ -39,8 +40,9 @@ export class Stage {
   readonly #grid = new Grid(this.#labels);
   readonly #scrubbing = new Scrubbing(this.#rig);
   readonly #finder = new Finder();
-  readonly #fluency = new Fluency();
-  readonly #layers: Record<Layer, boolean>;
+  readonly #siblings = new Siblings();
+  readonly #picture = new OnDemand((waited) => this.#draw(waited));
+  readonly #layers: Record<Layer, boolean> = { ...FIRST_LAYERS };
   readonly #stopListening: () => void;
   #colors: Palette;
   #shown?: ShownThrow;
@@ -49,12 +51,8 @@ export class Stage {
   #left: { dispose(): void }[] = [];
   #setting?: Setting;
   #selected: { take: number; second?: number } = { take: 0 };
-  #mostSiblings = Number.POSITIVE_INFINITY;
   #time = 0;
   #view: View = "side";
-  #thinned = "";
-  #asked = 0;
-  #wanted = 0;
   #showing = 0;
   #selecting = 0;
   #isMoved = false;
@@ -64,19 +62,22 @@ export class Stage {
     readonly options: StageOptions,
   ) {
     this.#renderer = new StageRenderer(canvas);
-    this.#layers = {
-      siblings: true,
-      strobe: false,
-      paths: true,
-      arrows: false,
-      surroundings: true,
-      truth: false,
-    };
     this.#renderer.behind.add(this.#grid.group);
     this.#renderer.front.add(this.#finder.group);
     this.#colors = palette(options.dark);
     this.#paint();
-    this.#stopListening = listen(canvas, this.#gestures());
+    const target = hand({
+      rig: this.#rig,
+      scrubbing: this.#scrubbing,
+      now: () => this.#scene && this.#shown && { scene: this.#scene, shown: this.#shown, time: this.#time },
+      scrub: (t) => {
+        this.time = t;
+        this.onScrub(this.#time);
+      },
+      dropped: () => this.onScrubEnd(),
+      moved: () => this.#moved(),
+    });
+    this.#stopListening = listen(canvas, target);
     this.resize();
   }
 
@@ -91,8 +92,7 @@ export class Stage {
     const old = this.#shown;
     this.#leave();
     this.#shown = shown;
-    this.#mostSiblings = Number.POSITIVE_INFINITY;
-    this.#fluency.reset();
+    this.#siblings.reset();
     this.#isMoved = false;
     await this.select(0);
     if (old) this.#left.push(old);
@@ -115,7 +115,7 @@ export class Stage {
   set time(t: number) {
     this.#time = Math.max(0, Math.min(this.duration, t));
     this.#scene?.seek(this.#time);
-    this.#request();
+    this.#picture.request();
   }
   /** s within the clip. */
   get time(): number {
@@ -156,7 +156,7 @@ export class Stage {
     this.#rig.resize(clientWidth, clientHeight);
     if (this.#isMoved) this.#rig.update();
     else this.resetView();
-    this.#request();
+    this.#picture.request();
   }
 
   /** For keys: turns the camera of the free and following views (elsewhere it goes along the picture), in degrees to the right and up. */
@@ -176,7 +176,7 @@ export class Stage {
   resetView(): void {
     this.#isMoved = false;
     if (this.#setting) this.#rig.frame(this.#view, this.#setting.framing);
-    this.#request();
+    this.#picture.request();
   }
 
   /** Read from the scene graph: place of the centre of mass, m, and what turns the model from as modelled. */
@@ -195,7 +195,7 @@ export class Stage {
 
   /** What is left out to stay fluent, or cannot be shown, in words for the page, or "". */
   get thinned(): string {
-    return this.#thinned;
+    return this.#siblings.words;
   }
 
   /** Where a moment's centre of mass is in the picture, px from its upper left corner. */
@@ -215,7 +215,7 @@ export class Stage {
 
   dispose(): void {
     this.#showing++;
-    cancelAnimationFrame(this.#asked);
+    this.#picture.cancel();
     this.#stopListening();
     this.#leave();
     this.#letGo();
@@ -242,7 +242,7 @@ export class Stage {
     const old = this.#setting;
     this.#setting = settingOf(course, shown.courses);
     this.#leave();
-    const siblings = thinnedSiblings(shown, [take, second], this.#mostSiblings);
+    const siblings = this.#siblings.drawn(shown, [take, second]);
     const { room } = this.#setting;
     this.#scene = new TakeScene({
       shown,
@@ -277,30 +277,16 @@ export class Stage {
 
   #tell(): void {
     const { take, second } = this.#selected;
-    const words = this.#shown
-      ? thinnedWords(this.#shown, [take, second], this.#mostSiblings, this.#layers)
-      : "";
-    if (words === this.#thinned) return;
-    this.#thinned = words;
-    this.onThinned();
+    if (this.#siblings.tell(this.#shown, [take, second], this.#layers)) this.onThinned();
   }
 
   /** By hand: it stays so until another view or throw is wanted. */
   #moved(): void {
     this.#isMoved = true;
-    this.#request();
+    this.#picture.request();
   }
 
-  #request(): void {
-    if (this.#asked) return;
-    this.#wanted = performance.now();
-    this.#asked = requestAnimationFrame(() => {
-      this.#asked = 0;
-      this.#draw();
-    });
-  }
-
-  #draw(): void {
+  #draw(waited: () => number): void {
     const scene = this.#scene;
     if (scene && this.#shown && this.#setting) {
       const place = scene.place(this.#time);
@@ -312,47 +298,7 @@ export class Stage {
     }
     this.#renderer.draw(this.#rig);
     this.#letGo();
-    const tooSlow = this.#fluency.picture(performance.now() - this.#wanted);
-    if (tooSlow && this.#layers.siblings) this.#thin();
-  }
-
-  /** Half as many siblings. */
-  #thin(): void {
     const { take, second } = this.#selected;
-    const now = thinnedSiblings(this.#shown!, [take, second], this.#mostSiblings).length;
-    if (now < 8) return;
-    this.#mostSiblings = Math.floor(now / 2);
-    this.#rebuild();
-  }
-
-  #gestures(): GestureTarget {
-    const scrub = (t: number) => {
-      this.time = t;
-      this.onScrub(this.#time);
-    };
-    const scene = () => this.#scene!;
-    return {
-      holds: (x, y, coarse) =>
-        this.#scene !== undefined && this.#scrubbing.holds(x, y, coarse, scene(), this.#shown!),
-      grab: (x, y) => scrub(this.#scrubbing.grab(x, y, scene(), this.#shown!, this.#time)),
-      drag: (x, y) => this.#scene && scrub(this.#scrubbing.drag(x, y, scene(), this.#time)),
-      drop: () => {
-        this.#scrubbing.drop();
-        this.onScrubEnd();
-      },
-      turn: (right, down) => {
-        if (this.#rig.isFlat) this.#rig.pan(right, down);
-        else this.#rig.turn(-right * 0.008, down * 0.008);
-        this.#moved();
-      },
-      pan: (right, down) => {
-        this.#rig.pan(right, down);
-        this.#moved();
-      },
-      zoom: (factor, x, y) => {
-        this.#rig.zoom(factor, x, y);
-        this.#moved();
-      },
-    };
+    if (this.#siblings.picture(waited(), this.#layers.siblings, this.#shown, [take, second])) this.#rebuild();
   }
 }

@@ -1,7 +1,7 @@
 /** Where the stage is looked at from. */
 
 import { type Camera, Matrix4, OrthographicCamera, PerspectiveCamera, Quaternion, Vector3 } from "three";
-import type { View } from "../stage.js";
+import type { View } from "./layers.js";
 
 /** What has to be in the picture. */
 export interface Framing {

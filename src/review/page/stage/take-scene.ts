@@ -1,13 +1,13 @@
 /** The take that is looked at, with all that explains it; made anew when another one is. */
 
 import { Group, type Mesh, MeshStandardMaterial, Vector3 } from "three";
-import type { Layer } from "../stage.js";
 import { Arrows } from "./arrows.js";
 import type { CameraRig } from "./camera-rig.js";
 import { poseOf } from "./clip-poses.js";
 import type { Course } from "./course.js";
 import { Ghosts } from "./ghosts.js";
 import type { Labels } from "./labels.js";
+import type { Layer } from "./layers.js";
 import { niceStep } from "./nice-step.js";
 import { outlineMesh } from "./outline-mesh.js";
 import type { Palette } from "./palette.js";

@@ -1,6 +1,6 @@
 /** Which of the other takes are drawn, and what is said of what is not. */
 
-import type { Layer } from "../stage.js";
+import type { Layer } from "./layers.js";
 import type { ShownThrow } from "./shown-throw.js";
 
 /** Whatever the machine. */
