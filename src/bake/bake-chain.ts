@@ -2,12 +2,11 @@
 
 import type { Track } from "../clip/track.js";
 import { RequestError } from "../math/request-error.js";
-import { rounded } from "../math/rounded.js";
 import type { Prop } from "../prop/prop.js";
 import { throwFileError } from "../throwfile/errors.js";
 import type { ChainEntry, ThrowEntry, ThrowFile } from "../throwfile/types.js";
 import { type ChainTake, cutChain, solveChain, UnheldChain } from "./chain.js";
-import { clipName, type FiledClip, fileName } from "./files.js";
+import { clipName, type FiledClip, filedClip, fileName } from "./files.js";
 import { UnheldLimits } from "./limits.js";
 import { cuesOf } from "./motion.js";
 import { type Compared, compared, type Nearest } from "./nearest.js";
@@ -91,13 +90,7 @@ export const chainClip = (
   entry: ChainEntry,
   baked: Omit<BakedChainTake, "nearest">,
   prop: LoadedProp,
-): FiledClip => ({
-  name: baked.name,
-  track: baked.track,
-  extras: rounded(chainExtras(entry, baked)),
-  throwName: entry.name,
-  prop,
-});
+): FiledClip => filedClip(entry, baked, chainExtras(entry, baked), prop);
 
 /** What an engine needs to take over from the clip, part by part; times are within the clip. */
 const chainExtras = (entry: ChainEntry, { number, parts }: ChainTake) => ({

@@ -2,11 +2,10 @@
 
 import type { Track } from "../clip/track.js";
 import { RequestError } from "../math/request-error.js";
-import { rounded } from "../math/rounded.js";
 import type { Prop } from "../prop/prop.js";
 import { throwFileError } from "../throwfile/errors.js";
 import type { ThrowEntry, ThrowFile } from "../throwfile/types.js";
-import { clipName, type FiledClip, fileName } from "./files.js";
+import { clipName, type FiledClip, filedClip, fileName } from "./files.js";
 import { hostFrame } from "./host.js";
 import { cuesOf, type MotionState, motionState } from "./motion.js";
 import { type Compared, compared, type Nearest } from "./nearest.js";
@@ -71,17 +70,8 @@ export const takeNote = ({ name, take }: Pick<BakedTake, "name" | "take">): Take
 });
 
 /** What of a take goes into a file. */
-export const takeClip = (
-  entry: ThrowEntry,
-  baked: Omit<BakedTake, "nearest">,
-  prop: LoadedProp,
-): FiledClip => ({
-  name: baked.name,
-  track: baked.track,
-  extras: rounded(clipExtras(entry, baked)),
-  throwName: entry.name,
-  prop,
-});
+export const takeClip = (entry: ThrowEntry, baked: Omit<BakedTake, "nearest">, prop: LoadedProp): FiledClip =>
+  filedClip(entry, baked, clipExtras(entry, baked), prop);
 
 /** What an engine needs to take over from the clip, or to hang sounds on it. */
 const clipExtras = (entry: ThrowEntry, { take, release, arrival }: Omit<BakedTake, "nearest">) => ({

@@ -2,6 +2,7 @@
 
 import { bareModel } from "../gltf/bare-model.js";
 import { type Graft, type NamedFile, spliceAllGlb, spliceAllGltf } from "../gltf/splice.js";
+import { rounded } from "../math/rounded.js";
 import type { Prop } from "../prop/prop.js";
 import type { BakeSettings, ThrowFile } from "../throwfile/types.js";
 import { type NamedTrack, oneNodeGraft, turningGraft, twoNodeGraft } from "./graft.js";
@@ -13,6 +14,14 @@ export interface FiledClip extends NamedTrack {
   throwName: string;
   prop: LoadedProp;
 }
+
+/** What of a take, or a chain's take, goes into a file. */
+export const filedClip = (
+  { name: throwName }: { name: string },
+  { name, track }: Pick<NamedTrack, "name" | "track">,
+  extras: object,
+  prop: LoadedProp,
+): FiledClip => ({ name, track, extras: rounded(extras), throwName, prop });
 
 /** Two digits, or as many as the number has. */
 export const clipName = (entry: { name: string }, number: number): string =>

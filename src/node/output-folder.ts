@@ -1,6 +1,6 @@
 /** Whole files or none: everything is written under temporary names first and only then given its own. */
 
-import { mkdir, readdir, rename, rm, stat, writeFile } from "node:fs/promises";
+import { mkdir, readdir, rename, rm, rmdir, stat, writeFile } from "node:fs/promises";
 import { dirname, join } from "node:path";
 import { MachineError } from "./machine-error.js";
 
@@ -79,7 +79,10 @@ export async function makeFolder(path: string): Promise<string[]> {
     const { code } = error as NodeJS.ErrnoException;
     if (code === "ENOENT" && dirname(path) !== path) {
       const above = await makeFolder(dirname(path));
-      await mkdir(path);
+      await mkdir(path).catch(async (error) => {
+        for (const folder of above.reverse()) await rmdir(folder).catch(() => undefined);
+        throw error;
+      });
       return [...above, path];
     }
     if (!(await isFolder(path))) throw error;
@@ -98,7 +101,8 @@ export const isFolder = (path: string): Promise<boolean> =>
     () => false,
   );
 
-function reason(error: unknown): string {
+/** Why the machine would not, in words where they are known. */
+export function reason(error: unknown): string {
   const code = (error as NodeJS.ErrnoException).code;
   const words: Record<string, string> = {
     EACCES: "no permission",
